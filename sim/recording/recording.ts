@@ -83,9 +83,17 @@ export interface JointSpec {
   columns: { fx: number; fy: number; torque: number; x: number; y: number; position: number };
 }
 
+/** One end of a spring or damper. `of` is a body's id or 'ground'. */
+export interface LinkEnd {
+  of: string;
+  at?: Vec;
+}
+
 /** Deflection [m] or [rad] and force [N] or torque [N m] of a spring or damper (positive pulls its ends together). */
 export interface LinkSpec {
   id: string;
+  /** What its ends are fixed to: a point [m], as drawn at the first row, or a part alone where it acts on angles. */
+  ends: [LinkEnd, LinkEnd];
   columns: { deflection: number; force: number };
 }
 

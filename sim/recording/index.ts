@@ -1,0 +1,4 @@
+export * from './layout.js';
+export * from './reader.js';
+export type * from './recording.js';
+export * from './writer.js';
