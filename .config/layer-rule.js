@@ -78,7 +78,8 @@ export const layerRule = {
       NewExpression: (node) => {
         const [first] = node.arguments;
         if (node.callee.type === 'Identifier' && node.callee.name === 'URL' && node.arguments.length === 2)
-          if (first?.type === 'Literal' && /^\.{1,2}\//.test(String(first.value))) check(first, true);
+          if (first?.type === 'Literal' && /^\.{1,2}\/.*\.(js|ts|svelte)$/.test(String(first.value)))
+            check(first, true);
       },
     };
   },

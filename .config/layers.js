@@ -12,7 +12,7 @@
  */
 
 const model = ['core', 'mechanism', 'geometry', 'recording'];
-const answers = ['ledger', 'criteria', 'spread', 'sizing', 'report', 'drawing'];
+const answers = ['ledger', 'criteria', 'spread', 'sizing', 'drawing'];
 const index = /^index\.ts$/;
 
 /** @type {Readonly<Record<string, Layer>>} */
@@ -30,11 +30,11 @@ export const layers = {
   spread: { path: 'sim/spread', layers: [...model, 'ledger', 'criteria'], faces: [index] },
   sizing: { path: 'sim/sizing', layers: [...model, 'ledger', 'criteria', 'spread'], faces: [index] },
   report: { path: 'sim/report', layers: [...model, ...answers], faces: [index] },
-  worker: { path: 'sim/worker.ts', layers: [...model, ...answers, 'stepper', 'auditor', 'protocol'] },
+  worker: { path: 'sim/worker.ts', layers: [...model, ...answers, 'report', 'stepper', 'auditor', 'protocol'] },
   ipc: { path: 'main/ipc', layers: [...model], packages: ['node', 'electron'] },
   main: {
     path: 'main',
-    layers: [...model, ...answers, 'stepper', 'auditor', 'protocol', 'worker', 'ipc'],
+    layers: [...model, ...answers, 'report', 'stepper', 'auditor', 'protocol', 'worker', 'ipc'],
     packages: ['node', 'electron', 'esbuild', 'vite'],
   },
   renderer: {
