@@ -20,7 +20,7 @@ export interface Pose {
 
 /** One recorded number. */
 export function valueAt(recording: Recording, row: number, column: number): number {
-  return recording.rows[row * recording.layout.width + column]!;
+  return recording.rows[row * recording.layout.width + column];
 }
 
 /** Time of a row [s]. */

@@ -17,11 +17,7 @@ export type AccountName =
 
 /** What the method itself made or lost, by where it arises. */
 export type NumericalCause =
-  | 'force-truncation'
-  | 'solver-residual'
-  | 'velocity-projection'
-  | 'position-projection'
-  | 'clamp';
+  'force-truncation' | 'solver-residual' | 'velocity-projection' | 'position-projection' | 'clamp';
 
 /**
  * One account of a run. Its columns are *cumulative* from the start of the run, so the ledger between any two rows is a

@@ -52,7 +52,7 @@ export class RecordingWriter {
 
   /** Time of the last row [s]; −Infinity before the first. */
   get lastTime(): number {
-    return this.count === 0 ? -Infinity : this.rows[this.offset(this.count - 1)]!;
+    return this.count === 0 ? -Infinity : this.rows[this.offset(this.count - 1)];
   }
 
   /** Add a row at a time [s], not before the last one, and return its number. */
@@ -67,7 +67,8 @@ export class RecordingWriter {
 
   /** Record something that happened, at a row that is already there. */
   event(event: RunEvent): void {
-    if (!(event.row >= 0 && event.row < this.count)) throw new RangeError(`an event at row ${event.row} has no such row`);
+    if (!(event.row >= 0 && event.row < this.count))
+      throw new RangeError(`an event at row ${event.row} has no such row`);
     this.events.push(event);
   }
 
