@@ -16,8 +16,9 @@ export function gaussLegendre(f: (x: number) => number, a: number, b: number): n
   const middle = 0.5 * (a + b);
   const half = 0.5 * (b - a);
   let sum = 0;
-  NODES.forEach((node, i) => {
-    sum += WEIGHTS[i] * (f(middle - half * node) + f(middle + half * node));
-  });
+  for (let i = 0; i < NODES.length; i += 1) {
+    const node = half * NODES[i];
+    sum += WEIGHTS[i] * (f(middle - node) + f(middle + node));
+  }
   return sum * half;
 }
