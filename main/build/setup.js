@@ -27,26 +27,31 @@ export function isInstalled(folder = root) {
   });
 }
 
-/** Installs the locked packages where they are missing or stale. Its output goes to standard error. */
+/** Installs the locked packages where they are missing or stale; npm's output goes to standard error. */
 export function setUp() {
   const [major = 0, minor = 0] = process.versions.node.split('.').map(Number);
   if (major < oldest[0] || (major === oldest[0] && minor < oldest[1]))
-    return fail(`Joulewright needs Node ${oldest.join('.')} or newer; this is Node ${process.versions.node}.`);
+    throw new Error(`Joulewright needs Node ${oldest.join('.')} or newer; this is Node ${process.versions.node}.`);
   if (isInstalled()) return;
   process.stderr.write('Installing the packages of package-lock.json …\n');
+  if (npmCi() !== 0) throw new Error('The packages could not be installed: `npm ci` failed (see above).');
+}
+
+/** Exit status of `npm ci`, run by the npm that runs this script where there is one. */
+function npmCi() {
   const npm = process.env.npm_execpath;
   const args = ['ci', '--no-audit', '--no-fund', '--loglevel=error'];
-  const options = /** @type {import('node:child_process').SpawnSyncOptions} */ ({ cwd: root, stdio: ['ignore', 2, 2] });
-  const done = npm?.endsWith('.js')
-    ? spawnSync(process.execPath, [npm, ...args], options)
-    : spawnSync('npm', args, { ...options, shell: process.platform === 'win32' });
-  if (done.status !== 0) fail('The packages could not be installed: `npm ci` failed (see above).');
+  /** @type {import('node:child_process').SpawnSyncOptions} */
+  const options = { cwd: root, stdio: ['ignore', 2, 2] };
+  if (npm?.endsWith('.js')) return spawnSync(process.execPath, [npm, ...args], options).status;
+  return spawnSync('npm', args, { ...options, shell: process.platform === 'win32' }).status;
 }
 
-/** @param {string} sentence */
-function fail(sentence) {
-  process.stderr.write(`${sentence}\n`);
-  process.exit(1);
+if (realpathSync(process.argv[1] ?? '') === fileURLToPath(import.meta.url)) {
+  try {
+    setUp();
+  } catch (error) {
+    process.stderr.write(`${/** @type {Error} */ (error).message}\n`);
+    process.exitCode = 1;
+  }
 }
-
-if (realpathSync(process.argv[1] ?? '') === fileURLToPath(import.meta.url)) setUp();

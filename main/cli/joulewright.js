@@ -25,16 +25,24 @@ function changedSince(time) {
 /** Installs what is missing and bundles the command line; standard output stays the command's own. */
 async function bringUpToDate() {
   const { setUp } = await import('../build/setup.js');
-  setUp();
+  try {
+    setUp();
+  } catch (error) {
+    return fail(/** @type {Error} */ (error).message);
+  }
   const tsx = resolve(root, 'node_modules/tsx/dist/cli.mjs');
   const built = spawnSync(process.execPath, [tsx, 'main/build/build.ts', 'cli'], {
     cwd: root,
     stdio: ['ignore', 2, 2],
   });
-  if (built.status !== 0) {
-    process.stderr.write('The command line could not be built (see above).\n');
-    process.exit(4);
-  }
+  if (built.status !== 0) fail('The command line could not be built (see above).');
+}
+
+/** An internal error, as the file contract has it. @param {string} sentence */
+function fail(sentence) {
+  process.stderr.write(`${sentence}
+`);
+  process.exit(4);
 }
 
 if (!existsSync(bundle) || changedSince(statSync(bundle).mtimeMs)) await bringUpToDate();
