@@ -1,0 +1,147 @@
+import { CompensatedSum, compensatedSum } from '../core/sum.js';
+import type { AccountSpec, BodySpec, Finding, Recording } from '../recording/index.js';
+import { kineticEnergyOf, timeOfRow, valueAt } from '../recording/index.js';
+import { entryKind } from './kind.js';
+import type { Entry, Ledger, Span } from './ledger.js';
+import { placesOf } from './places.js';
+
+/** Roundings of the recorded figures that may add up before a ledger is called open. */
+const ROUNDINGS = 16;
+
+/**
+ * Book the ledger of a boundary between two rows of a run.
+ *
+ * Account columns are cumulative, so each entry is a difference of two rows, and any boundary and any pair of rows can
+ * be booked from the one recording. An account that works on no body inside the boundary has no entry; one that works
+ * on bodies on both sides is booked with what it did on those inside.
+ *
+ *     kineticChange = T(to) − T(from) = Σ work + unbooked
+ *
+ * A number that is not finite is booked as nil and named in `findings`, never passed on.
+ *
+ * @param system ids of the bodies inside the boundary; ids that are no bodies of the run are left out
+ * @throws RangeError when the rows are not in the recording or not in order
+ */
+export function bookLedger(recording: Recording, span: Span, system: readonly string[]): Ledger {
+  checkRows(recording, span);
+  const inside = new Set(system);
+  const bodies = recording.layout.bodies.filter(({ id }) => inside.has(id));
+  const guard = new FiniteGuard(span, timeOfRow(recording, span.toRow));
+  const entries = recording.layout.accounts
+    .filter((account) => account.bodies.some((body) => inside.has(body)))
+    .map((account) => bookEntry(recording, account, span, inside, guard));
+  const kinetic = (row: number): number => guard.finite(kineticEnergy(recording, bodies, row), 'kinetic energy', []);
+  const [kineticFrom, kineticTo] = [kinetic(span.fromRow), kinetic(span.toRow)];
+  const greatest = greatestKinetic(recording, bodies, span);
+  return {
+    from: span.from,
+    to: span.to,
+    entries,
+    kineticFrom,
+    kineticTo,
+    kineticChange: kineticTo - kineticFrom,
+    turnover: Math.max(0.5 * compensatedSum(entries.map(({ work }) => Math.abs(work))), greatest),
+    unbooked: compensatedSum([kineticTo, -kineticFrom, ...entries.map(({ work }) => -work)]),
+    resolution: resolution(recording, span, inside, greatest),
+    findings: guard.findings,
+  };
+}
+
+function checkRows({ rowCount }: Recording, { fromRow, toRow }: Span): void {
+  if (fromRow >= 0 && fromRow <= toRow && toRow < rowCount) return;
+  throw new RangeError(`rows ${fromRow} to ${toRow} are not a span of a recording of ${rowCount} rows`);
+}
+
+function bookEntry(
+  recording: Recording,
+  account: AccountSpec,
+  span: Span,
+  inside: ReadonlySet<string>,
+  guard: FiniteGuard,
+): Entry {
+  const { account: name, of, cause, columns } = account;
+  const named = of === null ? [] : [of].flat();
+  const read = (row: number, column: number): number => guard.finite(valueAt(recording, row, column), name, named);
+  const change = (column: number): number => read(span.toRow, column) - read(span.fromRow, column);
+  const byBody: Record<string, number> = {};
+  account.bodies.forEach((body, i) => {
+    if (inside.has(body)) byBody[body] = change(columns.work[i]);
+  });
+  const entry: Entry = {
+    account: name,
+    of,
+    ...(cause === undefined ? {} : { cause }),
+    kind: entryKind(account, inside),
+    work: compensatedSum(Object.values(byBody)),
+    byBody,
+    heat: columns.heat === undefined ? 0 : change(columns.heat),
+    places: [],
+  };
+  entry.places = placesOf(recording, account, entry, span);
+  if (columns.input !== undefined) entry.input = change(columns.input);
+  if (entry.kind === 'stored' && columns.stored !== undefined) {
+    entry.stored = { from: read(span.fromRow, columns.stored), to: read(span.toRow, columns.stored) };
+  }
+  return entry;
+}
+
+/** Kinetic energy of several bodies at a row [J]. */
+export function kineticEnergy(recording: Recording, bodies: readonly BodySpec[], row: number): number {
+  const sum = new CompensatedSum();
+  for (const body of bodies) sum.add(kineticEnergyOf(recording, body, row));
+  return sum.value;
+}
+
+function greatestKinetic(recording: Recording, bodies: readonly BodySpec[], { fromRow, toRow }: Span): number {
+  let greatest = 0;
+  for (let row = fromRow; row <= toRow; row++) {
+    const energy = kineticEnergy(recording, bodies, row);
+    if (energy > greatest && energy < Infinity) greatest = energy;
+  }
+  return greatest;
+}
+
+/** The recorded sums are rounded to their own size, which may be far above what happens between two late rows. */
+function resolution(recording: Recording, span: Span, inside: ReadonlySet<string>, kinetic: number): number {
+  const sizes = new CompensatedSum();
+  sizes.add(kinetic);
+  for (const { bodies, columns } of recording.layout.accounts) {
+    columns.work.forEach((column, i) => {
+      if (!inside.has(bodies[i])) return;
+      for (const row of [span.fromRow, span.toRow]) sizes.add(Math.abs(valueAt(recording, row, column)));
+    });
+  }
+  return Number.isFinite(sizes.value) ? ROUNDINGS * Number.EPSILON * sizes.value : 0;
+}
+
+/** Lets finite numbers through; any other is nil and leaves one finding for what it belongs to. */
+class FiniteGuard {
+  readonly findings: Finding[] = [];
+  private readonly seen = new Set<string>();
+
+  constructor(
+    private readonly span: Span,
+    private readonly time: number,
+  ) {}
+
+  finite(value: number, what: string, of: string[]): number {
+    if (Number.isFinite(value)) return value;
+    const key = [what, ...of].join(' ');
+    if (!this.seen.has(key)) this.findings.push(this.finding(what, of));
+    this.seen.add(key);
+    return 0;
+  }
+
+  private finding(what: string, of: string[]): Finding {
+    const { from, to } = this.span;
+    const whose = of.length > 0 ? ` of ${of.join('/')}` : '';
+    const text = `The ${what}${whose} between stations ${from} and ${to} is not a finite number, and is booked as nil.`;
+    return {
+      severity: 'error',
+      code: 'non-finite',
+      text,
+      of,
+      ...(Number.isFinite(this.time) ? { at: this.time } : {}),
+    };
+  }
+}
