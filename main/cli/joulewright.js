@@ -40,8 +40,7 @@ async function bringUpToDate() {
 
 /** An internal error, as the file contract has it. @param {string} sentence */
 function fail(sentence) {
-  process.stderr.write(`${sentence}
-`);
+  process.stderr.write(`${sentence}\n`);
   process.exit(4);
 }
 
