@@ -1,0 +1,15 @@
+import { check } from './check.js';
+import { runCommandLine } from './cli.js';
+import { defaults } from './defaults.js';
+
+// A reader that has seen enough (`| head`) closes the pipe: no error, just nobody left to write for.
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code !== 'EPIPE') throw error;
+});
+
+process.exitCode = await runCommandLine(process.argv.slice(2), [check, defaults], {
+  out: (text) => process.stdout.write(text),
+  err: (text) => process.stderr.write(text),
+  stdin: () => process.stdin,
+  watched: process.stderr.isTTY,
+});

@@ -1,0 +1,21 @@
+import type { Terminal } from './terminal.js';
+
+/** One line on standard error that says how far a run is, written over itself; nothing where nobody watches. */
+export class Progress {
+  private shown = false;
+
+  constructor(private readonly terminal: Terminal) {}
+
+  /** @param time reached [s] @param duration of the run [s] */
+  show(time: number, duration: number): void {
+    if (!this.terminal.watched) return;
+    const percent = Math.min(100, Math.floor((100 * time) / duration));
+    this.terminal.err(`\r${percent.toString().padStart(3)} %  ${time.toFixed(3)} s of ${duration.toFixed(3)} s`);
+    this.shown = true;
+  }
+
+  clear(): void {
+    if (this.shown) this.terminal.err('\r\u001b[K');
+    this.shown = false;
+  }
+}
