@@ -1,7 +1,7 @@
 import { arcAt, arcDistance, arcParameter } from './arc-piece.js';
 import { cubicAt, cubicParameter, cubicPoint, squareParameters } from './cubic-piece.js';
 import { boxDistanceSquared, newFoot, type ArcPiece, type CubicPiece, type Foot, type Piece } from './piece.js';
-import { pieceAt, type SmoothRun } from './track-path.js';
+import type { SmoothRun } from './track-path.js';
 
 const trial = newFoot();
 const roots = new Float64Array(6);
@@ -101,4 +101,16 @@ export function markEnds(run: SmoothRun, x: number, y: number, foot: Foot): void
   const ahead = foot.tx * (x - foot.x) + foot.ty * (y - foot.y);
   foot.atStart = foot.s <= 0 && ahead < 0;
   foot.atEnd = foot.s >= run.length && ahead > 0;
+}
+
+/** Index of the piece of a run on which arc length `s` lies. */
+export function pieceAt(run: SmoothRun, s: number): number {
+  let low = 0;
+  let high = run.pieces.length - 1;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (run.pieces[middle].from <= s) low = middle;
+    else high = middle - 1;
+  }
+  return low;
 }

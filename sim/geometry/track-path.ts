@@ -1,12 +1,12 @@
-import { cross, distance, dot, norm, subtract, type Vec } from '../core/vec.js';
+import { cross, dot, type Vec } from '../core/vec.js';
 import type { Track, TrackSegment } from '../mechanism/kinds/track.js';
 import { arcAt, arcPiece, linePiece } from './arc-piece.js';
 import { cubicAt } from './cubic-piece.js';
-import { boxAround, growBox, newFoot, type Box, type Foot, type Piece } from './piece.js';
+import { boxAround, growBox, newFoot, type Box, type Piece } from './piece.js';
 import { splinePieces } from './spline.js';
 
-/** Tangents closer than this [rad] pass smoothly; ends closer than this × extent touch (the mechanism file, Touching). */
-export const TOUCHING = 1e-6;
+/** Tangents closer than this [rad] pass smoothly (the mechanism file, Touching). */
+const SMOOTH = 1e-6;
 
 /** Where a run goes on: the other run, and the end of it that meets ours ('end' where it is drawn the other way). */
 export interface RunLink {
@@ -112,7 +112,7 @@ function turnBetween(before: Piece, after: Piece): number {
   return Math.atan2(cross(a, b), dot(a, b));
 }
 
-const isCorner = (turn: number): boolean => Math.abs(turn) > TOUCHING;
+const isCorner = (turn: number): boolean => Math.abs(turn) > SMOOTH;
 
 const scratch = newFoot();
 
@@ -146,75 +146,3 @@ function grow(box: Box, other: Box): void {
   growBox(box, [other.minX, other.minY]);
   growBox(box, [other.maxX, other.maxY]);
 }
-
-/**
- * Links the runs of different tracks that pass smoothly into each other: their ends lie within 1e-6 of `extent`, their
- * directions agree within 1e-6, and their free sides meet. Tracks drawn in opposite senses link too (`RunLink.at`).
- * Where several qualify, the first in the document's order is taken.
- *
- * @param extent the mechanism's extent [m]
- */
-export function joinTracks(tracks: readonly Track[], extent: number): TrackPath[] {
-  const paths = tracks.map(buildTrack);
-  const ends = paths.flatMap(openEnds);
-  for (const end of ends) {
-    const other = ends.find((candidate) => meetsSmoothly(end, candidate, extent));
-    if (!other) continue;
-    const link = { run: other.run, at: other.at };
-    if (end.at === 'start') end.run.previous = link;
-    else end.run.next = link;
-  }
-  return paths;
-}
-
-/** An open end of a track; `outward` points along the path out of it, `free` tells which sides of that are free. */
-interface OpenEnd {
-  run: SmoothRun;
-  at: 'start' | 'end';
-  point: Vec;
-  outward: Vec;
-  free: { left: boolean; right: boolean };
-}
-
-function openEnds(path: TrackPath): OpenEnd[] {
-  if (path.closed) return [];
-  const first = path.runs[0];
-  const last = path.runs[path.runs.length - 1];
-  const [tx, ty] = endTangent(first.pieces[0], 'start');
-  const isLeft = path.side !== 'right';
-  const isRight = path.side !== 'left';
-  return [
-    { run: first, at: 'start', point: first.start, outward: [-tx, -ty], free: { left: isRight, right: isLeft } },
-    {
-      run: last,
-      at: 'end',
-      point: last.end,
-      outward: endTangent(last.pieces[last.pieces.length - 1], 'end'),
-      free: { left: isLeft, right: isRight },
-    },
-  ];
-}
-
-function meetsSmoothly(a: OpenEnd, b: OpenEnd, extent: number): boolean {
-  if (a.run === b.run || a.run.track === b.run.track) return false;
-  const sides = (a.free.left && b.free.right) || (a.free.right && b.free.left);
-  const isStraight = norm([a.outward[0] + b.outward[0], a.outward[1] + b.outward[1]]) <= TOUCHING;
-  return sides && isStraight && norm(subtract(a.point, b.point)) <= TOUCHING * extent;
-}
-
-/** How far apart two points may be and still touch [m]. */
-export const touching = (a: Vec, b: Vec, extent: number): boolean => distance(a, b) <= TOUCHING * extent;
-
-/** Index of the piece of a run on which arc length `s` lies. */
-export function pieceAt(run: SmoothRun, s: number): number {
-  let low = 0;
-  let high = run.pieces.length - 1;
-  while (low < high) {
-    const middle = (low + high + 1) >> 1;
-    if (run.pieces[middle].from <= s) low = middle;
-    else high = middle - 1;
-  }
-  return low;
-}
-
-export type { Foot };
