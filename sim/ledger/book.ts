@@ -77,7 +77,9 @@ function bookEntry(
     heat: columns.heat === undefined ? 0 : change(columns.heat),
     places: [],
   };
-  entry.places = placesOf(recording, account, entry, span);
+  entry.places = placesOf(recording, account, entry, span).filter(({ at, work, heat }) => {
+    return guard.areFinite([...at, work, heat], `place of ${name}`, named);
+  });
   if (columns.input !== undefined) entry.input = change(columns.input);
   if (entry.kind === 'stored' && columns.stored !== undefined) {
     entry.stored = { from: read(span.fromRow, columns.stored), to: read(span.toRow, columns.stored) };
@@ -130,6 +132,11 @@ class FiniteGuard {
     if (!this.seen.has(key)) this.findings.push(this.finding(what, of));
     this.seen.add(key);
     return 0;
+  }
+
+  areFinite(values: number[], what: string, of: string[]): boolean {
+    for (const value of values) this.finite(value, what, of);
+    return values.every((value) => Number.isFinite(value));
   }
 
   private finding(what: string, of: string[]): Finding {

@@ -11,12 +11,12 @@ export const NUMERICAL_LIMIT = 5e-3;
 /** Between stations where nearly nothing happens, shares are of this share of the whole run's turnover. */
 const QUIET = 1e-6;
 
-const CAUSES: Record<NumericalCause, { name: string; remedy: string }> = {
-  'force-truncation': { name: 'the length of its steps', remedy: 'Take a smaller step' },
-  'solver-residual': { name: 'what its contact solver left unsolved', remedy: 'Take a smaller step' },
-  'velocity-projection': { name: 'turning velocities back onto the joints', remedy: 'Take a smaller step' },
-  'position-projection': { name: 'moving bodies back onto joints and tracks', remedy: 'Take a smaller step' },
-  clamp: { name: 'limits on how far a body moves in a step', remedy: 'Take a smaller step, so that no limit is met' },
+const CAUSES: Record<NumericalCause, string> = {
+  'force-truncation': 'the length of its steps',
+  'solver-residual': 'what its contact solver left unsolved',
+  'velocity-projection': 'turning velocities back onto the joints',
+  'position-projection': 'moving bodies back onto joints and tracks',
+  clamp: 'its limit on how far a body moves in a step',
 };
 
 /** Whether the accounts of a ledger explain its change of kinetic energy, to rounding. */
@@ -41,7 +41,7 @@ export function ledgerFindings(recording: Recording, ledgers: readonly Ledger[],
     ...recording.findings,
     ...ledgers.flatMap((ledger) => ledger.findings),
     ...ledgers.filter((ledger) => !closes(ledger)).map(openFinding),
-    ...ledgers.flatMap((ledger) => numericalFindings(ledger, quiet, recording.step)),
+    ...ledgers.flatMap((ledger) => numericalFindings(ledger, quiet, recording)),
   ];
 }
 
@@ -58,24 +58,27 @@ function openFinding({ from, to, unbooked, turnover }: Ledger): Finding {
   return { severity: 'error', code: 'ledger-open', text, of: [from, to] };
 }
 
-function numericalFindings(ledger: Ledger, quiet: number, step: number | undefined): Finding[] {
+function numericalFindings(ledger: Ledger, quiet: number, recording: Recording): Finding[] {
   const entries = numericalEntries(ledger);
   const scale = Math.max(ledger.turnover, quiet);
   const above = entries.filter((entry) => shareOf([entry], scale) > NUMERICAL_LIMIT);
-  if (above.length > 0) return above.map((entry) => numericalFinding(ledger, [entry], scale, step));
-  return shareOf(entries, scale) > NUMERICAL_LIMIT ? [numericalFinding(ledger, entries, scale, step)] : [];
+  if (above.length > 0) return above.map((entry) => numericalFinding(ledger, [entry], scale, recording));
+  return shareOf(entries, scale) > NUMERICAL_LIMIT ? [numericalFinding(ledger, entries, scale, recording)] : [];
 }
 
-function numericalFinding({ from, to }: Ledger, entries: Entry[], scale: number, step: number | undefined): Finding {
+function numericalFinding({ from, to }: Ledger, entries: Entry[], scale: number, recording: Recording): Finding {
   const work = entries.reduce((sum, entry) => sum + Math.abs(entry.work), 0);
   const did = entries.length > 1 ? 'made or lost' : entries[0].work > 0 ? 'made' : 'lost';
-  const causes = entries.map(({ cause }) => CAUSES[cause as NumericalCause]);
-  const percent = figure((100 * work) / scale);
+  const causes = entries.map(({ cause }) => CAUSES[cause as NumericalCause]).join(' and ');
   const text =
-    `From station ${from} to ${to} the method itself ${did} ${figure(work)} J by ${causes.map(({ name }) => name).join(', ')}: ` +
-    `${percent} % of the turnover, where ${100 * NUMERICAL_LIMIT} % is the limit. ` +
-    `${causes[0].remedy}${step === undefined ? '' : ` (now ${figure(step)} s)`}.`;
+    `From station ${from} to ${to} the ${recording.solver} itself ${did} ${figure(work)} J by ${causes}: ` +
+    `${figure((100 * work) / scale)} % of the turnover, where ${100 * NUMERICAL_LIMIT} % is the limit. ${remedy(recording)}`;
   return { severity: 'warning', code: 'numerical-over-limit', text, of: [from, to] };
+}
+
+function remedy({ solver, step }: Recording): string {
+  if (solver === 'auditor') return 'Take a tighter tolerance.';
+  return step === undefined ? 'Take a smaller step.' : `Take a smaller step; it is ${figure(step)} s now.`;
 }
 
 function numericalEntries({ entries }: Ledger): Entry[] {

@@ -1,6 +1,10 @@
-export { bookLedger } from './book.js';
-export { CLOSURE_LIMIT, NUMERICAL_LIMIT, closes, ledgerFindings, numericalShare } from './findings.js';
-export { entryKind } from './kind.js';
 export type * from './ledger.js';
-export { consecutiveLedgers, stationRows, stationSpans } from './stations.js';
+export type { AccountLine, AccountView } from './account-lines.js';
+export type { AccountPage, PageLine, PageOptions, PrintScale } from './account-page.js';
 export type { StationRow } from './stations.js';
+export { CLOSURE_LIMIT, NUMERICAL_LIMIT, closes, ledgerFindings, numericalShare } from './findings.js';
+export { accountPage, scaleOf } from './account-page.js';
+export { asStored, asWork, splitBySegment } from './account-lines.js';
+export { bookLedger } from './book.js';
+export { consecutiveLedgers, stationRows, stationSpans } from './stations.js';
+export { entryKind } from './kind.js';
