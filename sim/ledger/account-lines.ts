@@ -1,5 +1,5 @@
 import type { AccountName } from '../recording/index.js';
-import type { Entry, Ledger } from './ledger.js';
+import type { BookedLedger, Entry } from './ledger.js';
 
 /** How gravity and springs are shown: by the work they do, or by the energy they hold at the two stations. */
 export type AccountView = 'work' | 'stored';
@@ -21,7 +21,7 @@ export interface AccountLine {
 }
 
 /** An account by the work of every cause: energy of motion in, works, unbooked, energy of motion out. The sum is nil. */
-export function asWork(ledger: Ledger): AccountLine[] {
+export function asWork(ledger: BookedLedger): AccountLine[] {
   return framed(ledger, [], ledger.entries.map(workLine), []);
 }
 
@@ -29,7 +29,7 @@ export function asWork(ledger: Ledger): AccountLine[] {
  * The same account with what gravity and springs hold at the two stations in place of their work. Height is counted from
  * the lower of the two stations, a spring from relaxed, so that no store is below nil.
  */
-export function asStored(ledger: Ledger): AccountLine[] {
+export function asStored(ledger: BookedLedger): AccountLine[] {
   const stores = ledger.entries.filter(({ kind }) => kind === 'stored').map(storeOf);
   const others = ledger.entries.filter(({ kind }) => kind !== 'stored');
   return framed(
@@ -44,14 +44,14 @@ export function asStored(ledger: Ledger): AccountLine[] {
  * Split entries by the track segments where their work was done, as a drawing shows them. What was done at no place
  * keeps a line of its own.
  */
-export function splitBySegment(ledger: Ledger, lines: readonly AccountLine[]): AccountLine[] {
+export function splitBySegment(ledger: BookedLedger, lines: readonly AccountLine[]): AccountLine[] {
   return lines.flatMap((line) => {
     const entry = ledger.entries.find((e) => e.account === line.account && e.of === line.of && e.cause === line.cause);
     const onSegments = entry?.places.filter(({ segment }) => segment !== undefined) ?? [];
     if (line.role !== 'entry' || onSegments.length < 2) return [line];
     const parts = onSegments.map(({ on, segment, work }): AccountLine => ({ ...line, on, segment, amount: work }));
     const rest = line.amount - parts.reduce((sum, { amount }) => sum + amount, 0);
-    return Math.abs(rest) > Math.max(1e-9 * Math.abs(line.amount), ledger.resolution)
+    return Math.abs(rest) > Math.max(1e-9 * Math.abs(line.amount), 1e-12 * ledger.turnover)
       ? [...parts, { ...line, amount: rest }]
       : absorb(parts, rest);
   });
@@ -63,7 +63,12 @@ function absorb(parts: AccountLine[], rest: number): AccountLine[] {
   return parts.map((part) => (part === greatest ? { ...part, amount: part.amount + rest } : part));
 }
 
-function framed(ledger: Ledger, before: AccountLine[], entries: AccountLine[], after: AccountLine[]): AccountLine[] {
+function framed(
+  ledger: BookedLedger,
+  before: AccountLine[],
+  entries: AccountLine[],
+  after: AccountLine[],
+): AccountLine[] {
   return [
     { role: 'brought', account: null, of: null, amount: ledger.kineticFrom },
     ...before,

@@ -2,7 +2,7 @@ import { compensatedSum } from '../core/sum.js';
 import type { AccountName } from '../recording/index.js';
 import type { AccountLine, AccountView } from './account-lines.js';
 import { asStored, asWork, splitBySegment } from './account-lines.js';
-import type { Ledger } from './ledger.js';
+import type { BookedLedger } from './ledger.js';
 import { apportion, roundHalfUp } from './rounding.js';
 
 /** The unit an account is printed in, and how many decimals. */
@@ -49,7 +49,7 @@ const UNITS: readonly { unit: string; joules: number; from: number }[] = [
 const DECIMALS = 3;
 
 /** One scale for all pages of a report, so that what one carries forward is printed as the next brings it forward. */
-export function scaleOf(ledgers: readonly Ledger[]): PrintScale {
+export function scaleOf(ledgers: readonly BookedLedger[]): PrintScale {
   const greatest = Math.max(0, ...ledgers.map((ledger) => totalOf(asStored(ledger))));
   const fitting = UNITS.find(({ from }) => greatest >= from);
   const { unit, joules } = greatest > 0 && fitting ? fitting : UNITS[1];
@@ -61,7 +61,7 @@ export function scaleOf(ledgers: readonly Ledger[]): PrintScale {
  * are received; works taken from them and the energy left at the second station are paid out, whatever is nil too.
  * Roundings are chosen so that the printed lines add up; should they be unable to, a `rounding` line shows it.
  */
-export function accountPage(ledger: Ledger, options: PageOptions = {}): AccountPage {
+export function accountPage(ledger: BookedLedger, options: PageOptions = {}): AccountPage {
   const scale = options.scale ?? scaleOf([ledger]);
   const lines = options.view === 'stored' ? asStored(ledger) : asWork(ledger);
   const split = options.split ? splitBySegment(ledger, lines) : lines;

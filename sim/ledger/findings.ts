@@ -1,6 +1,6 @@
 import type { Finding, NumericalCause, Recording } from '../recording/index.js';
 import { bookLedger } from './book.js';
-import type { Entry, Ledger } from './ledger.js';
+import type { BookedLedger, Entry, Ledger } from './ledger.js';
 
 /** A ledger is open when more than this share of its turnover is unbooked. */
 export const CLOSURE_LIMIT = 1e-9;
@@ -25,7 +25,7 @@ export function closes({ unbooked, turnover, resolution }: Ledger): boolean {
 }
 
 /** What the method made or lost, Σ|work| of the numerical entries over the turnover; 0 where there is neither. */
-export function numericalShare(ledger: Ledger): number {
+export function numericalShare(ledger: BookedLedger): number {
   return shareOf(numericalEntries(ledger), ledger.turnover);
 }
 
@@ -81,7 +81,7 @@ function remedy({ solver, step }: Recording): string {
   return step === undefined ? 'Take a smaller step.' : `Take a smaller step; it is ${figure(step)} s now.`;
 }
 
-function numericalEntries({ entries }: Ledger): Entry[] {
+function numericalEntries({ entries }: BookedLedger): Entry[] {
   return entries.filter(({ kind }) => kind === 'numerical');
 }
 

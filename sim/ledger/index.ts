@@ -5,6 +5,7 @@ export type { StationRow } from './stations.js';
 export { CLOSURE_LIMIT, NUMERICAL_LIMIT, closes, ledgerFindings, numericalShare } from './findings.js';
 export { accountPage, scaleOf } from './account-page.js';
 export { asStored, asWork, splitBySegment } from './account-lines.js';
-export { bookLedger } from './book.js';
+export { bookLedger, kineticEnergy } from './book.js';
 export { consecutiveLedgers, stationRows, stationSpans } from './stations.js';
 export { entryKind } from './kind.js';
+export { ACCOUNT_NAMES, CAUSE_NAMES, lineLabel, ofLabel } from './names.js';

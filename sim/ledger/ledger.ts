@@ -52,6 +52,9 @@ export interface Ledger {
   findings: Finding[];
 }
 
+/** The figures of a ledger, as a result has them. */
+export type BookedLedger = Omit<Ledger, 'resolution' | 'findings'>;
+
 /** Two marked instants and the rows of a recording they are at. */
 export interface Span {
   from: string;

@@ -1,0 +1,7 @@
+export { checkResult } from './check-result.js';
+export type { CheckInput, CriterionLimits } from './check-result.js';
+export { checkText } from './check-text.js';
+export type { TextOptions } from './check-text.js';
+export { exitStatus } from './exit-status.js';
+export type { ExitStatus } from './exit-status.js';
+export type * from './result.js';

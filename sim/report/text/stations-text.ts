@@ -1,0 +1,47 @@
+import type { CheckResult, ReachedStation, ResultStation } from '../result.js';
+import type { Column } from './layout.js';
+import { table } from './layout.js';
+import type { PrintUnit } from './quantities.js';
+import { figure, massUnit, speedUnit } from './quantities.js';
+
+/** The stations as a table: when, how fast each body is, and how it strikes where a station falls on an impact. */
+export function stationsText({ stepper }: CheckResult, width: number): string[] {
+  const stations = stepper?.stations ?? [];
+  if (stations.length === 0) return [];
+  const reached = stations.filter((station): station is ReachedStation => station.reached);
+  const bodies = Object.keys(reached.at(0)?.bodies ?? {});
+  const columns: Column[] = [
+    { head: 'Station', cells: stations.map(({ id }) => id), align: 'left' },
+    column('Time, s', stations, ({ time }) => time.toFixed(4)),
+    ...touchColumns(stations, reached),
+    ...speedColumns(stations, reached, bodies),
+  ];
+  return ['', 'Stations', ...table(columns, 2, width)];
+}
+
+function touchColumns(stations: readonly ResultStation[], reached: readonly ReachedStation[]): Column[] {
+  const touches = reached.flatMap(({ touch }) => (touch ? [touch] : []));
+  if (touches.length === 0) return [];
+  const speed = speedUnit(touches.map(({ approachSpeed }) => approachSpeed));
+  const mass = massUnit(touches.map(({ effectiveMass }) => effectiveMass));
+  return [
+    column(`Approach, ${speed.symbol}`, stations, ({ touch }) => (touch ? figure(touch.approachSpeed, speed) : '')),
+    column(`Eff. mass, ${mass.symbol}`, stations, ({ touch }) => (touch ? figure(touch.effectiveMass, mass) : '')),
+  ];
+}
+
+function speedColumns(
+  stations: readonly ResultStation[],
+  reached: readonly ReachedStation[],
+  bodies: string[],
+): Column[] {
+  const unit: PrintUnit = speedUnit(reached.flatMap(({ bodies: at }) => bodies.map((body) => at[body].speed)));
+  return bodies.map((body) => {
+    return column(`${body}, ${unit.symbol}`, stations, ({ bodies: at }) => figure(at[body].speed, unit));
+  });
+}
+
+/** A column of figures; a station that was not reached has dashes. */
+function column(head: string, stations: readonly ResultStation[], cell: (station: ReachedStation) => string): Column {
+  return { head, cells: stations.map((station) => (station.reached ? cell(station) : '–')), align: 'right' };
+}
