@@ -9,89 +9,71 @@ export interface Root {
 }
 
 /**
- * A root of f between `a` and `b`, where f has opposite signs, bracketed throughout: inverse quadratic interpolation and
- * the secant rule where they shrink the bracket, bisection where they do not. Superlinear on smooth functions, and never
- * much slower than bisection.
- * Source: R. P. Brent, Algorithms for Minimization without Derivatives, 1973, ch. 4.
+ * A root of f between `a` and `b`, where f has opposite signs, bracketed throughout: inverse quadratic interpolation where
+ * the last three points allow it, bisection elsewhere. Superlinear on simple roots, near bisection's speed on multiple
+ * ones and jumps.
+ * Source: T. R. Chandrupatla, A new hybrid quadratic/bisection algorithm for finding the zero of a nonlinear function
+ * without using derivatives, Advances in Engineering Software 28 (1997) 145–149.
  *
  * @param tolerance the bracket's width to reach, in the unit of a and b; rounding of the root is added to it. Default:
  *   the rounding of b − a
  * @param fa f(a) and f(b), where they are known already
  */
-export function findRoot(f: (x: number) => number, a: number, b: number, tolerance = 0, fa = f(a), fb = f(b)): Root {
-  const state: Bracket = { a, fa, b, fb, c: a, fc: fa, last: b - a, beforeLast: b - a };
-  if (!Number.isFinite(fa) || !Number.isFinite(fb)) return ended(state, 2, 'nonFinite');
-  if (fa !== 0 && fb !== 0 && fa > 0 === fb > 0) return ended(state, 2, 'noSignChange');
+export function findRoot(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  tolerance = Number.EPSILON * Math.abs(b - a),
+  fa = f(a),
+  fb = f(b),
+): Root {
+  // p is the newest point, q the other end of the bracket, r the point dropped last.
+  const s: Points = { p: b, fp: fb, q: a, fq: fa, r: a, fr: fa };
+  if (!Number.isFinite(fa) || !Number.isFinite(fb)) return ended(s, 2, 'nonFinite');
+  if (fa !== 0 && fb !== 0 && fa > 0 === fb > 0) return ended(s, 2, 'noSignChange');
   for (let evaluations = 2; evaluations < MOST; evaluations += 1) {
-    order(state);
-    const reach = 2 * Number.EPSILON * Math.abs(state.b) + 0.5 * tolerance;
-    const half = 0.5 * (state.c - state.b);
-    if (state.fb === 0 || Math.abs(half) <= reach) return ended(state, evaluations, 'converged');
-    const step = nextStep(state, half, reach);
-    state.a = state.b;
-    state.fa = state.fb;
-    state.b += Math.abs(step) > reach ? step : Math.sign(half) * reach;
-    state.fb = f(state.b);
-    if (!Number.isFinite(state.fb)) return ended(state, evaluations + 1, 'nonFinite');
+    const best = Math.abs(s.fp) < Math.abs(s.fq) ? s.p : s.q;
+    const least = (0.5 * tolerance + Number.EPSILON * Math.abs(best)) / Math.abs(s.q - s.p);
+    if (s.fp === 0 || s.fq === 0 || least > 0.5) return ended(s, evaluations, 'converged');
+    const fraction = Math.min(Math.max(evaluations === 2 ? 0.5 : interpolated(s), least), 1 - least);
+    const x = s.p + fraction * (s.q - s.p);
+    const value = f(x);
+    if (!Number.isFinite(value)) return ended(s, evaluations + 1, 'nonFinite');
+    take(s, x, value);
   }
-  return ended(state, MOST, 'maxIterations');
+  return ended(s, MOST, 'maxIterations');
 }
 
-/** Bisection alone would need 1075 halvings of the widest bracket of doubles. */
-const MOST = 200;
+/** Far more than bisection to rounding needs; a bracket that straddles zero with a tiny tolerance may use them up. */
+const MOST = 300;
 
-/** `b` is the best point, `c` the other end of the bracket, `a` the best point before; steps of the last two rounds. */
-interface Bracket {
-  a: number;
-  fa: number;
-  b: number;
-  fb: number;
-  c: number;
-  fc: number;
-  last: number;
-  beforeLast: number;
+interface Points {
+  p: number;
+  fp: number;
+  q: number;
+  fq: number;
+  r: number;
+  fr: number;
 }
 
-/** Keeps the root between b and c, and |f(b)| the lesser. */
-function order(s: Bracket): void {
-  if (s.fb > 0 === s.fc > 0 && s.fb !== 0) {
-    s.c = s.a;
-    s.fc = s.fa;
-    s.last = s.beforeLast = s.b - s.a;
-  }
-  if (Math.abs(s.fc) >= Math.abs(s.fb)) return;
-  [s.a, s.b, s.c] = [s.b, s.c, s.b];
-  [s.fa, s.fb, s.fc] = [s.fb, s.fc, s.fb];
+function take(s: Points, x: number, value: number): void {
+  const replacesP = value > 0 === s.fp > 0;
+  s.r = replacesP ? s.p : s.q;
+  s.fr = replacesP ? s.fp : s.fq;
+  if (!replacesP) [s.q, s.fq] = [s.p, s.fp];
+  s.p = x;
+  s.fp = value;
 }
 
-function nextStep(s: Bracket, half: number, reach: number): number {
-  if (Math.abs(s.beforeLast) >= reach && Math.abs(s.fa) > Math.abs(s.fb)) {
-    const { p, q } = interpolation(s, half);
-    if (2 * p < Math.min(3 * half * q - Math.abs(reach * q), Math.abs(s.beforeLast * q))) {
-      s.beforeLast = s.last;
-      s.last = p / q;
-      return s.last;
-    }
-  }
-  s.last = s.beforeLast = half;
-  return half;
+/** Fraction of the way from p to q by inverse quadratic interpolation, or ½ where that cannot be trusted. */
+function interpolated({ p, fp, q, fq, r, fr }: Points): number {
+  const place = (p - q) / (r - q);
+  const level = (fp - fq) / (fr - fq);
+  if (level * level >= place || (1 - level) * (1 - level) >= 1 - place) return 0.5;
+  return (fp / (fq - fp)) * (fr / (fq - fr)) + ((r - p) / (q - p)) * (fp / (fr - fp)) * (fq / (fr - fq));
 }
 
-/** The step p/q (p ≥ 0) of the secant rule on two points, of inverse quadratic interpolation on three. */
-function interpolation(s: Bracket, half: number): { p: number; q: number } {
-  const ratio = s.fb / s.fa;
-  let p = 2 * half * ratio;
-  let q = 1 - ratio;
-  if (s.a !== s.c) {
-    const u = s.fa / s.fc;
-    const v = s.fb / s.fc;
-    p = ratio * (2 * half * u * (u - v) - (s.b - s.a) * (v - 1));
-    q = (u - 1) * (v - 1) * (ratio - 1);
-  }
-  return p > 0 ? { p, q: -q } : { p: -p, q };
-}
-
-function ended(s: Bracket, evaluations: number, reason: Root['reason']): Root {
-  const { b, c } = s;
-  return { root: b, low: Math.min(b, c), high: Math.max(b, c), evaluations, reason };
+function ended({ p, fp, q, fq }: Points, evaluations: number, reason: Root['reason']): Root {
+  const root = Math.abs(fp) <= Math.abs(fq) ? p : q;
+  return { root, low: Math.min(p, q), high: Math.max(p, q), evaluations, reason };
 }

@@ -19,11 +19,11 @@ export function linePiece(start: Vec, end: Vec, segment: number, name?: string):
 
 /**
  * A circular arc by the bulge of the DXF polyline, b = tan(θ/4), θ the included angle, + counter-clockwise:
- * κ = 2 sin(θ/2) / chord = 4 b / ((1 + b²) chord). A bulge of 0 is a line.
+ * κ = 2 sin(θ/2) / chord = 4 b / ((1 + b²) chord). A bulge that rises less than the rounding of its chord is a line.
  */
 export function arcPiece(start: Vec, end: Vec, bulge: number, segment: number, name?: string): ArcPiece {
   const line = linePiece(start, end, segment, name);
-  if (bulge === 0) return line;
+  if (Math.abs(bulge) < Number.EPSILON) return line;
   const included = 4 * Math.atan(bulge);
   const curvature = (4 * bulge) / ((1 + bulge * bulge) * line.length);
   const arc: ArcPiece = {
