@@ -54,3 +54,23 @@ export function sampledDistance(run: SmoothRun, [x, y]: Vec, samples = 600): num
   }
   return Math.min(away(0.5 * (low + high)), away((run.length * best) / samples));
 }
+
+/** A random simple polygon: star-shaped about its centre, any corner out or in, counter-clockwise. */
+export const star: fc.Arbitrary<Vec[]> = fc
+  .tuple(
+    point,
+    fc.array(fc.tuple(fc.integer({ min: 5, max: 100 }), fc.integer({ min: 20, max: 100 })), {
+      minLength: 4,
+      maxLength: 14,
+    }),
+  )
+  // A wedge of half a turn or more would put the centre outside.
+  .filter(([, spokes]) => spokes.every(([wedge]) => 2.1 * wedge < spokes.reduce((sum, [each]) => sum + each, 0)))
+  .map(([center, spokes]) => {
+    const whole = spokes.reduce((sum, [wedge]) => sum + wedge, 0);
+    let angle = 0;
+    return spokes.map(([wedge, reach]): Vec => {
+      angle += (2 * Math.PI * wedge) / whole;
+      return [center[0] + (reach / 80) * Math.cos(angle), center[1] + (reach / 80) * Math.sin(angle)];
+    });
+  });
