@@ -31,17 +31,23 @@ export function ofLabel(of: string | readonly [string, string] | null): string {
   return of === null ? '' : [of].flat().join('/');
 }
 
-/** What a line of an account is called: `Friction crate/chute`, `Brought forward, height crate`, `Unbooked`. */
-export function lineLabel({ role, account, of, cause, segment }: AccountLine | Omit<AccountLine, 'amount'>): string {
+/** What a line of an account is called: `Friction crate/chute`, `Height crate b/f`, `Carried forward`, `Unbooked`. */
+export function lineLabel({ role, account, of, cause, segment }: Omit<AccountLine, 'amount'>): string {
   if (role === 'unbooked') return 'Unbooked';
   if (role === 'rounding') return 'Rounding';
-  if (role !== 'entry') return `${role === 'brought' ? 'Brought' : 'Carried'} forward${storeLabel(account, of)}`;
+  if (role === 'entry') return entryLabel(account, of, cause, segment);
+  if (account === null) return role === 'brought' ? 'Brought forward' : 'Carried forward';
+  const store = account === 'gravity' ? 'Height' : ACCOUNT_NAMES[account];
+  return `${store} ${ofLabel(of)} ${role === 'brought' ? 'b/f' : 'c/f'}`;
+}
+
+function entryLabel(
+  account: AccountName | null,
+  of: AccountLine['of'],
+  cause: string | undefined,
+  segment: number | undefined,
+): string {
   const name = account === null ? '' : ACCOUNT_NAMES[account];
   if (cause !== undefined) return `${name}, ${CAUSE_NAMES[cause as NumericalCause]}`;
   return [name, ofLabel(of), segment === undefined ? '' : `segment ${segment + 1}`].filter(Boolean).join(' ');
-}
-
-function storeLabel(account: AccountName | null, of: AccountLine['of']): string {
-  if (account === null) return '';
-  return `, ${account === 'gravity' ? 'height' : ACCOUNT_NAMES[account].toLowerCase()} ${ofLabel(of)}`;
 }

@@ -1,14 +1,12 @@
 import type { Problem } from '../core/problem.js';
 import { consecutiveLedgers, ledgerFindings } from '../ledger/index.js';
 import type { Ledger } from '../ledger/index.js';
+import type { Bounds, Criterion } from '../mechanism/kinds/criterion.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { Finding, Recording, RunEnd } from '../recording/index.js';
 import { onlyFinite } from './finite.js';
 import type { CheckResult, ResultCriterion, ResultFinding } from './result.js';
 import { runResult } from './run-result.js';
-
-/** An acceptance criterion as the document states it, as far as a result repeats it; limits in SI. */
-export type CriterionLimits = Pick<ResultCriterion, 'id' | 'atMost' | 'atLeast' | 'between'>;
 
 /** All that a check found out about one file. */
 export interface CheckInput {
@@ -19,7 +17,6 @@ export interface CheckInput {
   mechanism: Mechanism | null;
   /** The stepper's run; nothing where it did not run. */
   stepper: Recording | null;
-  criteria?: readonly CriterionLimits[];
   /** What reading the file found. */
   problems?: readonly Problem[];
   /** What was found before a run, such as kinds that are not simulated. */
@@ -32,7 +29,8 @@ export interface CheckInput {
  * evaluated, each with its finding.
  */
 export function checkResult(input: CheckInput): CheckResult {
-  const { mechanism, stepper, criteria = [] } = input;
+  const { mechanism, stepper } = input;
+  const criteria = mechanism?.criteria ?? [];
   const ledgers = mechanism && stepper ? consecutiveLedgers(stepper, mechanism.system) : [];
   return onlyFinite({
     format: 'joulewright-result/1',
@@ -48,7 +46,7 @@ export function checkResult(input: CheckInput): CheckResult {
     stepper: mechanism && stepper ? runResult(mechanism, stepper, ledgers) : null,
     auditor: null,
     handCheck: [],
-    criteria: criteria.map((criterion) => ({ ...criterion, value: null, passes: null, by: null })),
+    criteria: criteria.map(notEvaluated),
   });
 }
 
@@ -108,7 +106,20 @@ function missedStations({ stations }: Mechanism, { events }: Recording): Finding
     });
 }
 
-function criterionFinding({ id }: CriterionLimits): Finding {
+function notEvaluated(criterion: Criterion): ResultCriterion {
+  const { id, atMost, atLeast, between }: { id: string } & Bounds = criterion;
+  return {
+    id,
+    value: null,
+    ...(atMost === undefined ? {} : { atMost }),
+    ...(atLeast === undefined ? {} : { atLeast }),
+    ...(between === undefined ? {} : { between: [between[0], between[1]] }),
+    passes: null,
+    by: null,
+  };
+}
+
+function criterionFinding({ id }: Criterion): Finding {
   const text = `Criterion ${id} was not evaluated, and counts as failed: criteria are not evaluated yet.`;
   return { severity: 'warning', code: 'criterion-not-evaluated', text, of: [id] };
 }

@@ -76,13 +76,12 @@ function ruledOff(lines: string[], height: number, width: number, keepLast: bool
 
 function zRule(height: number, width: number): string[] {
   const [start, end] = [Math.floor(width / 4), Math.ceil((3 * width) / 4)];
-  if (height === 0) return [];
-  if (height === 1) return [left(' '.repeat(start) + '─'.repeat(end - start), width)];
+  const line = (from: number, text: string): string => left(' '.repeat(from) + text, width);
+  if (height === 1) return [line(start, '─'.repeat(end - start))];
   return Array.from({ length: height }, (_, i) => {
-    const at = Math.round(end - 6 - ((end - start - 12) * i) / (height - 1));
-    if (i === 0) return left(`${' '.repeat(at)}╱${'─'.repeat(end - at)}`, width);
-    if (i === height - 1) return left(`${' '.repeat(start)}${'─'.repeat(at - start)}╱`, width);
-    return left(`${' '.repeat(at)}╱`, width);
+    const slash = Math.floor((width + height) / 2) - 1 - i;
+    if (i === 0) return line(slash, `╱${'─'.repeat(Math.max(0, end - slash - 1))}`);
+    return i < height - 1 ? line(slash, '╱') : line(start, `${'─'.repeat(Math.max(0, slash - start))}╱`);
   });
 }
 

@@ -3,6 +3,9 @@ import type { CheckResult, ResultLedger } from '../result.js';
 import { spread } from './layout.js';
 import { short } from './quantities.js';
 
+/** A share below this is printed as below it. */
+const LEAST_PERCENT = 0.001;
+
 const MARKS = { agrees: '=', differs: '≠', unaudited: ' ' };
 const WORDS = {
   agrees: ['Agrees', 'stepper and auditor'],
@@ -16,7 +19,7 @@ const WORDS = {
  */
 export function verdictText({ verdict, stepper }: CheckResult, width: number): string[] {
   const [top, side, bottom] = verdict === 'unaudited' ? ['┌╌╌╌┐', '╎', '└╌╌╌┘'] : ['┌───┐', '│', '└───┘'];
-  const [word, who] = WORDS[verdict];
+  const [word, who] = stepper ? WORDS[verdict] : ['Unaudited', 'not run'];
   const ledgers = stepper?.ledgers ?? [];
   const figures = ledgers.length === 0 ? ['', ''] : [unbooked(ledgers), numerical(ledgers)];
   return [
@@ -36,5 +39,6 @@ function unbooked(ledgers: readonly ResultLedger[]): string {
 }
 
 function numerical(ledgers: readonly ResultLedger[]): string {
-  return `numerical ${short(100 * Math.max(...ledgers.map((ledger) => numericalShare(ledger))))} %`;
+  const percent = 100 * Math.max(...ledgers.map((ledger) => numericalShare(ledger)));
+  return percent > 0 && percent < LEAST_PERCENT ? `numerical < ${LEAST_PERCENT} %` : `numerical ${short(percent)} %`;
 }
