@@ -43,7 +43,7 @@ function parse(args: readonly string[], command: Command | undefined): { values:
   try {
     const config = { args: [...args], options: { ...general, ...command?.options }, allowPositionals: true };
     const { values, positionals } = parseArgs(config);
-    return { values: values as OptionValues, positionals };
+    return { values: values, positionals };
   } catch (error) {
     throw new UsageError((error as Error).message.replace(/\.? To specify a positional.*$/s, '.'));
   }
@@ -51,7 +51,7 @@ function parse(args: readonly string[], command: Command | undefined): { values:
 
 function print(text: string, terminal: Terminal): Status {
   terminal.out(text);
-  return status.passes;
+  return status.done;
 }
 
 function oneLine(error: unknown): string {

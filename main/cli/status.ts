@@ -1,10 +1,7 @@
-/** Exit status of the command line, as the file contract has it. Where 1 and 2 both hold, 2 wins. */
-export const status = {
-  passes: 0,
-  criterionFails: 1,
-  notAudited: 2,
-  inputWrong: 3,
-  internalError: 4,
-} as const;
+/**
+ * Exit statuses of the command line beyond those of a result (0 to 3, `exitStatus` of sim/report): what was asked could
+ * not even be begun.
+ */
+export const status = { done: 0, inputWrong: 3, internalError: 4 } as const;
 
-export type Status = (typeof status)[keyof typeof status];
+export type Status = 0 | 1 | 2 | 3 | 4;

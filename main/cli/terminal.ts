@@ -8,4 +8,6 @@ export interface Terminal {
   stdin(): AsyncIterable<Uint8Array>;
   /** Whether somebody watches standard error, so that a line of progress may be written over. */
   watched: boolean;
+  /** Columns of standard output, where it is a screen. */
+  width?: number;
 }

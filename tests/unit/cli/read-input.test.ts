@@ -15,6 +15,11 @@ describe('reading the input', () => {
     return join(folder, name);
   };
 
+  const reasonFor = async (path: string) => {
+    const input = await readInput(path, recordedTerminal());
+    return 'problem' in input && input.problem.code === 'file-unreadable' ? input.problem.text : input;
+  };
+
   it('gives the text and its size in bytes', async () => {
     expect(await readInput(file('a.json', '{"title": "½"}'), recordedTerminal())).toEqual({
       text: '{"title": "½"}',
@@ -40,21 +45,16 @@ describe('reading the input', () => {
       [join(folder, 'n'.repeat(300)), 'its name is too long'],
       [join(folder, 'loop'), 'its links lead in a circle'],
     ];
-    for (const [path, reason] of wrong)
-      expect(await readInput(path, recordedTerminal())).toEqual({ reason: `${path} cannot be read: ${reason}.` });
+    for (const [path, reason] of wrong) expect(await reasonFor(path)).toBe(`${path} cannot be read: ${reason}.`);
   });
 
   it('says that bytes which are not UTF-8 are no mechanism file', async () => {
     const path = file('picture.png', Uint8Array.of(0x89, 0x50, 0x4e, 0x47, 0xff, 0xfe));
-    expect(await readInput(path, recordedTerminal())).toEqual({
-      reason: `${path} is not text in UTF-8, so it is no mechanism file.`,
-    });
+    expect(await reasonFor(path)).toBe(`${path} is not text in UTF-8, so it is no mechanism file.`);
   });
 
   it('stops reading at 64 MiB', async () => {
     const path = file('large.json', Buffer.alloc(65 * 2 ** 20, ' '));
-    expect(await readInput(path, recordedTerminal())).toEqual({
-      reason: `${path} is larger than 64 MiB, which no mechanism file is.`,
-    });
+    expect(await reasonFor(path)).toBe(`${path} is larger than 64 MiB, which no mechanism file is.`);
   });
 });

@@ -1,0 +1,13 @@
+import { readQuantity } from '../../sim/mechanism/units/quantity.js';
+import { UsageError } from './command.js';
+
+/** The step given with `--step` [s]: a positive time, with its unit or in seconds. */
+export function readStep(typed: string): number {
+  const read = readQuantity(typed);
+  const accepted = 'accepted is a time above 0, such as "0.25 ms" or 0.00025 (seconds)';
+  if (!read.ok) throw new UsageError(`--step: found "${typed}"; ${accepted}.`);
+  const { value, dimension, hasUnit } = read.quantity;
+  const isTime = !hasUnit || dimension.every((exponent, i) => exponent === (i === 2 ? 1 : 0));
+  if (!isTime || !(value > 0)) throw new UsageError(`--step: found "${typed}"; ${accepted}.`);
+  return value;
+}
