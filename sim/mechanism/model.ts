@@ -1,11 +1,16 @@
 import type { Vec } from '../core/vec.js';
 import type { Body } from './kinds/body.js';
 import type { ContactPair } from './kinds/contact.js';
+import type { Criterion } from './kinds/criterion.js';
 import type { Damper } from './kinds/damper.js';
+import type { DemonstrationStep } from './kinds/demonstration.js';
 import type { Drive } from './kinds/drive.js';
 import type { Joint } from './kinds/joint.js';
 import type { Latch } from './kinds/latch.js';
 import type { Load } from './kinds/load.js';
+import type { Sheet } from './kinds/sheet.js';
+import type { Sizing } from './kinds/sizing.js';
+import type { Spread } from './kinds/spread.js';
 import type { Spring } from './kinds/spring.js';
 import type { Station } from './kinds/station.js';
 import type { Track } from './kinds/track.js';
@@ -26,6 +31,9 @@ export interface RunSettings {
 /** A mechanism as the solvers take it: validated, SI, defaults applied, wildcards expanded, wire rates worked out. */
 export interface Mechanism {
   title: string;
+  /** Title block, as typed. */
+  sheet: Sheet;
+  notes: string;
   gravity: Vec;
   bodies: Body[];
   tracks: Track[];
@@ -39,6 +47,11 @@ export interface Mechanism {
   /** Ids of the bodies inside the boundary. */
   system: string[];
   stations: Station[];
+  criteria: Criterion[];
+  /** Tolerance study, where the document has one. */
+  spread?: Spread;
+  sizing?: Sizing;
+  demonstration: DemonstrationStep[];
   run: RunSettings;
   /** Diagonal of the bounding box of everything drawn [m]; the length that tolerances are relative to. */
   extent: number;
