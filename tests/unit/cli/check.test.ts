@@ -1,0 +1,132 @@
+import { mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { checkCommand } from '../../../main/cli/check.js';
+import { runCommandLine } from '../../../main/cli/cli.js';
+import type { CheckResult } from '../../../sim/report/index.js';
+import { fallingDocument, fallingEngine } from './falling.js';
+import { recordedTerminal } from './recorded-terminal.js';
+
+describe('joulewright check', () => {
+  let folder = '';
+  beforeAll(() => (folder = mkdtempSync(join(tmpdir(), 'check-'))));
+  afterAll(() => rmSync(folder, { recursive: true }));
+
+  async function check(document: unknown, options: string[], engine = fallingEngine(), watched = false) {
+    const text = typeof document === 'string' ? document : JSON.stringify(document);
+    const terminal = recordedTerminal(text, watched);
+    const status = await runCommandLine(['check', '-', ...options], [checkCommand(engine)], terminal);
+    return { status, engine, ...terminal.written };
+  }
+  const asked = {
+    ...fallingDocument,
+    criteria: [{ id: 'fast', measure: 'speed', of: 'weight', at: '2', atLeast: '5 m/s' }],
+  };
+
+  it('prints the account for a person, and answers 2 because nothing has audited it', async () => {
+    const { status, out, err } = await check(fallingDocument, []);
+    expect(out).toMatch(/gravity/i);
+    expect(out).toContain('unaudited');
+    expect({ status, err }).toEqual({ status: 2, err: '' });
+  });
+
+  it('prints one JSON object and nothing else with --json', async () => {
+    const { out, err } = await check(fallingDocument, ['--json']);
+    const result = JSON.parse(out) as CheckResult;
+    expect(result).toMatchObject({ format: 'joulewright-result/1', file: '-', title: 'Drop', verdict: 'unaudited' });
+    expect(result.stepper?.ledgers[0]?.entries[0]?.work).toBeCloseTo(9.80665 ** 2, 9);
+    expect(err).toBe('');
+  });
+
+  it('answers 0 with --stepper-only where the ledger closes and there is no criterion', async () => {
+    expect((await check(fallingDocument, ['--stepper-only'])).status).toBe(0);
+  });
+
+  it('answers 1 with --stepper-only where a criterion could not be evaluated, and 2 without', async () => {
+    const result = await check(asked, ['--stepper-only', '--json']);
+    expect((JSON.parse(result.out) as CheckResult).criteria).toMatchObject([{ id: 'fast', value: null, passes: null }]);
+    expect([result.status, (await check(asked, [])).status]).toEqual([1, 2]);
+  });
+
+  it('answers 2 where the ledger does not close, also with --stepper-only', async () => {
+    const { status, out } = await check(fallingDocument, ['--stepper-only', '--json'], fallingEngine(0.99));
+    expect((JSON.parse(out) as CheckResult).findings.map(({ code }) => code)).toContain('ledger-open');
+    expect(status).toBe(2);
+  });
+
+  it('refuses to run what the engine does not simulate, by its finding, with 2', async () => {
+    const finding = {
+      severity: 'error',
+      code: 'not-simulated',
+      text: 'Gears are not simulated yet.',
+      of: ['g'],
+    } as const;
+    const engine = { ...fallingEngine(), unsupported: () => [{ ...finding, of: ['g'] }] };
+    const { status, out } = await check(fallingDocument, ['--stepper-only', '--json'], engine);
+    expect(JSON.parse(out)).toMatchObject({ stepper: null, findings: expect.arrayContaining([finding]) as unknown });
+    expect({ status, steps: engine.steps }).toEqual({ status: 2, steps: [] });
+  });
+
+  it('lists every problem of a wrong file on standard error, with its place, and answers 3', async () => {
+    const wrong = { ...fallingDocument, bodies: [{ ...fallingDocument.bodies[0], mass: '3 mm' }], run: {} };
+    const { status, out, err, engine } = await check(wrong, []);
+    expect(err).toMatch(/^error: \/bodies\/0\/mass: .*3 mm.*\[wrong-dimension\]$/m);
+    expect(err).toMatch(/^error: \/run.*\[missing-key\]$/m);
+    expect({ status, out, steps: engine.steps }).toEqual({ status: 3, out: '', steps: [] });
+  });
+
+  it('still prints one JSON object for a wrong file with --json: the problems as findings, no run', async () => {
+    const { status, out, err } = await check('{"format": "joulewright/1",', ['--json']);
+    const result = JSON.parse(out) as CheckResult;
+    expect(result).toMatchObject({
+      verdict: 'unaudited',
+      stepper: null,
+      findings: [{ code: 'json-syntax', severity: 'error' }],
+    });
+    expect(err).toMatch(/\[json-syntax\]\n$/);
+    expect(status).toBe(3);
+  });
+
+  it('keeps a note about the file among the findings and runs it', async () => {
+    const { out, err } = await check({ ...fallingDocument, colour: 'red' }, ['--json']);
+    expect((JSON.parse(out) as CheckResult).findings).toMatchObject([{ code: 'unknown-key', pointer: '/colour' }, {}]);
+    expect(err).toBe('');
+  });
+
+  it.each([
+    ['0.25 ms', 0.00025],
+    ['0.002', 0.002],
+    ['1/1000 s', 0.001],
+  ])('steps with --step "%s"', async (typed, step) => {
+    expect((await check(fallingDocument, ['--step', typed])).engine.steps).toEqual([step]);
+  });
+
+  it.each(['0', '0 s', 'soon', '3 mm', '30 deg', '', 'NaN'])('refuses --step "%s" with 3', async (typed) => {
+    const { status, err } = await check(fallingDocument, ['--step', typed]);
+    expect(err).toContain(`--step: found "${typed}"; accepted is a time above 0`);
+    expect(status).toBe(3);
+  });
+
+  it('writes result.json and report.txt with --out, into a folder it makes', async () => {
+    const out = join(folder, 'new', 'drop');
+    const printed = await check(fallingDocument, ['--json', '--out', out]);
+    expect(readdirSync(out).sort()).toEqual(['report.txt', 'result.json']);
+    expect(readFileSync(join(out, 'result.json'), 'utf8')).toBe(printed.out);
+    expect(readFileSync(join(out, 'report.txt'), 'utf8')).toBe((await check(fallingDocument, [])).out);
+  });
+
+  it('says why it could not write with --out, and answers 4', async () => {
+    const taken = join(folder, 'taken');
+    writeFileSync(taken, '');
+    const { status, err } = await check(fallingDocument, ['--out', taken]);
+    expect(err).toBe(`${taken} cannot be written to: there is a file of that name.\n`);
+    expect(status).toBe(4);
+  });
+
+  it('shows progress on a watched standard error only', async () => {
+    const { err } = await check(fallingDocument, [], fallingEngine(), true);
+    expect(err).toContain('\r 50 %  0.500 s of 1.000 s');
+    expect(err).toMatch(/\r\u001b\[K$/);
+  });
+});
