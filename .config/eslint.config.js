@@ -37,7 +37,10 @@ const houseTyped = {
   // Index access is typed as present (see tsconfig.base.json), so a check of it looks needless to this rule and is not.
   '@typescript-eslint/no-unnecessary-condition': 'off',
   '@typescript-eslint/consistent-type-definitions': 'off',
-  '@typescript-eslint/no-confusing-void-expression': ['error', { ignoreArrowShorthand: true }],
+  '@typescript-eslint/no-confusing-void-expression': [
+    'error',
+    { ignoreArrowShorthand: true, ignoreVoidReturningFunctions: true },
+  ],
   '@typescript-eslint/unified-signatures': 'off',
 };
 
@@ -52,9 +55,7 @@ export default ts.config(
     files: typed,
     languageOptions: {
       parserOptions: {
-        project: ['sim', 'main', 'renderer', 'tests']
-          .map((layer) => `${layer}/tsconfig.json`)
-          .concat('sim/tsconfig.worker.json'),
+        projectService: true,
         tsconfigRootDir: root,
         extraFileExtensions: ['.svelte'],
       },
@@ -63,6 +64,10 @@ export default ts.config(
   {
     files: ['**/*.svelte', '**/*.svelte.ts'],
     languageOptions: { parserOptions: { parser: ts.parser }, globals: globals.browser },
+  },
+  {
+    files: ['**/*.svelte'],
+    rules: { 'prefer-const': 'off', 'svelte/prefer-const': ['error', { excludedRunes: ['$props', '$derived'] }] },
   },
   { files: ['main/**/*.js', '.config/**'], languageOptions: { globals: globals.node } },
   {

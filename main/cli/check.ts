@@ -42,7 +42,8 @@ export function checkCommand(engine: Engine): Command {
 async function check(engine: Engine, file: string, options: OptionValues, terminal: Terminal) {
   const step = typeof options.step === 'string' ? readStep(options.step) : undefined;
   const { document, mechanism, problems } = await readFile(file, terminal);
-  const given = { file, title: document?.title ?? '', mechanism, problems };
+  const title = typeof document?.title === 'string' ? document.title : '';
+  const given = { file, title, mechanism, problems };
   const result = checkResult({ ...given, ...runWhereSimulated(engine, mechanism, { step }, terminal) });
   const text = checkText(result, { width: terminal.width });
   if (mechanism === null) terminal.err(problems.map(problemLine).join(''));
