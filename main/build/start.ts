@@ -24,7 +24,7 @@ function showInElectron(file: string): string | null {
   const program = electronProgram();
   if (program === null) return 'Electron’s runtime cannot be had here';
   const started = Date.now();
-  const { status } = spawnSync(program, [root, file], { stdio: ['ignore', 'inherit', 'ignore'] });
+  const { status } = spawnSync(program, [root, file], { stdio: 'inherit' });
   return status !== 0 && Date.now() - started < tooSoon ? 'Electron cannot open a window here' : null;
 }
 
