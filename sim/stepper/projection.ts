@@ -1,0 +1,139 @@
+import { TimeStep } from 'planck';
+import type { ContactManager } from './contact/manager.js';
+import { MANIFOLD_CIRCLES, MANIFOLD_FACE_A } from './planck-internals.js';
+import { partInner, type Scene } from './scene.js';
+import type { VelocitySolver } from './solver.js';
+import type { State } from './state.js';
+import type { Touch } from './contact/touch.js';
+
+const MOST_PASSES = 8;
+/** Positions off by less than this are left alone [engine length]. */
+const EXACT = 1e-12;
+const step = new TimeStep();
+
+/**
+ * Brings the end of a step back onto joints and pressed contacts: planck's own position constraints for joints, and the
+ * same in the mass metric for the gaps of contacts that carry force (which may open as well as close). The rule leaves
+ * errors of third order in the step, so these moves are tiny; what they change of the energy is booked.
+ */
+export class Projection {
+  constructor(
+    private readonly scene: Scene,
+    private readonly manager: ContactManager,
+    private readonly solver: VelocitySolver,
+  ) {}
+
+  /** Moves `state` (positions are also in planck, contacts evaluated there). Returns false when nothing moved. */
+  apply(state: State): boolean {
+    const { scene, solver } = this;
+    const gaps = this.pressedGaps();
+    const joints = solver.joints.filter((joint) => !joint.isReleased);
+    if (joints.length === 0 && gaps.every(({ gap }) => Math.abs(gap) <= EXACT)) return false;
+    for (let pass = 0; pass < MOST_PASSES; pass += 1) {
+      for (const joint of joints) joint.reader.joint.solvePositionConstraints(step);
+      for (const gap of gaps) this.close(gap, state);
+      if (joints.length + gaps.length <= 1 || this.moved() <= EXACT) break;
+    }
+    let changed = false;
+    scene.bodies.forEach(({ c_position: { c, a } }, i) => {
+      changed ||= c.x !== state.x[i] || c.y !== state.y[i] || a !== state.a[i];
+    });
+    return changed;
+  }
+
+  private readonly last: number[] = [];
+
+  /** Greatest move since last asked. */
+  private moved(): number {
+    let most = 0;
+    this.scene.bodies.forEach(({ c_position: { c, a } }, i) => {
+      const moves = [c.x - (this.last[3 * i] ?? 0), c.y - (this.last[3 * i + 1] ?? 0), a - (this.last[3 * i + 2] ?? 0)];
+      most = Math.max(most, ...moves.map(Math.abs));
+      [this.last[3 * i], this.last[3 * i + 1], this.last[3 * i + 2]] = [c.x, c.y, a];
+    });
+    return most;
+  }
+
+  private pressedGaps(): PressedGap[] {
+    const gaps: PressedGap[] = [];
+    for (const touch of this.solver.rigid.live) {
+      const { contact } = touch;
+      for (let j = 0; j < contact.v_pointCount; j += 1) {
+        if (contact.v_points[j as 0 | 1].normalImpulse <= 0) continue;
+        const { key } = contact.m_manifold.points[j].id;
+        for (let i = 0; i < touch.count; i += 1) {
+          const candidate = touch.candidates[i as 0 | 1];
+          if (candidate.key === key) gaps.push(pressedGap(touch, i as 0 | 1));
+        }
+      }
+    }
+    return gaps;
+  }
+
+  private close(gap: PressedGap, state: State): void {
+    const { touch, nx, ny, leverA, leverB } = gap;
+    const a = partInner(this.scene, touch.bodyA);
+    const b = partInner(this.scene, touch.bodyB);
+    const moveOf = (part: number, lever: number): number => {
+      if (part < 0) return 0;
+      const { c, a: angle } = this.scene.bodies[part].c_position;
+      return nx * (c.x - state.x[part]) + ny * (c.y - state.y[part]) + lever * (angle - state.a[part]);
+    };
+    const now = gap.gap + moveOf(touch.bodyB, leverB) - moveOf(touch.bodyA, leverA);
+    const k = a.m_invMass + b.m_invMass + a.m_invI * leverA * leverA + b.m_invI * leverB * leverB;
+    if (k === 0) return;
+    const push = -now / k;
+    a.c_position.c.x -= a.m_invMass * push * nx;
+    a.c_position.c.y -= a.m_invMass * push * ny;
+    a.c_position.a -= a.m_invI * push * leverA;
+    b.c_position.c.x += b.m_invMass * push * nx;
+    b.c_position.c.y += b.m_invMass * push * ny;
+    b.c_position.a += b.m_invI * push * leverB;
+  }
+
+  /** Clears what the recorder was shown, before a step is booked. */
+  resetReadings(): void {
+    for (const { reading } of this.manager.pairs) {
+      reading.points = 0;
+      reading.normal = 0;
+      reading.friction = 0;
+      reading.slip = 0;
+    }
+  }
+}
+
+interface PressedGap {
+  touch: Touch;
+  gap: number;
+  nx: number;
+  ny: number;
+  leverA: number;
+  leverB: number;
+}
+
+/** Normal and levers of a candidate at the bodies' present transforms. */
+function pressedGap(touch: Touch, i: 0 | 1): PressedGap {
+  const { m_fixtureA, m_fixtureB } = touch.contact;
+  const bodyA = m_fixtureA.m_body;
+  const bodyB = m_fixtureB.m_body;
+  const candidate = touch.candidates[i];
+  const place = ({ p, q }: typeof bodyA.m_xf, v: { x: number; y: number }): [number, number] => [
+    p.x + q.c * v.x - q.s * v.y,
+    p.y + q.s * v.x + q.c * v.y,
+  ];
+  let [nx, ny] = [0, 0];
+  const onA = touch.type === MANIFOLD_FACE_A || touch.type === MANIFOLD_CIRCLES;
+  const at = place(onA ? bodyB.m_xf : bodyA.m_xf, candidate.local);
+  if (touch.type === MANIFOLD_CIRCLES) {
+    const [ax, ay] = place(bodyA.m_xf, touch.point);
+    const away = Math.hypot(at[0] - ax, at[1] - ay);
+    [nx, ny] = [(at[0] - ax) / away, (at[1] - ay) / away];
+  } else {
+    const { q } = onA ? bodyA.m_xf : bodyB.m_xf;
+    const sign = onA ? 1 : -1;
+    nx = sign * (q.c * touch.normal.x - q.s * touch.normal.y);
+    ny = sign * (q.s * touch.normal.x + q.c * touch.normal.y);
+  }
+  const lever = ({ c_position: { c } }: typeof bodyA): number => (at[0] - c.x) * ny - (at[1] - c.y) * nx;
+  return { touch, gap: candidate.gap, nx, ny, leverA: lever(bodyA), leverB: lever(bodyB) };
+}

@@ -1,0 +1,168 @@
+import type { StationWatch } from '../recording/station-watch.js';
+import { SKIN, type ContactManager } from './contact/manager.js';
+import type { Touch } from './contact/touch.js';
+import type { Friction, Stop } from './element.js';
+import { getVelocities, poseBodies, setVelocities, startSweep, type Scene } from './scene.js';
+import type { SceneMotion } from './motion.js';
+import type { VelocitySolver } from './solver.js';
+import { newState, type State } from './state.js';
+
+/** Sliding slower than this has stopped [engine speed]. */
+export const STILL = 1e-9;
+/** A warm start from a step this much shorter would only carry its rounding. */
+const WARM_LEAST = 1e-3;
+
+/** Something whose value turns negative within a step; values are in units of their own tolerance. */
+export type Passage =
+  | { kind: 'gap'; source: Touch; value: number }
+  | { kind: 'slip'; source: Touch | Friction; value: number }
+  | { kind: 'stop'; source: Stop; value: number }
+  | { kind: 'station'; source: number; value: number };
+
+/** One trial step: the midpoint rule from the present state over a given time, with nothing booked. */
+export class Trial {
+  readonly mean: State;
+  readonly middle: State;
+  readonly next: State;
+  private readonly modes: (1 | -1 | 0)[] = [];
+  private readonly startSlip = new Map<Touch | Friction, number>();
+  private lastHalf = 0;
+  count = 0;
+
+  constructor(
+    private readonly scene: Scene,
+    private readonly manager: ContactManager,
+    private readonly solver: VelocitySolver,
+    private readonly watch: StationWatch,
+    private readonly motion: SceneMotion,
+  ) {
+    const n = scene.ids.length;
+    this.mean = newState(n);
+    this.middle = newState(n);
+    this.next = newState(n);
+  }
+
+  private frictions(): Friction[] {
+    return [...this.solver.joints.flatMap((joint) => joint.frictionRow ?? []), ...this.solver.rolling];
+  }
+
+  /** Remembers which contacts stick and slide, so that every trial starts from the same. */
+  begin(): void {
+    this.modes.length = 0;
+    for (const touch of this.manager.touches) this.modes.push(touch.sliding);
+    for (const friction of this.frictions()) this.modes.push(friction.sliding);
+    this.starters = [...this.manager.touches];
+  }
+  private starters: Touch[] = [];
+
+  private restoreModes(): void {
+    let i = 0;
+    for (const touch of this.starters) touch.sliding = this.modes[i++]!;
+    for (const friction of this.frictions()) friction.sliding = this.modes[i++]!;
+  }
+
+  /** Tries a step of `tau` from `state`: afterwards planck holds the end configuration, and contacts are evaluated there. */
+  run(state: State, tau: number): void {
+    const { scene, mean, middle, next } = this;
+    const half = tau / 2;
+    this.count += 1;
+    this.restoreModes();
+    for (let i = 0; i < scene.ids.length; i += 1) {
+      middle.x[i] = state.x[i] + half * state.vx[i];
+      middle.y[i] = state.y[i] + half * state.vy[i];
+      middle.a[i] = state.a[i] + half * state.w[i];
+    }
+    poseBodies(scene, middle.x, middle.y, middle.a);
+    const ratio = this.lastHalf > 0 && this.lastHalf > WARM_LEAST * half ? half / this.lastHalf : 0;
+    this.solver.solveStep(state, half, ratio);
+    this.lastHalf = half;
+    getVelocities(scene, mean.vx, mean.vy, mean.w);
+    this.noteSlips(state);
+    for (let i = 0; i < scene.ids.length; i += 1) {
+      next.x[i] = state.x[i] + tau * mean.vx[i];
+      next.y[i] = state.y[i] + tau * mean.vy[i];
+      next.a[i] = state.a[i] + tau * mean.w[i];
+      next.vx[i] = 2 * mean.vx[i] - state.vx[i];
+      next.vy[i] = 2 * mean.vy[i] - state.vy[i];
+      next.w[i] = 2 * mean.w[i] - state.w[i];
+    }
+    startSweep(scene, state);
+    poseBodies(scene, next.x, next.y, next.a);
+    this.manager.setTravel((i) => tau * (Math.hypot(mean.vx[i], mean.vy[i]) + Math.abs(mean.w[i]) * scene.reach[i]));
+    this.manager.refresh();
+    setVelocities(scene, next.vx, next.vy, next.w);
+    this.motion.state = next;
+  }
+
+  /** Sliding rates at the step's start, along the frames of its middle. */
+  private noteSlips(state: State): void {
+    this.startSlip.clear();
+    const sliding = this.solver.rigid.live.filter((touch) => touch.sliding !== 0);
+    const frictions = this.frictions().filter((friction) => friction.sliding !== 0);
+    if (sliding.length === 0 && frictions.length === 0) return;
+    setVelocities(this.scene, state.vx, state.vy, state.w);
+    for (const touch of sliding) this.startSlip.set(touch, (touch.sliding * this.solver.rigid.slip(touch)) / STILL);
+    for (const friction of frictions) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
+  }
+
+  /** Everything that is past its zero at the trial's end by more than its tolerance. */
+  passed(): Passage[] {
+    const found: Passage[] = [];
+    for (const source of this.manager.touches) {
+      const value = this.gapValue(source);
+      if (value < -1) found.push({ kind: 'gap', source, value });
+    }
+    for (const joint of this.solver.joints) {
+      for (const source of joint.stops) {
+        const value = stopValue(source, source.gap());
+        if (value < -1) found.push({ kind: 'stop', source, value });
+      }
+    }
+    for (const source of this.startSlip.keys()) {
+      const value = this.slipValue(source);
+      if (value < -1) found.push({ kind: 'slip', source, value });
+    }
+    for (const source of this.watch.smooth()) {
+      const value = this.stationValue(source);
+      if (value < -1) found.push({ kind: 'station', source, value });
+    }
+    return found;
+  }
+
+  /** Value of a passage at the trial's end. */
+  valueOf(passage: Passage): number {
+    if (passage.kind === 'gap') return this.gapValue(passage.source);
+    if (passage.kind === 'slip') return this.slipValue(passage.source);
+    if (passage.kind === 'stop') return stopValue(passage.source, passage.source.gap());
+    return this.stationValue(passage.source);
+  }
+
+  /** Value of a passage at the step's start. */
+  startValueOf(passage: Passage, state: State): number {
+    if (passage.kind === 'gap') return (passage.source.openGap - SKIN / 4) / (SKIN / 4);
+    if (passage.kind === 'slip') return this.startSlip.get(passage.source) ?? Infinity;
+    if (passage.kind === 'stop') return stopValue(passage.source, passage.source.gapAtStart);
+    this.motion.state = state;
+    const value = this.stationValue(passage.source);
+    this.motion.state = this.next;
+    return value;
+  }
+
+  private gapValue(touch: Touch): number {
+    return (this.manager.openGapNow(touch) - SKIN / 4) / (SKIN / 4);
+  }
+
+  private slipValue(source: Touch | Friction): number {
+    const start = this.startSlip.get(source) ?? 0;
+    // One that has only just broken away starts from rest and has nothing to stop.
+    if (start <= 1) return Infinity;
+    const slip = 'contact' in source ? this.solver.rigid.slip(source) : source.slip();
+    return (source.sliding * slip) / STILL;
+  }
+
+  private stationValue(index: number): number {
+    return this.watch.signedValue(index, this.motion) / this.watch.blurOf(index);
+  }
+}
+
+const stopValue = (stop: Stop, gap: number): number => (stop.isClosed ? Infinity : (gap - SKIN / 4) / (SKIN / 4));

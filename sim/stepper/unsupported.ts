@@ -1,0 +1,40 @@
+import type { Mechanism } from '../mechanism/model.js';
+import type { Finding } from '../recording/recording.js';
+
+/** What a document asks of the stepper that it does not simulate: one finding for each element, none when it can run. */
+export function unsupported(mechanism: Mechanism): Finding[] {
+  const findings: Finding[] = [];
+  const refuse = (id: string, what: string): void => {
+    findings.push({
+      severity: 'error',
+      code: 'not-simulated',
+      text: `${what} "${id}" is kept in the file, but the stepper does not simulate it yet.`,
+      of: [id],
+    });
+  };
+  for (const body of mechanism.bodies) if (body.shape.kind === 'cam') refuse(body.id, 'The cam');
+  for (const joint of mechanism.joints) {
+    if (joint.kind !== 'pin' && joint.kind !== 'slide' && joint.kind !== 'weld') refuse(joint.id, `The ${joint.kind}`);
+    if (joint.kind === 'pin') refusePin(joint, mechanism, refuse);
+  }
+  for (const spring of mechanism.springs) if (spring.kind === 'gas') refuse(spring.id, 'The gas spring');
+  for (const drive of mechanism.drives) {
+    if (drive.law.kind !== 'effort') refuse(drive.id, 'The drive (other than a constant torque or force)');
+  }
+  return findings;
+}
+
+/** A particle hangs on its pin as on a massless link: such a link has no friction or stops of its own. */
+function refusePin(
+  pin: Mechanism['joints'][number] & { kind: 'pin' },
+  mechanism: Mechanism,
+  refuse: (id: string, what: string) => void,
+): void {
+  const points = pin.between.filter((id) => {
+    const body = mechanism.bodies.find((candidate) => candidate.id === id);
+    return body?.inertia === 0 && Math.hypot(pin.at[0] - body.at[0], pin.at[1] - body.at[1]) > 1e-6 * mechanism.extent;
+  });
+  if (points.length > 1) refuse(pin.id, 'The pin between two particles away from both');
+  if (points.length === 1 && (pin.friction || pin.limits))
+    refuse(pin.id, 'Friction or limits of the massless link at pin');
+}
