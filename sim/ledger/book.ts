@@ -20,19 +20,25 @@ const ROUNDINGS = 16;
  * A number that is not finite is booked as nil and named in `findings`, never passed on.
  *
  * @param system ids of the bodies inside the boundary; ids that are no bodies of the run are left out
+ * @param options.places false leaves out where things were lost, which takes most of the time
  * @throws RangeError when the rows are not in the recording or not in order
  */
-export function bookLedger(recording: Recording, span: Span, system: readonly string[]): Ledger {
+export function bookLedger(
+  recording: Recording,
+  span: Span,
+  system: readonly string[],
+  options: { places?: boolean } = {},
+): Ledger {
   checkRows(recording, span);
   const inside = new Set(system);
   const bodies = recording.layout.bodies.filter(({ id }) => inside.has(id));
   const guard = new FiniteGuard(span, timeOfRow(recording, span.toRow));
-  const entries = recording.layout.accounts
-    .filter((account) => account.bodies.some((body) => inside.has(body)))
-    .map((account) => bookEntry(recording, account, span, inside, guard));
+  const accounts = recording.layout.accounts.filter((account) => account.bodies.some((body) => inside.has(body)));
+  const entries = accounts.map((account) => bookEntry(recording, account, span, inside, guard));
+  if (options.places ?? true) addPlaces(recording, accounts, entries, span, guard);
   const kinetic = (row: number): number => guard.finite(kineticEnergy(recording, bodies, row), 'kinetic energy', []);
   const [kineticFrom, kineticTo] = [kinetic(span.fromRow), kinetic(span.toRow)];
-  const greatest = greatestKinetic(recording, bodies, span);
+  const greatest = Math.max(kineticFrom, kineticTo, greatestKinetic(recording, bodies, span));
   return {
     from: span.from,
     to: span.to,
@@ -77,14 +83,26 @@ function bookEntry(
     heat: columns.heat === undefined ? 0 : change(columns.heat),
     places: [],
   };
-  entry.places = placesOf(recording, account, entry, span).filter(({ at, work, heat }) => {
-    return guard.areFinite([...at, work, heat], `place of ${name}`, named);
-  });
   if (columns.input !== undefined) entry.input = change(columns.input);
   if (entry.kind === 'stored' && columns.stored !== undefined) {
     entry.stored = { from: read(span.fromRow, columns.stored), to: read(span.toRow, columns.stored) };
   }
   return entry;
+}
+
+function addPlaces(
+  recording: Recording,
+  accounts: readonly AccountSpec[],
+  entries: readonly Entry[],
+  span: Span,
+  guard: FiniteGuard,
+): void {
+  placesOf(recording, accounts, entries, span).forEach((places, i) => {
+    const { account, of } = entries[i];
+    entries[i].places = places.filter(({ at, work, heat }) => {
+      return guard.areFinite([...at, work, heat], `place of ${account}`, of === null ? [] : [of].flat());
+    });
+  });
 }
 
 /** Kinetic energy of several bodies at a row [J]. */
@@ -97,7 +115,8 @@ export function kineticEnergy(recording: Recording, bodies: readonly BodySpec[],
 function greatestKinetic(recording: Recording, bodies: readonly BodySpec[], { fromRow, toRow }: Span): number {
   let greatest = 0;
   for (let row = fromRow; row <= toRow; row++) {
-    const energy = kineticEnergy(recording, bodies, row);
+    let energy = 0;
+    for (const body of bodies) energy += kineticEnergyOf(recording, body, row);
     if (energy > greatest && energy < Infinity) greatest = energy;
   }
   return greatest;

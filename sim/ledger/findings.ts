@@ -48,7 +48,7 @@ export function ledgerFindings(recording: Recording, ledgers: readonly Ledger[],
 function runTurnover(recording: Recording, system: readonly string[]): number {
   if (recording.rowCount === 0) return 0;
   const whole = { from: '', to: '', fromRow: 0, toRow: recording.rowCount - 1 };
-  return bookLedger(recording, whole, system).turnover;
+  return bookLedger(recording, whole, system, { places: false }).turnover;
 }
 
 function openFinding({ from, to, unbooked, turnover }: Ledger): Finding {

@@ -119,9 +119,11 @@ export function workAtTime(recording: Recording, account: AccountSpec, time: num
 }
 
 /** Kinetic energy of one body at a row, ½ m v² + ½ I ω² [J]. */
-export function kineticEnergyOf(recording: Recording, body: BodySpec, row: number): number {
-  const { vx, vy, spin } = bodyAtRow(recording, body, row);
-  return 0.5 * (body.mass * (vx * vx + vy * vy) + body.inertia * spin * spin);
+export function kineticEnergyOf(recording: Recording, { mass, inertia, columns }: BodySpec, row: number): number {
+  const vx = valueAt(recording, row, columns.vx);
+  const vy = valueAt(recording, row, columns.vy);
+  const spin = valueAt(recording, row, columns.spin);
+  return 0.5 * (mass * (vx * vx + vy * vy) + inertia * spin * spin);
 }
 
 /** Energy an account stores at a row [J]; nothing where the account stores none. */
