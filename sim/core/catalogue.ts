@@ -285,6 +285,77 @@ export const catalogue = {
     says: 'Found {found}; accepted is {accepted}.',
     means: 'What varies, or is solved for, is a quantity that the document gives.',
   },
+  'unknown-material': {
+    severity: 'warning',
+    says: 'The material {found} is not in the table of materials; accepted is {accepted}.',
+    means: 'Contacts of the element get nothing from the table.',
+  },
+  'duplicate-materials': {
+    severity: 'error',
+    says: 'The pair {found} is in the table of materials twice; accepted is {accepted}.',
+    means: 'The order of the two names means nothing, so that two entries may contradict each other.',
+  },
+  'compliant-restitution': {
+    severity: 'error',
+    says: 'Found {found}; accepted are {accepted}.',
+    means: 'A compliant contact gives back what its spring stores; a restitution would say the same a second time.',
+  },
+  'static-below-kinetic': {
+    severity: 'warning',
+    says: 'Found coefficients of friction {found}; accepted is {accepted}.',
+    means:
+      'A thing at rest holds at least as well as a sliding one. A contact with only kineticFriction has no static friction.',
+  },
+  'rest-without-contact': {
+    severity: 'warning',
+    says: 'Found {found}, which it does not touch; accepted is {accepted}.',
+    means: 'Only listed contacts touch, so that the body falls through the track.',
+  },
+  'starts-inside': {
+    severity: 'error',
+    says: 'Found {found}; accepted are {accepted}.',
+    means: 'Rigid things cannot be in one place. The solvers would have to throw them apart.',
+  },
+  'starts-behind': {
+    severity: 'warning',
+    says: 'Found {found}; accepted are {accepted}.',
+    means: 'The body starts on the solid side of the track. If it is meant to be there, this is no matter.',
+  },
+  'starts-compressed': {
+    severity: 'note',
+    says: 'The compliant contact starts compressed: {found}.',
+    means: 'Its spring holds energy from the start.',
+  },
+  'parts-apart': {
+    severity: 'error',
+    says: 'The parts do not meet at the pin: {found}; accepted is {accepted}.',
+    means: 'Neither part has material where the pin is.',
+  },
+  'pin-off-part': {
+    severity: 'warning',
+    says: 'Found the pin {found}; accepted is {accepted}.',
+    means: 'The part swings as on a massless arm. Particles and bodies of shape none may be pinned anywhere.',
+  },
+  'after-the-run': {
+    severity: 'warning',
+    says: 'Found {found}; accepted is {accepted}.',
+    means: 'The run ends before, so that the station is not reached.',
+  },
+  'not-a-touch': {
+    severity: 'error',
+    says: 'Found {found}; accepted is {accepted}.',
+    means: 'The measure is that of an impact, and only a touch has one.',
+  },
+  'no-bodies': {
+    severity: 'warning',
+    says: 'The mechanism has {found}; accepted is {accepted}.',
+    means: 'Nothing can move.',
+  },
+  'too-many': {
+    severity: 'error',
+    says: 'Found {found}; accepted is {accepted}.',
+    means: 'The outline has more corners than the solvers can follow in a sensible time.',
+  },
 } as const satisfies Record<string, Entry>;
 
 export type Code = keyof typeof catalogue;

@@ -51,7 +51,7 @@ export const documentFields = record('a mechanism document', {
   notes: optional(text, 'Free text.'),
   gravity: withDefault(
     vector('acceleration', 'm/s^2'),
-    [0, -STANDARD_GRAVITY],
+    [0, `-${STANDARD_GRAVITY} m/s^2`],
     'standard gravity, downwards',
     'Gravity.',
   ),

@@ -6,3 +6,4 @@ export type { Mechanism, RunSettings } from './model.js';
 export { readQuantity, type Quantity, type QuantityResult } from './units/quantity.js';
 export { displayUnit, formatQuantity, inUnit } from './units/format.js';
 export { quantityKinds, type QuantityName } from './units/dimension.js';
+export { documentSchema, documentSchemaText } from './json-schema.js';

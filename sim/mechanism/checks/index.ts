@@ -1,17 +1,24 @@
-import type { DocumentDraft } from '../document.js';
-import type { Reading } from '../fields/reading.js';
-import type { Mechanism } from '../model.js';
-import type { PlacedBody } from '../resolve/body.js';
-import type { TrackPath } from '../../geometry/index.js';
+import { checkDrives } from '../resolve/drive.js';
+import { checkOrder } from '../resolve/station.js';
+import type { Checked } from './checked.js';
+import { checkContacts } from './contacts.js';
+import { checkCriteria } from './criteria.js';
+import { checkJoints } from './joints.js';
+import { checkMaterials } from './materials.js';
+import { checkOverlaps } from './overlaps.js';
+import { checkRun } from './run.js';
+import { checkStations } from './stations.js';
 
-/** What the checks of a whole mechanism look at. */
-export interface Checked {
-  mechanism: Mechanism;
-  draft: DocumentDraft;
-  /** Bodies whose pose is known, also those whose mass is not. */
-  placed: readonly PlacedBody[];
-  paths: ReadonlyMap<string, TrackPath>;
-  reading: Reading;
+/** What no field table can tell: whether the elements of a mechanism make sense together. */
+export function checkMechanism(checked: Checked): void {
+  const { mechanism, places, reading } = checked;
+  checkMaterials(checked);
+  checkContacts(checked);
+  checkOverlaps(checked);
+  checkJoints(checked);
+  checkDrives(mechanism.drives, places, reading);
+  checkOrder(mechanism.stations, places, reading);
+  checkStations(checked);
+  checkCriteria(checked);
+  checkRun(checked);
 }
-
-export function checkMechanism(_checked: Checked): void {}

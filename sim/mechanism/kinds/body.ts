@@ -100,8 +100,13 @@ export const bodyFields = record(
       }),
       'In place of at and angle: laid on a track.',
     ),
-    velocity: withDefault(vector('speed', 'm/s'), [0, 0], 'starts at rest', 'Velocity of the centre of mass.'),
-    spin: withDefault(quantity('spin', 'rpm'), 0, 'starts at rest', 'Speed of rotation, counter-clockwise.'),
+    velocity: withDefault(
+      vector('speed', 'm/s'),
+      ['0 m/s', '0 m/s'],
+      'starts at rest',
+      'Velocity of the centre of mass.',
+    ),
+    spin: withDefault(quantity('spin', 'rpm'), '0 rpm', 'starts at rest', 'Speed of rotation, counter-clockwise.'),
     material: optional(text, 'Name in the table of materials.'),
   },
   {

@@ -6,6 +6,9 @@ import { inside, type Reading } from '../fields/reading.js';
 import { list, position, quantity, record, required, tagged } from '../fields/spec.js';
 import { camFields } from './cam.js';
 
+/** Checks and solvers take time that grows with the square of the corners. */
+const MOST_CORNERS = 1000;
+
 const size = quantity('length', 'mm', { above: 0 });
 
 /** Field table of every shape; what goes wrong in a cam's turn is checked where the cam is resolved. */
@@ -27,6 +30,10 @@ export const shapeFields = tagged('a shape', 'kind', {
 });
 
 function checkPolygon(points: Vec[], place: Place, reading: Reading): void {
+  if (points.length > MOST_CORNERS) {
+    reading.report('too-many', place, { found: `${points.length} points`, accepted: `at most ${MOST_CORNERS}` });
+    return;
+  }
   const repeated = points.findIndex((point, i) => distance(point, points[(i + 1) % points.length]) === 0);
   if (repeated >= 0) {
     const next = (repeated + 1) % points.length;

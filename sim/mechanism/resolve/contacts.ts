@@ -5,6 +5,7 @@ import type { Body } from '../kinds/body.js';
 import type { ContactDocument, ContactPair, MaterialTable } from '../kinds/contact.js';
 import type { Joint } from '../kinds/joint.js';
 import type { Track } from '../kinds/track.js';
+import { formatQuantity } from '../units/format.js';
 import { surfaceOf } from './surface.js';
 
 export interface ContactScene {
@@ -152,7 +153,11 @@ function contactPair(between: [string, string], entry: Entry, scene: ContactScen
   const { value, place } = entry;
   const surface = surfaceOf(between, value, place, scene, reading);
   if (value.restSpeed === undefined) {
-    reading.appliedOnce(`${place.pointer}/restSpeed`, `${scene.restSpeed.value}`, scene.restSpeed.why);
+    reading.appliedOnce(
+      `${place.pointer}/restSpeed`,
+      formatQuantity(scene.restSpeed.value, 'speed'),
+      scene.restSpeed.why,
+    );
   }
   const { stiffness, damping = 0 } = value;
   return {

@@ -3,6 +3,7 @@ import { norm } from '../../core/vec.js';
 import { bodyPoints, diagonal, drawnTrackPoints, pointsIn, trackPoints } from './extent.js';
 import { buildTrack, TOUCHING, type TrackPath } from '../../geometry/index.js';
 import type { DocumentDraft } from '../document.js';
+import { collections, type Collection } from '../fields/ids.js';
 import type { Reading } from '../fields/reading.js';
 import type { Element } from '../fields/spec.js';
 import type { JsonObject } from '../json/value.js';
@@ -52,8 +53,15 @@ export function resolveMechanism(draft: DocumentDraft, tree: JsonObject, reading
     system: systemOf(draft, bodies, reading),
     run: runOf(draft, reading),
   };
-  checkMechanism({ mechanism: whole, draft, placed, paths, reading });
+  checkMechanism({ mechanism: whole, draft, placed, paths, places: placesOf(draft), reading });
   return whole;
+}
+
+/** Where each element stands, by id. */
+function placesOf(draft: DocumentDraft): Map<string, Place> {
+  const lists = Object.keys(collections).map((key) => draft[key as Collection] ?? []);
+  const places = lists.flatMap((elements) => elements.map(({ place }) => place));
+  return new Map(places.flatMap((place) => place.of.map((id): [string, Place] => [id, place])));
 }
 
 const materialOf = (bodies: readonly Body[], id: string): string | undefined =>

@@ -1,7 +1,6 @@
 import type { Place } from '../../core/problem.js';
 import { distance, unit } from '../../core/vec.js';
 import { inside, type Reading } from '../fields/reading.js';
-import type { ContactPair } from '../kinds/contact.js';
 import type { Station, StationDocument, StationWhen } from '../kinds/station.js';
 
 /** A station in SI. */
@@ -65,16 +64,4 @@ function ringFrom(id: string, after: ReadonlyMap<string, string | undefined>): s
     ring.push(next);
   }
   return undefined;
-}
-
-/** A station or criterion about a pair that nothing lets touch will never be. */
-export function checkListed(
-  pair: readonly [string, string],
-  contacts: readonly ContactPair[],
-  place: Place,
-  reading: Reading,
-): void {
-  const [a, b] = pair;
-  if (contacts.some(({ between: [x, y] }) => (x === a && y === b) || (x === b && y === a))) return;
-  reading.report('no-contact', place, { found: pair.join(' and '), accepted: 'a pair that contacts lets touch' });
 }
