@@ -18,7 +18,7 @@ const index = /^index\.ts$/;
 /** @type {Readonly<Record<string, Layer>>} */
 export const layers = {
   core: { path: 'sim/core', layers: [] },
-  mechanism: { path: 'sim/mechanism', layers: ['core', 'geometry'], packages: ['valibot', '@valibot/to-json-schema'] },
+  mechanism: { path: 'sim/mechanism', layers: ['core', 'geometry'] },
   geometry: { path: 'sim/geometry', layers: ['core', 'mechanism'] },
   recording: { path: 'sim/recording', layers: ['core', 'mechanism'] },
   protocol: { path: 'sim/protocol', layers: ['core', 'mechanism', 'recording'] },
