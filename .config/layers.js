@@ -29,7 +29,12 @@ export const layers = {
   criteria: { path: 'sim/criteria', layers: [...model, 'ledger'], faces: [index] },
   spread: { path: 'sim/spread', layers: [...model, 'ledger', 'criteria'], faces: [index] },
   sizing: { path: 'sim/sizing', layers: [...model, 'ledger', 'criteria', 'spread'], faces: [index] },
-  report: { path: 'sim/report', layers: [...model, ...answers], packages: ['valibot'], faces: [index] },
+  report: {
+    path: 'sim/report',
+    layers: [...model, ...answers],
+    packages: ['valibot', '@valibot/to-json-schema'],
+    faces: [index],
+  },
   worker: { path: 'sim/worker.ts', layers: [...model, ...answers, 'report', 'stepper', 'auditor', 'protocol'] },
   ipc: { path: 'main/ipc', layers: [...model], packages: ['node', 'electron'] },
   main: {
