@@ -50,7 +50,7 @@ const DECIMALS = 3;
 
 /** One scale for all pages of a report, so that what one carries forward is printed as the next brings it forward. */
 export function scaleOf(ledgers: readonly BookedLedger[]): PrintScale {
-  const greatest = Math.max(0, ...ledgers.map((ledger) => totalOf(asStored(ledger))));
+  const greatest = Math.max(0, ...ledgers.map((ledger) => totalOf(asStored(ledger), Infinity)));
   const fitting = UNITS.find(({ from }) => greatest >= from);
   const { unit, joules } = greatest > 0 && fitting ? fitting : UNITS[1];
   return { unit, joules, decimals: DECIMALS };
@@ -66,14 +66,14 @@ export function accountPage(ledger: BookedLedger, options: PageOptions = {}): Ac
   const lines = options.view === 'stored' ? asStored(ledger) : asWork(ledger);
   const split = options.split ? splitBySegment(ledger, lines) : lines;
   const digits = scale.joules / 10 ** scale.decimals;
-  const total = roundHalfUp(totalOf(split) / digits);
+  const total = roundHalfUp(totalOf(split, digits) / digits);
   const side = (lines: AccountLine[]): PageLine[] => roundSide(lines, total, scale, digits);
   return {
     from: ledger.from,
     to: ledger.to,
     scale,
-    received: side(split.filter((line) => isReceived(line))),
-    paidOut: side(split.filter((line) => !isReceived(line))),
+    received: side(split.filter((line) => isReceived(line, digits))),
+    paidOut: side(split.filter((line) => !isReceived(line, digits))),
     total: print(total, scale),
   };
 }
@@ -81,15 +81,17 @@ export function accountPage(ledger: BookedLedger, options: PageOptions = {}): Ac
 /** Causes that as a rule give: where they did nothing, they are listed under what was received. */
 const GIVERS: ReadonlySet<AccountName | null> = new Set(['gravity', 'spring', 'drive', 'load'] as const);
 
-function isReceived({ role, account, amount }: AccountLine): boolean {
+/** @param digits the least amount that shows in print [J]: the unbooked is paid out unless it is a gain that shows */
+function isReceived({ role, account, amount }: AccountLine, digits: number): boolean {
   if (role === 'brought') return true;
   if (role === 'carried') return false;
-  return amount > 0 || (amount === 0 && role === 'entry' && GIVERS.has(account));
+  if (role === 'unbooked') return roundHalfUp(amount / digits) > 0;
+  return amount > 0 || (amount === 0 && GIVERS.has(account));
 }
 
 /** What is received in all [J]; what is paid out is the same, as the lines add up to nil. */
-function totalOf(lines: readonly AccountLine[]): number {
-  return compensatedSum(lines.filter((line) => isReceived(line)).map(({ amount }) => amount));
+function totalOf(lines: readonly AccountLine[], digits: number): number {
+  return compensatedSum(lines.filter((line) => isReceived(line, digits)).map(({ amount }) => amount));
 }
 
 /**

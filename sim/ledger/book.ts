@@ -122,15 +122,19 @@ function greatestKinetic(recording: Recording, bodies: readonly BodySpec[], { fr
   return greatest;
 }
 
-/** The recorded sums are rounded to their own size, which may be far above what happens between two late rows. */
+/**
+ * The recorded sums are rounded to their own size, which may be far above what happens between two late rows; so are the
+ * stores, whose differences solvers book as work.
+ */
 function resolution(recording: Recording, span: Span, inside: ReadonlySet<string>, kinetic: number): number {
   const sizes = new CompensatedSum();
   sizes.add(kinetic);
   for (const { bodies, columns } of recording.layout.accounts) {
-    columns.work.forEach((column, i) => {
-      if (!inside.has(bodies[i])) return;
+    const works = columns.work.filter((_, i) => inside.has(bodies[i]));
+    const stored = works.length > 0 && columns.stored !== undefined ? [columns.stored] : [];
+    for (const column of [...works, ...stored]) {
       for (const row of [span.fromRow, span.toRow]) sizes.add(Math.abs(valueAt(recording, row, column)));
-    });
+    }
   }
   return Number.isFinite(sizes.value) ? ROUNDINGS * Number.EPSILON * sizes.value : 0;
 }

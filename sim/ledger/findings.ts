@@ -24,9 +24,13 @@ export function closes({ unbooked, turnover, resolution }: Ledger): boolean {
   return Math.abs(unbooked) <= Math.max(CLOSURE_LIMIT * turnover, resolution);
 }
 
-/** What the method made or lost, Σ|work| of the numerical entries over the turnover; 0 where there is neither. */
-export function numericalShare(ledger: BookedLedger): number {
-  return shareOf(numericalEntries(ledger), ledger.turnover);
+/**
+ * What the method made or lost, Σ|work| of the numerical entries over the turnover; 0 where there is neither.
+ *
+ * @param run turnover of a whole run [J]: a span in which nearly nothing happens is then measured on 1e-6 of it
+ */
+export function numericalShare(ledger: BookedLedger, run = 0): number {
+  return shareOf(numericalEntries(ledger), Math.max(ledger.turnover, QUIET * run));
 }
 
 /**
@@ -36,12 +40,12 @@ export function numericalShare(ledger: BookedLedger): number {
  * @param ledgers of one boundary, as `consecutiveLedgers` books them
  */
 export function ledgerFindings(recording: Recording, ledgers: readonly Ledger[], system: readonly string[]): Finding[] {
-  const quiet = QUIET * runTurnover(recording, system);
+  const run = runTurnover(recording, system);
   return [
     ...recording.findings,
     ...ledgers.flatMap((ledger) => ledger.findings),
     ...ledgers.filter((ledger) => !closes(ledger)).map(openFinding),
-    ...ledgers.flatMap((ledger) => numericalFindings(ledger, quiet, recording)),
+    ...ledgers.flatMap((ledger) => numericalFindings(ledger, run, recording)),
   ];
 }
 
@@ -58,9 +62,9 @@ function openFinding({ from, to, unbooked, turnover }: Ledger): Finding {
   return { severity: 'error', code: 'ledger-open', text, of: [from, to] };
 }
 
-function numericalFindings(ledger: Ledger, quiet: number, recording: Recording): Finding[] {
+function numericalFindings(ledger: Ledger, run: number, recording: Recording): Finding[] {
   const entries = numericalEntries(ledger);
-  const scale = Math.max(ledger.turnover, quiet);
+  const scale = Math.max(ledger.turnover, QUIET * run);
   const above = entries.filter((entry) => shareOf([entry], scale) > NUMERICAL_LIMIT);
   if (above.length > 0) return above.map((entry) => numericalFinding(ledger, [entry], scale, recording));
   return shareOf(entries, scale) > NUMERICAL_LIMIT ? [numericalFinding(ledger, entries, scale, recording)] : [];

@@ -41,7 +41,7 @@ export function checkResult(input: CheckInput): CheckResult {
       ...(input.problems ?? []).map(problemFinding),
       ...(input.findings ?? []),
       ...(mechanism && stepper ? runFindings(mechanism, stepper, ledgers) : []),
-      ...(mechanism ? [...criteria.map(criterionFinding), UNAUDITED] : []),
+      ...(mechanism ? [...criteriaFinding(criteria), UNAUDITED] : []),
     ],
     stepper: mechanism && stepper ? runResult(mechanism, stepper, ledgers) : null,
     auditor: null,
@@ -119,7 +119,10 @@ function notEvaluated(criterion: Criterion): ResultCriterion {
   };
 }
 
-function criterionFinding({ id }: Criterion): Finding {
-  const text = `Criterion ${id} was not evaluated, and counts as failed: criteria are not evaluated yet.`;
-  return { severity: 'warning', code: 'criterion-not-evaluated', text, of: [id] };
+function criteriaFinding(criteria: readonly Criterion[]): Finding[] {
+  if (criteria.length === 0) return [];
+  const of = criteria.map(({ id }) => id);
+  const [noun, were, count] = of.length === 1 ? ['Criterion', 'was', 'counts'] : ['Criteria', 'were', 'count'];
+  const text = `${noun} ${of.join(', ')} ${were} not evaluated, and ${count} as failed: this version evaluates none.`;
+  return [{ severity: 'warning', code: 'criterion-not-evaluated', text, of }];
 }

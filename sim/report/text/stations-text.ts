@@ -30,6 +30,7 @@ function touchColumns(stations: readonly ResultStation[], reached: readonly Reac
   ];
 }
 
+/** A body's speed; its spin where its centre of mass stands still at every station and it turns, as a flywheel does. */
 function speedColumns(
   stations: readonly ResultStation[],
   reached: readonly ReachedStation[],
@@ -37,8 +38,18 @@ function speedColumns(
 ): Column[] {
   const unit: PrintUnit = speedUnit(reached.flatMap(({ bodies: at }) => bodies.map((body) => at[body].speed)));
   return bodies.map((body) => {
-    return column(`${body}, ${unit.symbol}`, stations, ({ bodies: at }) => figure(at[body].speed, unit));
+    const onlyTurns =
+      reached.every((at) => isNil(at.bodies[body].speed, unit)) && reached.some((at) => at.bodies[body].spin !== 0);
+    return onlyTurns
+      ? column(`${body}, rad/s`, stations, (at) => figure(at.bodies[body].spin, RADIANS))
+      : column(`${body}, ${unit.symbol}`, stations, (at) => figure(at.bodies[body].speed, unit));
   });
+}
+
+const RADIANS: PrintUnit = { symbol: 'rad/s', size: 1, decimals: 3 };
+
+function isNil(value: number, unit: PrintUnit): boolean {
+  return Number(figure(Math.abs(value), unit)) === 0;
 }
 
 /** A column of figures; a station that was not reached has dashes. */

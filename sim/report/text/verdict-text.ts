@@ -39,6 +39,7 @@ function unbooked(ledgers: readonly ResultLedger[]): string {
 }
 
 function numerical(ledgers: readonly ResultLedger[]): string {
-  const percent = 100 * Math.max(...ledgers.map((ledger) => numericalShare(ledger)));
+  const run = Math.max(...ledgers.map(({ turnover }) => turnover));
+  const percent = 100 * Math.max(...ledgers.map((ledger) => numericalShare(ledger, run)));
   return percent > 0 && percent < LEAST_PERCENT ? `numerical < ${LEAST_PERCENT} %` : `numerical ${short(percent)} %`;
 }

@@ -79,6 +79,10 @@ describe('an account page', () => {
     expect(accountPage(ledgerOf(1, [], -0.25)).paidOut.map(show)).toEqual(['unbooked 0.250', 'carried 0.750']);
   });
 
+  it('lists what is unbooked under paid out where it does not show in print', () => {
+    expect(accountPage(ledgerOf(1, [], 1e-12)).paidOut.map(show)).toEqual(['unbooked 0.000', 'carried 1.000']);
+  });
+
   it('shows a rounding line where the digits cannot be made to add up', () => {
     const scale = { unit: 'J', joules: 1, decimals: 0 };
     const page = accountPage(ledgerOf(1.4, [], 1.4), { scale });

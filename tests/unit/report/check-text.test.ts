@@ -60,6 +60,24 @@ describe('checkText', () => {
     expect(text).toContain('Error    The account from station 1 to 2 does not close');
   });
 
+  it('gives the spin of a body that only turns', () => {
+    const run = twoCrates();
+    for (const row of [0, 1, 2]) {
+      run.rows[row * run.layout.width + run.layout.bodies[0].columns.vx] = 0;
+      run.rows[row * run.layout.width + run.layout.bodies[0].columns.spin] = 10;
+    }
+    expect(textOf({ stepper: run })).toMatch(/upper, rad\/s {2}lower, m\/s\n─+\n1 +0\.0000 +10\.000 +0\.0000\n/);
+  });
+
+  it('puts several impacts on one segment on one line', () => {
+    const run = twoCrates();
+    const account = { ...run.layout.accounts[3], account: 'impact' as const };
+    const layout = { ...run.layout, accounts: [account] };
+    expect(textOf({ stepper: { ...run, layout } })).toMatch(
+      /Impact lower\/chute {2}chute, slope, 2 times +2666\.7 +333\.3 +7\.500/,
+    );
+  });
+
   it('marks an unaudited run with a dashed box', () => {
     expect(textOf()).toContain('┌╌╌╌┐\n╎   ╎  Unaudited');
   });
