@@ -106,19 +106,23 @@ export function cubicParameter(piece: CubicPiece, s: number): number {
   return v;
 }
 
-/** Writes the point at parameter v into `out` (all but `piece`). */
+/**
+ * Writes the point at parameter v into `out` (all but `piece`). At a cusp, where the speed is nil, the tangent is the one
+ * the path leaves along, and the curvature is given as 0.
+ */
 export function cubicAt(piece: CubicPiece, v: number, out: Foot): void {
   const [x, y] = cubicPoint(piece, v);
-  const dx = slope(piece.bx, v);
-  const dy = slope(piece.by, v);
+  const [dx, dy] = [slope(piece.bx, v), slope(piece.by, v)];
+  const [ddx, ddy] = [bend(piece.bx, v), bend(piece.by, v)];
   const speed = Math.hypot(dx, dy);
   out.s = piece.from + cubicArcLength(piece, v);
   out.x = x;
   out.y = y;
-  out.tx = dx / speed;
-  out.ty = dy / speed;
-  out.curvature = (dx * bend(piece.by, v) - dy * bend(piece.bx, v)) / (speed * speed * speed);
   out.segment = piece.segment;
+  const size = speed === 0 ? Math.hypot(ddx, ddy) : speed;
+  out.tx = (speed === 0 ? ddx : dx) / size;
+  out.ty = (speed === 0 ? ddy : dy) / size;
+  out.curvature = speed === 0 ? 0 : (dx * ddy - dy * ddx) / (speed * speed * speed);
 }
 
 /**

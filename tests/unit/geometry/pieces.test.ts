@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { distance, norm, subtract, type Vec } from '../../../sim/core/vec.js';
-import { buildTrack, newFoot, pointAt, type SmoothRun } from '../../../sim/geometry/index.js';
+import { buildTrack, nearestOnRun, newFoot, pointAt, type SmoothRun } from '../../../sim/geometry/index.js';
 import { arc, bulgeOf, segmentTrack, spline, track } from './support.js';
 
 const only = (drawn: Parameters<typeof buildTrack>[0]): SmoothRun => buildTrack(drawn).runs[0];
@@ -227,6 +227,18 @@ describe('a spline', () => {
     const straight = only(track([0, 0], [spline([1, 0.5], [4, 2])]));
     expect(straight.length).toBeCloseTo(Math.hypot(4, 2), 14);
     expect(Math.abs(pointAt(straight, 1.7).curvature)).toBeLessThan(1e-14);
+  });
+
+  it('that turns back on the spot has a tangent and a finite curvature everywhere', () => {
+    const back = only(track([0, 0], [spline([1, 0], [0.5, 0])]));
+    for (let k = 0; k <= 2000; k += 1) {
+      const foot = pointAt(back, (back.length * k) / 2000);
+      expect(Math.abs(foot.tx)).toBeCloseTo(1, 12);
+      expect(Number.isFinite(foot.curvature)).toBe(true);
+    }
+    const cusp = only(track([0, 0], [spline([1, 0], [0, 0])]));
+    expect(cusp.length).toBeGreaterThanOrEqual(2);
+    expect(Number.isFinite(nearestOnRun(cusp, 2, 0.1, newFoot()).tx)).toBe(true);
   });
 
   it('measures length along itself: equal steps of arc length are equally long', () => {
