@@ -180,6 +180,16 @@ export const catalogue = {
     says: 'Found {found}; accepted are {accepted}.',
     means: 'The table of a segment gives its displacement from its own start to its own end.',
   },
+  'cam-follower': {
+    severity: 'error',
+    says: 'Found {found}; accepted is {accepted}.',
+    means: 'The follower cannot ride on the base circle, so that there is no profile that gives it the motion.',
+  },
+  'cam-at-rest': {
+    severity: 'error',
+    says: 'Found {found}; accepted are {accepted}.',
+    means: 'The profile of a cam depends on how it lies to its follower on the sheet, so that it is placed outright.',
+  },
   'beyond-track': {
     severity: 'error',
     says: 'Found {found}; accepted is {accepted}.',

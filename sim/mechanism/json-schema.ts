@@ -19,9 +19,9 @@ export function documentSchema(): JsonObject {
   );
   return {
     $schema: 'https://json-schema.org/draft/2020-12/schema',
+    ...schemaOf(documentFields),
     title: `Mechanism file, ${FORMAT}`,
     description: 'One mechanism, what to ask of it, and how to run it.',
-    ...schemaOf(documentFields),
     $defs,
   };
 }

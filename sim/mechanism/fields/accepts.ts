@@ -13,7 +13,7 @@ export function accepts(spec: Spec): string {
     case 'ref':
       return refWords(spec.to);
     case 'choice':
-      return `one of ${spec.options.join(', ')}`;
+      return spec.options.length === 1 ? `"${spec.options[0]}"` : `one of ${spec.options.join(', ')}`;
     case 'quantity':
       return `${quantityKinds[spec.kind].says}${rangeWords(spec.range)}${example(spec.kind)}`;
     case 'measure':

@@ -43,6 +43,7 @@ export interface CamSegment {
   table?: Vec[];
 }
 
+/** `along` (a unit vector) and `pivot` [m] are in body coordinates, as drawn. */
 export interface CamFollower {
   kind: 'roller' | 'flat' | 'knife';
   radius: number;

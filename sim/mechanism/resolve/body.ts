@@ -26,21 +26,25 @@ export function resolveBody(
   paths: ReadonlyMap<string, TrackPath>,
   reading: Reading,
 ): ResolvedBody {
-  const shape = draft.shape && resolveShape(draft.shape, inside(place, 'shape'), reading);
-  const pose = shape && poseOf(draft, shape, paths, place, reading);
-  if (!shape || !pose || draft.id === undefined) return { placed: undefined, body: undefined };
-  const placed = { id: draft.id, shape, place, ...pose };
-  return { placed, body: value && completed(value, shape, pose, place, reading) };
+  const outline = draft.shape;
+  const placing = outline && poseOf(draft, outline, paths, place, reading);
+  if (!outline || !placing || draft.id === undefined) return { placed: undefined, body: undefined };
+  const shape = resolveShape(outline, placing, inside(place, 'shape'), reading);
+  if (!shape) return { placed: undefined, body: undefined };
+  const placed = { id: draft.id, shape, place, ...placing };
+  return { placed, body: value && completed(value, shape, placing, place, reading) };
 }
 
-function resolveShape(shape: NonNullable<BodyDocument['shape']>, place: Place, reading: Reading): Shape | undefined {
+type Outline = BodyDocument['shape'];
+
+function resolveShape(shape: Outline, pose: Pose, place: Place, reading: Reading): Shape | undefined {
   if (shape.kind === 'polygon') return { kind: 'polygon', points: counterClockwise(shape.points) };
-  return shape.kind === 'cam' ? resolveCam(shape, place, reading) : shape;
+  return shape.kind === 'cam' ? resolveCam(shape, pose, place, reading) : shape;
 }
 
 function poseOf(
   draft: Partial<BodyDocument>,
-  shape: Shape,
+  shape: Outline,
   paths: ReadonlyMap<string, TrackPath>,
   place: Place,
   reading: Reading,
@@ -52,6 +56,10 @@ function poseOf(
   }
   const path = rest && paths.get(rest.on);
   if (!rest || !path) return undefined;
+  if (shape.kind === 'cam') {
+    reading.report('cam-at-rest', inside(place, 'rest'), { found: 'a cam laid on a track', accepted: 'at and angle' });
+    return undefined;
+  }
   if (rest.at <= path.length) return restPose(shape, path, rest.at);
   const accepted = `at most its length, ${formatQuantity(path.length, 'length')}`;
   const found = `a place ${formatQuantity(rest.at, 'length')} along "${rest.on}"`;

@@ -2,17 +2,22 @@ import { inside, type Reading } from '../fields/reading.js';
 import { inKind } from '../fields/read-quantity.js';
 import type { Measured } from '../fields/spec.js';
 import type { Place } from '../../core/problem.js';
-import type { Vec } from '../../core/vec.js';
+import { norm, rotate, toBody, unit, type Vec } from '../../core/vec.js';
 import type { CamFollower, CamSegment, CamShape } from '../kinds/body.js';
 import type { CamDocument } from '../kinds/cam.js';
+import { formatQuantity } from '../units/format.js';
+import type { Pose } from './rest.js';
 
 type SegmentDocument = CamDocument['segments'][number];
 
 /** A full turn adds up to this much [rad]: degrees in decimals rarely do so to the last bit. */
 const TURN_TOLERANCE = 1e-9;
 
-/** The cam with its rises in SI; undefined, with problems told, where its segments are no full turn. */
-export function resolveCam(cam: CamDocument, place: Place, reading: Reading): CamShape | undefined {
+/**
+ * The cam with its rises in SI and its follower in body coordinates; undefined, with problems told, where its segments
+ * are no full turn or its follower cannot ride on it.
+ */
+export function resolveCam(cam: CamDocument, pose: Pose, place: Place, reading: Reading): CamShape | undefined {
   const { baseRadius, turns } = cam;
   const isSwinging = cam.follower.kind === 'roller' && cam.follower.pivot !== undefined;
   const segments = cam.segments.map((segment, i) =>
@@ -20,14 +25,38 @@ export function resolveCam(cam: CamDocument, place: Place, reading: Reading): Ca
   );
   if (!segments.every((segment) => segment !== undefined)) return undefined;
   if (!checkTurn(segments, inside(place, 'segments'), reading)) return undefined;
-  return { kind: 'cam', baseRadius, turns, segments, follower: resolveFollower(cam.follower) };
+  const follower = resolveFollower(cam.follower, pose);
+  const shape: CamShape = { kind: 'cam', baseRadius, turns, segments, follower };
+  return checkReach(shape, inside(place, 'follower'), reading) ? shape : undefined;
 }
 
-function resolveFollower(follower: CamDocument['follower']): CamFollower {
-  const { kind, offset, along } = follower;
+/** The follower's trace point must be able to lie on its lowest circle. */
+function checkReach({ baseRadius, follower }: CamShape, place: Place, reading: Reading): boolean {
+  const { kind, radius, offset, pivot, arm = 0 } = follower;
+  const circle = baseRadius + radius;
+  const far = pivot ? norm(pivot) : 0;
+  const isReached = pivot ? Math.abs(far - arm) < circle && circle < far + arm : Math.abs(offset) < circle;
+  if (isReached || kind === 'flat') return true;
+  const found = pivot ? 'an arm that does not reach the base circle' : 'an offset beyond the base circle';
+  const accepted = `a trace point that can lie ${formatQuantity(circle, 'length')} from the cam's origin`;
+  reading.report('cam-follower', place, { found, accepted });
+  return false;
+}
+
+/** Directions and places are given on the sheet as drawn. */
+function resolveFollower(follower: CamDocument['follower'], { at, angle }: Pose): CamFollower {
+  const { kind, offset } = follower;
+  const along = unit(rotate(follower.along, -angle));
   if (kind !== 'roller') return { kind, offset, along, radius: 0 };
   const { radius, pivot, arm } = follower;
-  return { kind, offset, along, radius, ...(pivot && { pivot }), ...(arm !== undefined && { arm }) };
+  return {
+    kind,
+    offset,
+    along,
+    radius,
+    ...(pivot && { pivot: toBody(at, angle, pivot) }),
+    ...(arm !== undefined && { arm }),
+  };
 }
 
 function resolveSegment(

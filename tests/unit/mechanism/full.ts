@@ -1,0 +1,392 @@
+import type { JsonObject } from '../../../sim/mechanism/json/value.js';
+
+/** A document that uses every key of the contract once at least, and makes no problem. */
+export const full = (): JsonObject => ({
+  format: 'joulewright/1',
+  title: 'Everything at once',
+  sheet: {
+    drawingNumber: 'T-001',
+    revision: 'A',
+    owner: 'Test shop',
+    date: '1 March',
+    drawnBy: 'A. B.',
+    checkedBy: 'C. D.',
+    approvedBy: 'E. F.',
+    scale: '1:2',
+  },
+  notes: 'Free text.',
+  gravity: [0, '-9.81 m/s^2'],
+  materials: {
+    steel: {
+      nylon: { staticFriction: 0.25, kineticFriction: 0.2, restitution: 0.4, rollingResistance: '0.5 mm' },
+      steel: { friction: 0.15 },
+    },
+  },
+  bodies: [
+    {
+      id: 'block',
+      name: 'Block',
+      shape: { kind: 'box', width: '60 mm', height: '40 mm' },
+      mass: '2 kg',
+      rest: { on: 'ramp', at: '100 mm' },
+      material: 'steel',
+    },
+    {
+      id: 'plate',
+      shape: {
+        kind: 'polygon',
+        points: [
+          [0, 0],
+          ['100 mm', 0],
+          ['100 mm', '20 mm'],
+          [0, '20 mm'],
+        ],
+      },
+      density: '7850 kg/m^3',
+      thickness: '10 mm',
+      inertia: '0.002 kg m^2',
+      centerOfMass: ['50 mm', '10 mm'],
+      at: ['2 m', '1 m'],
+      angle: '30 deg',
+      velocity: ['1 m/s', 0],
+      spin: '60 rpm',
+    },
+    { id: 'rod', shape: { kind: 'bar', length: '200 mm', width: '20 mm' }, mass: '1 kg', at: ['3 m', 0] },
+    { id: 'wheel', shape: { kind: 'disc', radius: '50 mm' }, mass: '1 kg', at: ['3.1 m', 0] },
+    { id: 'bob', shape: { kind: 'particle' }, mass: '1 lb', at: ['4 m', 0] },
+    { id: 'link', shape: { kind: 'none' }, mass: '1 kg', inertia: '0.01 kg m^2', at: ['5 m', 0] },
+    {
+      id: 'cam',
+      shape: {
+        kind: 'cam',
+        baseRadius: '30 mm',
+        segments: [
+          { rise: '10 mm', over: '90 deg', law: 'cycloidal' },
+          { dwell: '90 deg' },
+          {
+            fall: '10 mm',
+            over: '90 deg',
+            law: 'table',
+            table: [
+              [0, 0],
+              ['45 deg', '-5 mm'],
+              ['90 deg', '-10 mm'],
+            ],
+          },
+          { dwell: '90 deg' },
+        ],
+        turns: 'clockwise',
+        follower: { kind: 'roller', radius: '8 mm', offset: '2 mm', along: [0, 1] },
+      },
+      mass: '1 kg',
+      at: ['6 m', 0],
+    },
+    {
+      id: 'swinging-cam',
+      shape: {
+        kind: 'cam',
+        baseRadius: '30 mm',
+        segments: [
+          { rise: '10 deg', over: '120 deg', law: '3-4-5' },
+          { fall: '10 deg', over: '120 deg', law: 'harmonic' },
+          { dwell: '120 deg' },
+        ],
+        follower: { kind: 'roller', radius: '8 mm', pivot: ['7.1 m', 0], arm: '80 mm' },
+      },
+      mass: '1 kg',
+      at: ['7 m', 0],
+    },
+    {
+      id: 'flat-cam',
+      shape: {
+        kind: 'cam',
+        baseRadius: '30 mm',
+        segments: [
+          { rise: '5 mm', over: '180 deg', law: 'modified-sine' },
+          { fall: '5 mm', over: '180 deg', law: 'modified-trapezoid' },
+        ],
+        follower: { kind: 'flat', offset: 0, along: [1, 0] },
+      },
+      mass: '1 kg',
+      at: ['8 m', 0],
+    },
+    {
+      id: 'knife-cam',
+      shape: {
+        kind: 'cam',
+        baseRadius: '30 mm',
+        segments: [
+          { rise: '5 mm', over: '180 deg', law: 'parabolic' },
+          { fall: '5 mm', over: '180 deg', law: '4-5-6-7' },
+        ],
+        follower: { kind: 'knife', offset: 0, along: [0, 1] },
+      },
+      mass: '1 kg',
+      at: ['9 m', 0],
+    },
+  ],
+  tracks: [
+    {
+      id: 'ramp',
+      name: 'Ramp',
+      from: [0, '300 mm'],
+      to: [
+        { to: ['400 mm', 0], name: 'slope' },
+        { to: ['600 mm', 0], bulge: '0.2' },
+        {
+          through: [
+            ['700 mm', '20 mm'],
+            ['800 mm', '10 mm'],
+          ],
+          name: 'wave',
+        },
+      ],
+      side: 'left',
+      material: 'nylon',
+    },
+    {
+      id: 'belt',
+      from: ['1 m', '-1 m'],
+      to: [{ to: ['2 m', '-1 m'] }, { to: ['2 m', '-2 m'] }],
+      closed: true,
+      side: 'left',
+      surfaceSpeed: {
+        curve: [
+          [0, 0],
+          ['1 s', '0.5 m/s'],
+        ],
+      },
+    },
+  ],
+  contacts: [
+    { between: ['block', 'ramp'], restSpeed: '2 mm/s' },
+    { between: ['block', '*'], friction: 0.1 },
+    { between: ['plate', 'belt'], stiffness: '50 N/mm', damping: '10 N s/m', staticFriction: 0.3, kineticFriction: 0.2 },
+    { between: ['wheel', 'belt'], friction: 0.3, restitution: 0.5, rollingResistance: '0.5 mm' },
+  ],
+  joints: [
+    {
+      id: 'pin',
+      kind: 'pin',
+      name: 'Pin',
+      between: ['rod', 'wheel'],
+      at: ['3.1 m', 0],
+      friction: { coefficient: 0.1, radius: '6 mm' },
+      limits: { from: '-30 deg', to: '45 deg', restitution: 0.2 },
+    },
+    { id: 'axle', kind: 'pin', between: ['wheel', 'ground'], at: ['3.1 m', 0], friction: { torque: '0.02 N m' } },
+    {
+      id: 'slide',
+      kind: 'slide',
+      between: ['link', 'ground'],
+      at: ['5 m', 0],
+      axis: [3, 4],
+      friction: { coefficient: 0.1 },
+      limits: { from: '-20 mm', to: '100 mm' },
+    },
+    { id: 'guide', kind: 'slide', between: ['bob', 'ground'], at: ['4 m', 0], axis: [0, 1], friction: { force: '3 N' } },
+    { id: 'weld', kind: 'weld', between: ['cam', 'flat-cam'] },
+    {
+      id: 'rope',
+      kind: 'rope',
+      between: ['bob', 'link'],
+      through: [
+        { of: 'bob', at: ['4 m', 0] },
+        { of: 'ground', at: ['4.5 m', '1 m'] },
+        { of: 'link', at: ['5 m', 0] },
+      ],
+      length: '3 m',
+    },
+    { id: 'gears', kind: 'gear', joints: ['pin', 'axle'], ratio: -2, efficiency: '95 %' },
+    { id: 'rack', kind: 'rack', pin: 'axle', slide: 'slide', radius: '20 mm', efficiency: 0.9 },
+    { id: 'screw', kind: 'screw', pin: 'axle', slide: 'guide', lead: '5 mm', friction: 0.1 },
+  ],
+  springs: [
+    {
+      id: 'spring',
+      kind: 'linear',
+      between: [
+        { of: 'block', at: ['80 mm', '250 mm'] },
+        { of: 'ground', at: [0, '500 mm'] },
+      ],
+      wire: { diameter: '2 mm', meanDiameter: '16 mm', activeCoils: 8, shearModulus: '81500 MPa' },
+      freeLength: '200 mm',
+      acts: 'extension',
+      solidLength: '20 mm',
+      initialTension: '2 N',
+    },
+    {
+      id: 'stop',
+      kind: 'linear',
+      between: [
+        { of: 'plate', at: ['2 m', '1 m'] },
+        { of: 'ground', at: ['2 m', '2 m'] },
+      ],
+      rate: '0.5 lbf/in',
+    },
+    {
+      id: 'hard',
+      kind: 'linear',
+      between: [
+        { of: 'plate', at: ['2 m', '1 m'] },
+        { of: 'ground', at: ['3 m', '2 m'] },
+      ],
+      curve: [
+        ['-10 mm', '-40 N'],
+        [0, 0],
+        ['10 mm', '20 N'],
+      ],
+    },
+    { id: 'coil', kind: 'torsion', between: ['wheel', 'ground'], rate: '2 N m/rad', freeAngle: '-15 deg' },
+    {
+      id: 'gas',
+      kind: 'gas',
+      between: [
+        { of: 'link', at: ['5 m', 0] },
+        { of: 'ground', at: ['5 m', '300 mm'] },
+      ],
+      force: '200 N',
+      stroke: '100 mm',
+      ratio: 1.3,
+    },
+  ],
+  dampers: [
+    {
+      id: 'dashpot',
+      between: [
+        { of: 'bob', at: ['4 m', 0] },
+        { of: 'ground', at: ['4 m', '300 mm'] },
+      ],
+      coefficient: '40 N s^2/m^2',
+      exponent: 2,
+      acts: 'compression',
+    },
+    { id: 'brake', between: ['wheel', 'ground'], coefficient: '0.5 N m s/rad' },
+  ],
+  drives: [
+    { id: 'motor', on: 'axle', motor: { stallTorque: '2 N m', noLoadSpeed: '1500 rpm' }, efficiency: 0.8, until: '2 s' },
+    {
+      id: 'push',
+      on: 'slide',
+      force: {
+        curve: [
+          [0, '10 N'],
+          ['100 mm', '20 N'],
+        ],
+        over: 'position',
+      },
+      from: { station: '1' },
+    },
+    {
+      id: 'pull',
+      on: 'guide',
+      speed: {
+        curve: [
+          [0, 0],
+          ['1 s', '0.2 m/s'],
+        ],
+      },
+      limit: '50 N',
+    },
+    {
+      id: 'help',
+      on: 'pin',
+      torque: {
+        curve: [
+          [0, 0],
+          ['1 s', '2 N m'],
+        ],
+        over: 'time',
+      },
+    },
+  ],
+  loads: [
+    {
+      id: 'wind',
+      on: { of: 'plate', at: ['2 m', '1 m'] },
+      force: ['5 N', 0],
+      follows: 'body',
+      from: '0.1 s',
+      until: { station: '3' },
+    },
+    { id: 'twist', on: 'plate', torque: '0.1 N m' },
+  ],
+  latches: [
+    { id: 'latch', joint: 'weld', releasesAt: { force: '40 N' } },
+    { id: 'pawl', joint: 'pin', releasesAt: { time: '0.2 s' } },
+    { id: 'hook', joint: 'rope', releasesAt: { station: '2' } },
+  ],
+  system: ['block', 'plate', 'rod', 'wheel'],
+  stations: [
+    { id: '1', name: 'Start', when: { start: true } },
+    { id: '2', when: { time: '0.2 s' } },
+    { id: '3', when: { touch: ['plate', 'belt'], count: 2 }, after: '2' },
+    { id: '4', when: { parts: ['block', 'ramp'], count: 1 } },
+    {
+      id: '5',
+      when: {
+        crosses: {
+          point: { of: 'block', at: ['80 mm', '250 mm'] },
+          line: [
+            ['400 mm', 0],
+            ['400 mm', '100 mm'],
+          ],
+        },
+        count: 1,
+      },
+    },
+    { id: '6', when: { turns: { of: 'block', along: [1, 0] } } },
+    { id: '7', when: { rests: 'all' } },
+    { id: '8', when: { sticks: ['block', 'ramp'] } },
+    { id: '9', when: { slips: ['block', 'ramp'] } },
+    { id: '10', when: { angle: { of: 'wheel', passes: '30 deg' } } },
+    { id: '11', when: { end: true } },
+  ],
+  criteria: [
+    { id: 'c1', measure: 'approachSpeed', of: ['plate', 'belt'], at: '3', atMost: '0.8 m/s' },
+    { id: 'c2', measure: 'speed', of: 'block', at: '2', between: ['0.1 m/s', '3 m/s'] },
+    { id: 'c3', measure: 'kineticEnergy', of: 'block', at: '2', atMost: '4 J' },
+    { id: 'c4', measure: 'effectiveMass', of: ['plate', 'belt'], at: '3', atMost: '3 kg' },
+    { id: 'c5', measure: 'peakForce', of: 'spring', from: '1', to: '2', atMost: '150 N' },
+    { id: 'c6', measure: 'travel', of: 'block', from: '1', to: '2', atLeast: '10 mm' },
+    { id: 'c7', measure: 'angle', of: 'wheel', at: '2', atLeast: '10 deg' },
+    { id: 'c8', measure: 'slipSpeed', of: ['block', 'ramp'], at: '2', atMost: '1 m/s' },
+    { id: 'c9', measure: 'heat', of: ['block', 'ramp'], from: '1', to: '2', atMost: '5 J' },
+    { id: 'c10', measure: 'stroke', of: 'slide', from: '1', to: '2', atMost: '80 mm' },
+    { id: 'c11', measure: 'storedEnergy', of: 'spring', at: '2', atLeast: '1 J' },
+    { id: 'c12', measure: 'returnMargin', spring: 'spring', from: '1', to: '2', kineticEnergy: '0.1 J', atLeast: 1.2 },
+    { id: 'c13', measure: 'work', account: { account: 'friction', of: ['block', 'ramp'] }, from: '1', to: '2', atLeast: '-4 J' },
+    { id: 'c14', measure: 'peakPower', of: 'motor', from: '1', to: '2', atMost: '200 W' },
+    { id: 'c15', measure: 'meanPower', of: 'motor', from: '1', to: '2', atMost: '100 W' },
+    { id: 'c16', measure: 'efficiency', useful: ['gravity'], input: ['drive'], from: '1', to: '2', atLeast: '60 %' },
+    { id: 'c17', measure: 'duration', from: '1', to: '2', atMost: '300 ms' },
+    { id: 'c18', measure: 'liftOff', of: ['block', 'ramp'], from: '1', to: '2', atMost: '20 ms' },
+    { id: 'c19', measure: 'reached', at: '2' },
+    { id: 'c20', name: 'Claim', measure: 'claimedEfficiency', of: 'motor', value: '90 %', from: '1', to: '2' },
+  ],
+  spread: {
+    vary: [
+      { at: '/bodies/0/mass', plusMinus: '10 %' },
+      { at: '/springs/1/rate', plusMinus: '0.1 N/mm' },
+      { at: '/contacts/1/friction', from: 0.05, to: 0.2 },
+      { at: '/bodies/1/spin', normal: { sigma: '2 rpm' } },
+      { at: '/tracks/0/from/1', values: ['290 mm', '310 mm'] },
+    ],
+    trials: 500,
+    seed: 7,
+    corners: true,
+  },
+  sizing: { solve: '/springs/1/rate', from: '0.1 N/mm', to: '10 N/mm', for: 'c2', with: 'worst' },
+  demonstration: [
+    {
+      text: 'The block is let go.',
+      view: ['400 mm', '150 mm', '1 m'],
+      from: '0 s',
+      to: { station: '2' },
+      rate: 0.1,
+      show: ['velocity'],
+      mark: ['block', 'spring'],
+    },
+  ],
+  run: { until: { station: '2' }, atMost: '10 s', step: '0.1 ms', tolerance: 1e-9, timeBudget: '60 s' },
+});
