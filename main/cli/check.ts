@@ -6,7 +6,7 @@ import type { Command, OptionValues } from './command.js';
 import { Progress } from './progress.js';
 import { problemLine, readFile } from './read-file.js';
 import { status } from './status.js';
-import { readStep } from './step.js';
+import { checkStep, readStep } from './step.js';
 import type { Terminal } from './terminal.js';
 import { writeFiles } from './write-files.js';
 
@@ -70,6 +70,7 @@ function runWhereSimulated(
   terminal: Terminal,
 ): Pick<CheckInput, 'stepper' | 'findings'> {
   if (mechanism === null) return { stepper: null };
+  if (options.step !== undefined) checkStep(options.step, mechanism.run.atMost);
   const findings = engine.unsupported(mechanism);
   const isRefused = findings.some((finding) => finding.severity === 'error');
   return { findings, stepper: isRefused ? null : runToEnd(engine.startRun(mechanism, options), terminal) };

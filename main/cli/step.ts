@@ -1,5 +1,8 @@
-import { readQuantity } from '../../sim/mechanism/units/quantity.js';
+import { readQuantity } from '../../sim/mechanism/index.js';
 import { UsageError } from './command.js';
+
+/** More steps than anybody waits for; a step too small to move the clock at all never ends. */
+const mostSteps = 1e8;
 
 /** The step given with `--step` [s]: a positive time, with its unit or in seconds. */
 export function readStep(typed: string): number {
@@ -10,4 +13,13 @@ export function readStep(typed: string): number {
   const isTime = !hasUnit || dimension.every((exponent, i) => exponent === (i === 2 ? 1 : 0));
   if (!isTime || !(value > 0)) throw new UsageError(`--step: found "${typed}"; ${accepted}.`);
   return value;
+}
+
+/** Refuses a step that a run of `duration` cannot be made of. @param step [s] @param duration at most [s] */
+export function checkStep(step: number, duration: number): void {
+  if (step <= duration && duration / step <= mostSteps) return;
+  const least = Number((duration / mostSteps).toPrecision(3));
+  throw new UsageError(
+    `--step: found ${step} s; accepted, for a run of ${duration} s, is ${least} s to ${duration} s.`,
+  );
 }

@@ -108,6 +108,12 @@ describe('joulewright check', () => {
     expect(status).toBe(3);
   });
 
+  it.each(['2 s', '1e-9 s', '1e-300'])('refuses --step "%s" for a run of one second with 3', async (typed) => {
+    const { status, err, engine } = await check(fallingDocument, ['--step', typed]);
+    expect(err).toContain('accepted, for a run of 1 s, is 1e-8 s to 1 s.');
+    expect({ status, steps: engine.steps }).toEqual({ status: 3, steps: [] });
+  });
+
   it('writes result.json and report.txt with --out, into a folder it makes', async () => {
     const out = join(folder, 'new', 'drop');
     const printed = await check(fallingDocument, ['--json', '--out', out]);
