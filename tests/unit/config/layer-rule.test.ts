@@ -14,7 +14,7 @@ function complaints(file: string, code: string): string[] {
   const config = {
     files: ['**/*.ts'],
     plugins: { layers: { rules: { direction: layerRule } } },
-    languageOptions: { parser: ts.parser as Linter.Parser },
+    languageOptions: { parser: ts.parser },
     rules: { 'layers/direction': 'error' },
   } satisfies Linter.Config;
   return linter.verify(code, config, resolve(root, file)).map((each) => each.message);
@@ -89,7 +89,7 @@ describe('the layer rule of lint', () => {
 
   it('points one way: no layer but the pair mechanism and geometry can reach itself through others', () => {
     const reach = (from: string, seen = new Set<string>()): Set<string> => {
-      for (const next of layers[from]!.layers) if (!seen.has(next)) reach(next, seen.add(next));
+      for (const next of layers[from].layers) if (!seen.has(next)) reach(next, seen.add(next));
       return seen;
     };
     const looping = Object.keys(layers).filter((name) => reach(name).has(name));
