@@ -32,7 +32,7 @@ export function energyStrip(recording: Recording, system: readonly string[], sam
   const rows = sampleRows(recording, samples);
   const over = (value: (row: number) => number) => Float64Array.from(rows, value);
   const mine = recording.layout.accounts.filter(({ bodies }) => bodies.some((body) => system.includes(body)));
-  const frictions = mine.filter(({ account }) => isFriction(account));
+  const frictions = recording.layout.accounts.filter(({ account }) => isFriction(account));
   const look = (spec: AccountSpec) => patternOf(spec.account, frictions.indexOf(spec));
   const losses = mine
     .filter(({ account, columns }) => account !== 'numerical' && columns.stored === undefined)

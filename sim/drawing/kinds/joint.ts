@@ -1,29 +1,38 @@
-import { mix, rotate, unit, type Vec } from '../../core/vec.js';
+import { mix, rotate, toBody, unit, type Vec } from '../../core/vec.js';
 import type { Gear, Joint, Pin, Rack, Rope, Screw, Slide, Weld } from '../../mechanism/kinds/joint.js';
 import { dashed, dashes } from '../dash.js';
 import type { DrawingContext, Figure } from '../figure.js';
 import { circle, inkFill, line, lineWidth, outline, paperFill, polygon, segments } from '../operations.js';
 import type { DrawOperation } from '../operations.js';
 import { toPaper } from '../paper.js';
-import { carried, turned, type Poses } from '../pose.js';
+import { carried, type Poses } from '../pose.js';
 import { groundMark } from './ground-mark.js';
 import { linkLine } from './link.js';
 import { zigzag } from './spring.js';
 
-type Symbols = { [K in Joint['kind']]: (joint: Extract<Joint, { kind: K }>, context: DrawingContext) => Draw };
-type Draw = (now: Poses) => DrawOperation[];
+type Symbols = { [K in Joint['kind']]: (joint: Extract<Joint, { kind: K }>, context: DrawingContext) => Drawn[] };
+type Live = (now: Poses) => DrawOperation[];
+/** Rigid on a part, or drawn anew for each instant. */
+type Drawn = { on: string; operations: DrawOperation[] } | { live: Live };
 
 const symbols: Symbols = { pin, slide, weld, rope, gear, rack, screw };
 
 /** A joint in the symbols of kinematic diagrams (ISO 3952). */
 export function jointFigures(joint: Joint, context: DrawingContext): Figure[] {
-  const live = (symbols[joint.kind] as (joint: Joint, context: DrawingContext) => Draw)(joint, context);
-  return [{ key: `joint:${joint.id}`, layer: 'joints', item: joint.id, live }];
+  const drawn = (symbols[joint.kind] as (joint: Joint, context: DrawingContext) => Drawn[])(joint, context);
+  return drawn.map((each, i) => ({ key: `joint:${joint.id}:${i}`, layer: 'joints', item: joint.id, ...each }));
 }
 
-function pin({ between, at }: Pin, { drawn, pixels }: DrawingContext): Draw {
-  const moving = between[0] === 'ground' ? between[1] : between[0];
-  return (now) => pinSymbol(toPaper(carried({ of: moving, at }, drawn, now), pixels), between.includes('ground'));
+/** A sheet point in the paper coordinates of the part it is fixed to. */
+function localTo(of: string, point: Vec, { drawn, pixels }: DrawingContext): Vec {
+  const pose = drawn.get(of);
+  return toPaper(pose ? toBody(pose.at, pose.angle, point) : point, pixels);
+}
+
+function pin({ between, at }: Pin, context: DrawingContext): Drawn[] {
+  const grounded = between.includes('ground');
+  const on = grounded ? 'ground' : between[0];
+  return [{ on, operations: pinSymbol(localTo(on, at, context), grounded) }];
 }
 
 /** A small circle; on the fixed frame it stands on a bracket. */
@@ -35,58 +44,60 @@ export function pinSymbol(at: Vec, grounded: boolean): DrawOperation[] {
   return [...groundMark(foot, [0, 1], 14), polygon(bracket, { stroke: outline, fill: paperFill }), ring];
 }
 
-function slide({ between, at, axis, limits }: Slide, { drawn, pixels }: DrawingContext): Draw {
+/** The box moves with the first part, the guide is fixed in the second. */
+function slide({ between, at, axis, limits }: Slide, context: DrawingContext): Drawn[] {
   const [first, second] = between;
-  const box = 20 / pixels;
-  // The guide is fixed in the second part: as long as the travel its stops allow, or three boxes either way.
+  const box = 20 / context.pixels;
+  // The guide is as long as the travel its stops allow, or three boxes either way.
   const [low, high] = [(limits?.from ?? -2.5 * box) - box / 2, (limits?.to ?? 2.5 * box) + box / 2];
-  const guide = (s: number): Vec => [at[0] + axis[0] * s, at[1] + axis[1] * s];
-  return (now) => {
-    const ends = [guide(low), guide(high)].map((end) => toPaper(carried({ of: second, at: end }, drawn, now), pixels));
-    const middle = toPaper(carried({ of: first, at }, drawn, now), pixels);
-    const along = rotate(axis, turned(second, drawn, now));
-    return slideSymbol(middle, [along[0], -along[1]], ends as [Vec, Vec], second === 'ground');
-  };
+  const guide = (s: number): Vec => localTo(second, [at[0] + axis[0] * s, at[1] + axis[1] * s], context);
+  const along = rotate(axis, -(context.drawn.get(first)?.angle ?? 0));
+  return [
+    { on: second, operations: guideSymbol(guide(low), guide(high), second === 'ground') },
+    { on: first, operations: slideBox(localTo(first, at, context), [along[0], -along[1]]) },
+  ];
 }
 
-/** A box on a line; the line is hatched at its ends where it is the fixed frame. */
-export function slideSymbol(at: Vec, along: Vec, guide: readonly [Vec, Vec], grounded: boolean): DrawOperation[] {
+/** The line a slide runs on, hatched at its ends where it belongs to the fixed frame. */
+export function guideSymbol(from: Vec, to: Vec, grounded: boolean): DrawOperation[] {
+  const along = unit([to[0] - from[0], to[1] - from[1]]);
+  const marks = grounded ? [...groundMark(from, [-along[0], -along[1]], 7), ...groundMark(to, along, 7)] : [];
+  return [line([from, to]), ...marks];
+}
+
+export function slideBox(at: Vec, along: Vec): DrawOperation[] {
   const [ux, uy] = unit(along);
   const corner = (s: number, n: number): Vec => [at[0] + ux * s - uy * n, at[1] + uy * s + ux * n];
   const box = [corner(-10, -5), corner(10, -5), corner(10, 5), corner(-10, 5)];
-  const marks = grounded ? [...groundMark(guide[0], [-ux, -uy], 7), ...groundMark(guide[1], [ux, uy], 7)] : [];
-  return [line(guide), ...marks, polygon(box, { stroke: outline, fill: paperFill }), line([corner(-10, 0), corner(10, 0)])];
+  return [polygon(box, { stroke: outline, fill: paperFill }), line([corner(-10, 0), corner(10, 0)])];
 }
 
-function weld({ between }: Weld, { drawn, pixels }: DrawingContext): Draw {
-  const at = (id: string) => drawn.get(id)?.at;
-  const [a, b] = [at(between[0]), at(between[1])];
-  const seam = a && b ? mix(a, b, 0.5) : (a ?? b ?? ([0, 0] as const));
+function weld({ between }: Weld, context: DrawingContext): Drawn[] {
+  const [a, b] = between.map((id) => context.drawn.get(id)?.at);
   const on = between[0] === 'ground' ? between[1] : between[0];
-  return (now) => {
-    const [x, y] = toPaper(carried({ of: on, at: seam }, drawn, now), pixels);
-    const bead: Vec[] = [
-      [x - 6, y + 5],
-      [x + 6, y + 5],
-      [x, y - 6],
-    ];
-    return [polygon(bead, { fill: inkFill })];
-  };
+  const [x, y] = localTo(on, a && b ? mix(a, b, 0.5) : (a ?? b ?? [0, 0]), context);
+  const bead: Vec[] = [
+    [x - 6, y + 5],
+    [x + 6, y + 5],
+    [x, y - 6],
+  ];
+  return [{ on, operations: [polygon(bead, { fill: inkFill })] }];
 }
 
-function rope({ through }: Rope, { drawn, pixels }: DrawingContext): Draw {
-  return (now) => {
+function rope({ through }: Rope, { drawn, pixels }: DrawingContext): Drawn[] {
+  const live: Live = (now) => {
     const points = through.map((point) => toPaper(carried(point, drawn, now), pixels));
     const pulleys = points.slice(1, -1).map((at) => circle(at, 6, { stroke: outline, fill: paperFill }));
     return [...pulleys, line(points, { width: lineWidth.outline * 0.75, tone: 'ink' })];
   };
+  return [{ live }];
 }
 
 /** Pitch circles in chain line: the radii share the distance of the pins as the ratio has it. */
-function gear({ joints, ratio }: Gear, context: DrawingContext): Draw {
+function gear({ joints, ratio }: Gear, context: DrawingContext): Drawn[] {
   const [p, q] = joints.map((id) => pinPlace(id, context));
-  if (!p || !q) return () => [];
-  return (now) => {
+  if (!p || !q) return [];
+  const live: Live = (now) => {
     const [a, b] = [p(now), q(now)];
     const distance = Math.hypot(b[0] - a[0], b[1] - a[1]);
     // |turn of q| = |ratio| |turn of p|, so the radii are as |ratio| : 1; an internal pair has the pins on one side.
@@ -95,15 +106,16 @@ function gear({ joints, ratio }: Gear, context: DrawingContext): Draw {
     const [ra, rb] = share === 0 ? [0, 0] : [(distance * k) / share, distance / share];
     return [pitchCircle(a, ra), pitchCircle(b, rb)];
   };
+  return [{ live }];
 }
 
-function rack({ pin, slide, radius }: Rack, context: DrawingContext): Draw {
+function rack({ pin, slide, radius }: Rack, context: DrawingContext): Drawn[] {
   const place = pinPlace(pin, context);
   const guide = context.mechanism.joints.find((joint) => joint.id === slide);
-  if (!place || guide?.kind !== 'slide') return () => [];
+  if (!place || guide?.kind !== 'slide') return [];
   const r = Math.abs(radius) * context.pixels;
   const [ux, uy] = [guide.axis[0], -guide.axis[1]];
-  return (now) => {
+  const live: Live = (now) => {
     const [x, y] = place(now);
     // Travel along the axis is + for a counter-clockwise turn: the pitch line passes on the right of the axis.
     const side = radius > 0 ? 1 : -1;
@@ -114,18 +126,20 @@ function rack({ pin, slide, radius }: Rack, context: DrawingContext): Draw {
     ];
     return [pitchCircle([x, y], r), segments(dashed(pitch, dashes.chain))];
   };
+  return [{ live }];
 }
 
-function screw({ slide }: Screw, context: DrawingContext): Draw {
+function screw({ slide }: Screw, context: DrawingContext): Drawn[] {
   const guide = context.mechanism.joints.find((joint) => joint.id === slide);
-  if (guide?.kind !== 'slide') return () => [];
+  if (guide?.kind !== 'slide') return [];
   const { at, axis, between } = guide;
   const half = 24 / context.pixels;
   const ends = [-half, half].map((s): Vec => [at[0] + axis[0] * s, at[1] + axis[1] * s]);
-  return (now) => {
+  const live: Live = (now) => {
     const [a, b] = ends.map((end) => toPaper(carried({ of: between[1], at: end }, context.drawn, now), context.pixels));
     return zigzag(linkLine(a, b), 8, 4);
   };
+  return [{ live }];
 }
 
 function pitchCircle(at: Vec, radius: number): DrawOperation {

@@ -1,0 +1,66 @@
+import type { Mechanism } from '../../sim/mechanism/model.js';
+import type { Recording } from '../../sim/recording/recording.js';
+import { CancelledError, FrameJoiner, type Client, type SolverMethods } from '../../sim/protocol/index.js';
+
+export type RunStatus = 'none' | 'running' | 'ended' | 'halted' | 'failed';
+
+/** The run on the paper: recorded by the solver's thread, row by row. */
+export class Run {
+  number = $state(0);
+  status = $state<RunStatus>('none');
+  recording = $state.raw<Recording | null>(null);
+  /** Time of the last row [s], and when the run is to end [s]. */
+  time = $state(0);
+  duration = $state(0);
+  startedAt = $state('');
+  failure = $state('');
+  private halting: (() => void) | null = null;
+
+  /** Runs a mechanism; resolves when the run has ended in whichever way. */
+  async start(client: Client<SolverMethods>, mechanism: Mechanism): Promise<void> {
+    if (this.status === 'running') return;
+    this.clear();
+    this.number += 1;
+    this.status = 'running';
+    this.startedAt = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+    const joiner = new FrameJoiner();
+    const task = client.request('run', { mechanism }, (frame) => {
+      joiner.add(frame);
+      this.duration = joiner.duration;
+      if (frame.part === 'rows') this.time = frame.time;
+      this.recording = joiner.recording();
+    });
+    this.halting = () => task.cancel();
+    try {
+      const closing = await task.result;
+      joiner.close(closing);
+      this.recording = joiner.recording();
+      this.failure = closing.end === 'notSimulated' ? (closing.findings[0]?.text ?? 'It cannot be simulated yet.') : '';
+      this.status = closing.end === 'notSimulated' ? 'failed' : 'ended';
+    } catch (error) {
+      this.status = error instanceof CancelledError ? 'halted' : 'failed';
+      this.failure = error instanceof Error && !(error instanceof CancelledError) ? error.message : '';
+    } finally {
+      this.halting = null;
+    }
+  }
+
+  halt(): void {
+    this.halting?.();
+  }
+
+  clear(): void {
+    this.recording = null;
+    this.status = 'none';
+    this.time = 0;
+    this.duration = 0;
+    this.failure = '';
+  }
+
+  /** Forgets the runs of another document. */
+  reset(): void {
+    this.halt();
+    this.clear();
+    this.number = 0;
+  }
+}

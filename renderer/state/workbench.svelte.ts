@@ -1,0 +1,106 @@
+import type { Vec } from '../../sim/core/vec.js';
+import { zoneAt } from '../frame/geometry.js';
+import { CancelledError } from '../../sim/protocol/index.js';
+import { Account } from './account.svelte.js';
+import { Drawing } from './drawing.svelte.js';
+import { Playback } from './playback.svelte.js';
+import { Run } from './run.svelte.js';
+import type { Solver } from './solver.js';
+import { View } from './view.svelte.js';
+
+/** A file's name and text, from wherever it was opened. */
+export interface OpenedFile {
+  name: string;
+  text: string;
+  size: number;
+}
+
+/** Where the sheet's origin is in the window [px], and the scale of the drawing. */
+export interface LaidDrawing {
+  left: number;
+  top: number;
+  pixels: number;
+  scale: string;
+}
+
+/** Everything the window holds; commands and panels work on it. */
+export class Workbench {
+  readonly view = new View();
+  readonly drawing = new Drawing();
+  readonly run = new Run();
+  readonly playback = new Playback(() => this.run.recording);
+  readonly account = new Account(
+    () => (this.run.status === 'running' ? null : this.run.recording),
+    () => this.drawing.mechanism,
+  );
+  /** Something that went wrong outside the document: one sentence. */
+  trouble = $state('');
+  private solver: Solver;
+
+  /** How the drawing lies in the window, once it does: set by the sheet's field. */
+  laid = $state.raw<LaidDrawing | null>(null);
+  /** The body that readings, trail and speed are of: the picked one, else the first inside the boundary. */
+  readonly subject: string | null = $derived.by(() => {
+    const { mechanism, picked } = this.drawing;
+    const isBody = mechanism?.bodies.some(({ id }) => id === picked);
+    return (isBody ? picked : (mechanism?.system[0] ?? mechanism?.bodies[0]?.id)) ?? null;
+  });
+
+  constructor(private readonly startSolver: () => Solver) {
+    this.solver = startSolver();
+  }
+
+  /** Reads a file and puts it on the sheet; errors of the file are shown with their places. */
+  async open({ name, text, size }: OpenedFile): Promise<void> {
+    this.run.reset();
+    this.playback.feeding = false;
+    this.playback.time = 0;
+    this.account.reset();
+    this.trouble = '';
+    this.drawing.reading = true;
+    try {
+      this.drawing.show(name, await this.solver.client.request('read', { text, fileSize: size }).result);
+      this.view.sheet = 1;
+    } catch (error) {
+      this.troubled(error);
+    } finally {
+      this.drawing.reading = false;
+    }
+  }
+
+  /** Runs what is on the sheet, and turns to the run's sheet. */
+  async start(): Promise<void> {
+    const { mechanism } = this.drawing;
+    if (!mechanism) return;
+    this.view.sheet = 2;
+    this.playback.feeding = false;
+    this.playback.time = 0;
+    this.account.pickedKey = null;
+    await this.run.start(this.solver.client, mechanism);
+    if (this.run.status === 'failed') this.troubled(new Error(this.run.failure));
+    this.playback.fitRate();
+    this.playback.moveTo(this.account.page?.to.time ?? 0);
+  }
+
+  goToStation(mark: string): void {
+    const station = this.account.stationMarked(mark);
+    if (!station) return;
+    this.playback.feeding = false;
+    this.playback.moveTo(station.time);
+  }
+
+  /** Zone of the sheet that a point [m] lies in, such as "C5". */
+  readonly zoneOf = ([x, y]: Vec): string | null => {
+    if (!this.laid) return null;
+    const { left, top, pixels } = this.laid;
+    return zoneAt(this.view.geometry, left + x * pixels, top - y * pixels);
+  };
+
+  /** A solver that broke down is replaced, so that the next request has one. */
+  private troubled(error: unknown): void {
+    if (error instanceof CancelledError) return;
+    this.trouble = error instanceof Error ? error.message : String(error);
+    this.solver.stop();
+    this.solver = this.startSolver();
+  }
+}

@@ -1,0 +1,11 @@
+import type { ReadResult } from '../mechanism/index.js';
+import type { Mechanism } from '../mechanism/model.js';
+import type { RunClosing, RunFrame } from './frames.js';
+
+/** What the window asks of the solver's thread. */
+export type SolverMethods = {
+  /** Reads a mechanism file: the document and mechanism, every problem, every default. */
+  read: { payload: { text: string; fileSize: number }; progress: never; result: ReadResult };
+  /** Runs a mechanism to its end; the run comes along in frames. */
+  run: { payload: { mechanism: Mechanism; step?: number }; progress: RunFrame; result: RunClosing };
+};
