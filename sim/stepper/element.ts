@@ -1,3 +1,5 @@
+import type { AxisRow } from './axis-row.js';
+
 /**
  * What an element of the mechanism does in a step. The step is the midpoint rule: all of it is evaluated at the mid-step
  * configuration, impulses act over half the step, and the rest of the step mirrors them (v⁺ = 2v̄ − v⁻). The work of a
@@ -16,56 +18,44 @@ export interface Element {
   arrive?(): void;
   /** The bodies were moved onto their constraints: books the change of stored energy as numerical. */
   project?(): void;
-  /** Friction of its own, which can stop sliding within a step. */
-  friction?: Friction;
-  /** Hard stops of its own. */
-  stops?: readonly Stop[];
 }
 
-/** Dry friction of a joint or of rolling, as the event finder sees it. */
+/** Dry friction other than that of planck's contacts: of joints, of rolling, of compliant contacts. */
 export interface Friction {
   /** Sign of the sliding; 0 while it sticks. */
   sliding: 1 | -1 | 0;
+  /** Indices of its parts, and the row its impulse acts along (on B, against it on A). */
+  readonly a: number;
+  readonly b: number;
+  readonly row: AxisRow;
+  /** Its static and kinetic coefficients differ. */
+  readonly drops: boolean;
+  /** It sticks, with friction to spare, by the last solve. */
+  isHolding(): boolean;
   /** Sliding rate with the velocities now in planck's bodies. */
   slip(): number;
-  /** Holds the rate at zero, without bound (used to bring a sticking joint exactly to rest). */
-  hold(): void;
+  /** The way it breaks loose when the last solve reached its bound, else 0. */
+  breakaway(): 1 | -1 | 0;
   /** Readies `hold` at the present configuration. */
   aim(): void;
-  /** Impulse of `hold`, for the books. */
-  readonly rows: readonly HeldRow[];
-}
-
-/** A row whose impulse can be booked: on B along its axis, on A against it. */
-export interface HeldRow {
-  impulse: number;
-  rateA(): number;
-  rateB(): number;
+  /** Brings the sliding rate to nil, without bound. */
+  hold(): void;
 }
 
 /** A one-sided hard stop of a joint. */
 export interface Stop {
-  /** Distance or angle left before it, at the bodies' present transforms; negative beyond. */
-  gap(): number;
   isClosed: boolean;
   /** Its gap at the start of the step. */
   gapAtStart: number;
   readonly restitution: number;
-  readonly row: {
-    impulse: number;
-    mass: number;
-    rate(): number;
-    rateA(): number;
-    rateB(): number;
-    start(impulse: number): void;
-    solve(target: number, least: number, most: number): void;
-  };
-  /** Aims the row at the present configuration, so that its rate is that of `gap`. */
-  aim(): void;
+  readonly row: AxisRow;
   readonly joint: string;
-  /** Indices of its parts, and where its impact work is booked. */
   readonly a: number;
   readonly b: number;
+  /** Distance or angle left before it, at the bodies' present transforms; negative beyond. */
+  gap(): number;
+  /** Aims the row at the present configuration, so that its rate is that of `gap`. */
+  aim(): void;
   bookImpact(onA: number, onB: number): void;
-  bookStep(half: number): void;
+  bookStep(): void;
 }

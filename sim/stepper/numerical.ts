@@ -6,15 +6,13 @@ export const CAUSES: readonly NumericalCause[] = [
   'solver-residual',
   'velocity-projection',
   'position-projection',
-  'clamp',
 ];
 
 /**
  * What the method itself makes or loses, by cause and by body, each measured where it arises:
  * - force-truncation: a spring's impulse over a step against the change of its stored energy;
  * - solver-residual: a constraint that should do no work, times what is left of its rate after the iterations;
- * - velocity-projection and position-projection: bringing the state back onto joints and closed contacts;
- * - clamp: an impact that was made plastic because events came too thick.
+ * - velocity-projection and position-projection: bringing the state back onto joints and closed contacts.
  */
 export class NumericalBooks {
   private readonly byCause: Map<NumericalCause, BookedAccount>;
@@ -24,7 +22,7 @@ export class NumericalBooks {
   }
 
   add(cause: NumericalCause, body: number, work: number): void {
-    if (body >= 0) this.byCause.get(cause)!.work(body, work);
+    if (body >= 0) this.byCause.get(cause)?.work(body, work);
   }
 
   /** Shares work between the bodies of a pair; all of it goes to the one that moves. */

@@ -1,6 +1,7 @@
 import { TimeStep } from 'planck';
 import type { ContactManager } from './contact/manager.js';
-import { MANIFOLD_CIRCLES, MANIFOLD_FACE_A } from './planck-internals.js';
+import { frameOf } from './contact/soft-point.js';
+import type { BodyInternals } from './planck-internals.js';
 import { partInner, type Scene } from './scene.js';
 import type { VelocitySolver } from './solver.js';
 import type { State } from './state.js';
@@ -112,28 +113,10 @@ interface PressedGap {
 }
 
 /** Normal and levers of a candidate at the bodies' present transforms. */
-function pressedGap(touch: Touch, i: 0 | 1): PressedGap {
+function pressedGap(touch: Touch, index: 0 | 1): PressedGap {
+  const { nx, ny, x, y } = frameOf(touch, index);
+  const lever = ({ c_position: { c } }: BodyInternals): number => (x - c.x) * ny - (y - c.y) * nx;
   const { m_fixtureA, m_fixtureB } = touch.contact;
-  const bodyA = m_fixtureA.m_body;
-  const bodyB = m_fixtureB.m_body;
-  const candidate = touch.candidates[i];
-  const place = ({ p, q }: typeof bodyA.m_xf, v: { x: number; y: number }): [number, number] => [
-    p.x + q.c * v.x - q.s * v.y,
-    p.y + q.s * v.x + q.c * v.y,
-  ];
-  let [nx, ny] = [0, 0];
-  const onA = touch.type === MANIFOLD_FACE_A || touch.type === MANIFOLD_CIRCLES;
-  const at = place(onA ? bodyB.m_xf : bodyA.m_xf, candidate.local);
-  if (touch.type === MANIFOLD_CIRCLES) {
-    const [ax, ay] = place(bodyA.m_xf, touch.point);
-    const away = Math.hypot(at[0] - ax, at[1] - ay);
-    [nx, ny] = [(at[0] - ax) / away, (at[1] - ay) / away];
-  } else {
-    const { q } = onA ? bodyA.m_xf : bodyB.m_xf;
-    const sign = onA ? 1 : -1;
-    nx = sign * (q.c * touch.normal.x - q.s * touch.normal.y);
-    ny = sign * (q.s * touch.normal.x + q.c * touch.normal.y);
-  }
-  const lever = ({ c_position: { c } }: typeof bodyA): number => (at[0] - c.x) * ny - (at[1] - c.y) * nx;
-  return { touch, gap: candidate.gap, nx, ny, leverA: lever(bodyA), leverB: lever(bodyB) };
+  const { gap } = touch.candidates[index];
+  return { touch, gap, nx, ny, leverA: lever(m_fixtureA.m_body), leverB: lever(m_fixtureB.m_body) };
 }

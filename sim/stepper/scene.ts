@@ -146,12 +146,12 @@ export function anchorAt(scene: Scene, anchor: Anchor, out: { x: number; y: numb
 /** Moves planck's bodies to positions (and keeps where they came from, for the broad phase). */
 export function poseBodies(scene: Scene, x: Float64Array, y: Float64Array, a: Float64Array): void {
   scene.bodies.forEach((body, i) => {
-    body.m_sweep.c.x = x[i]!;
-    body.m_sweep.c.y = y[i]!;
-    body.m_sweep.a = a[i]!;
-    body.c_position.c.x = x[i]!;
-    body.c_position.c.y = y[i]!;
-    body.c_position.a = a[i]!;
+    body.m_sweep.c.x = x[i];
+    body.m_sweep.c.y = y[i];
+    body.m_sweep.a = a[i];
+    body.c_position.c.x = x[i];
+    body.c_position.c.y = y[i];
+    body.c_position.a = a[i];
     body.synchronizeTransform();
   });
 }
@@ -159,18 +159,18 @@ export function poseBodies(scene: Scene, x: Float64Array, y: Float64Array, a: Fl
 /** Remembers the present positions as the start of a sweep. */
 export function startSweep(scene: Scene, { x, y, a }: State): void {
   scene.bodies.forEach((body, i) => {
-    body.m_sweep.c0.x = x[i]!;
-    body.m_sweep.c0.y = y[i]!;
-    body.m_sweep.a0 = a[i]!;
+    body.m_sweep.c0.x = x[i];
+    body.m_sweep.c0.y = y[i];
+    body.m_sweep.a0 = a[i];
   });
 }
 
 /** Writes velocities into planck's solver. */
 export function setVelocities(scene: Scene, vx: Float64Array, vy: Float64Array, w: Float64Array): void {
   scene.bodies.forEach(({ c_velocity }, i) => {
-    c_velocity.v.x = vx[i]!;
-    c_velocity.v.y = vy[i]!;
-    c_velocity.w = w[i]!;
+    c_velocity.v.x = vx[i];
+    c_velocity.v.y = vy[i];
+    c_velocity.w = w[i];
   });
 }
 

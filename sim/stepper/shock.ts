@@ -1,10 +1,11 @@
 import { TimeStep } from 'planck';
+import type { AxisRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
-import { addWork, type Pair } from './contact/pair.js';
+import type { Pair } from './contact/pair.js';
 import type { Touch } from './contact/touch.js';
-import type { Stop } from './element.js';
-import type { JointElement } from './kinds/joint.js';
+import type { Friction, Stop } from './element.js';
 import { getVelocities, setVelocities, type Scene } from './scene.js';
+import { ShockBooks } from './shock-books.js';
 import type { VelocitySolver } from './solver.js';
 import { newState, type State } from './state.js';
 
@@ -25,6 +26,8 @@ export interface Strike {
   y: number;
   approachSpeed: number;
   effectiveMass: number;
+  /** Rows of its points, for the effective mass through the joints. */
+  rows?: AxisRow[];
 }
 
 interface Struck {
@@ -45,8 +48,11 @@ step.dtRatio = 0;
 export class Shock {
   private readonly before: State;
   private readonly last: State;
+  private readonly books: ShockBooks;
   /** Keys that were closed before the present configuration was settled, by touch. */
   private readonly known = new Map<Touch, [number, number]>();
+  /** Friction that sticks, to be held in a correction. */
+  private holding: Friction[] = [];
   /** What part of the restitution the last impact was left with, so that it added no energy. */
   restitutionCut = 1;
   /** Takes every impact as plastic. */
@@ -59,6 +65,7 @@ export class Shock {
   ) {
     this.before = newState(scene.ids.length);
     this.last = newState(scene.ids.length);
+    this.books = new ShockBooks(scene, manager, solver);
   }
 
   /** Remembers which points are closed, before the manager settles the new configuration. */
@@ -67,7 +74,7 @@ export class Shock {
     for (const touch of this.manager.touches) this.known.set(touch, [touch.closed[0], touch.closed[1]]);
   }
 
-  private wasClosed(touch: Touch, key: number): boolean {
+  wasClosed(touch: Touch, key: number): boolean {
     const keys = this.known.get(touch);
     return keys !== undefined && (keys[0] === key || keys[1] === key);
   }
@@ -119,11 +126,6 @@ export class Shock {
     for (const joint of this.solver.joints) {
       if (joint.isReleased) continue;
       if (joint.reader.violation() > OFF) isOff = true;
-      const { frictionRow } = joint;
-      if (frictionRow?.sliding === 0) {
-        frictionRow.aim();
-        if (Math.abs(frictionRow.slip()) > OFF) isOff = true;
-      }
       for (const stop of joint.stops) {
         if (!stop.isClosed) continue;
         const approach = -stop.row.rate();
@@ -133,6 +135,8 @@ export class Shock {
         } else if (approach > OFF) isOff = true;
       }
     }
+    this.holding = this.solver.frictions().filter((friction) => friction.isHolding());
+    isOff ||= this.holding.some((friction) => Math.abs(friction.slip()) > OFF);
     return { struck, stops, isImpact, isOff };
   }
 
@@ -174,12 +178,12 @@ export class Shock {
     for (const touch of this.solver.rigid.live) {
       touch.contact.v_friction = touch.sliding === 0 && this.isRubbing(touch) ? UNBOUNDED : 0;
     }
-    for (const joint of this.solver.joints) if (joint.frictionRow?.sliding === 0) joint.frictionRow.aim();
+    for (const friction of this.holding) friction.aim();
     this.iterate(() => {
-      for (const joint of this.solver.joints) if (joint.frictionRow?.sliding === 0) joint.frictionRow.hold();
+      for (const friction of this.holding) friction.hold();
     });
     getVelocities(this.scene, state.vx, state.vy, state.w);
-    this.book(false);
+    this.books.book(this.before, false, this.holding);
   }
 
   private impact(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): void {
@@ -204,7 +208,7 @@ export class Shock {
     }
     this.restitutionCut = this.isPlastic ? 1 : cut;
     getVelocities(this.scene, state.vx, state.vy, state.w);
-    this.book(true);
+    this.books.book(this.before, true, []);
   }
 
   private solveImpact(struck: Struck[], stops: { stop: Stop; approach: number }[], cut: number): void {
@@ -220,9 +224,8 @@ export class Shock {
   }
 
   private iterate(more: () => void, targets?: Map<Stop, number>): void {
-    const { scene, solver, last } = this;
-    getVelocities(scene, last.vx, last.vy, last.w);
-    for (let i = 0; i < MOST_SWEEPS; i += 1) {
+    const { solver } = this;
+    this.repeat(() => {
       for (const joint of solver.joints) {
         if (joint.isReleased) continue;
         joint.reader.joint.solveVelocityConstraints(step);
@@ -230,6 +233,15 @@ export class Shock {
       }
       more();
       solver.rigid.solve();
+    });
+  }
+
+  /** Repeats a sweep until the velocities stand still. */
+  private repeat(sweep: () => void): void {
+    const { scene, solver, last } = this;
+    getVelocities(scene, last.vx, last.vy, last.w);
+    for (let i = 0; i < MOST_SWEEPS; i += 1) {
+      sweep();
       solver.sweeps += 1;
       if (this.change() <= CONVERGED) return;
     }
@@ -249,62 +261,6 @@ export class Shock {
       w[i] = c_velocity.w;
     });
     return change / most;
-  }
-
-  /** Books every impulse at the mean of the velocities before (kept) and after (in planck). */
-  private book(isImpact: boolean): void {
-    const { scene, before, last, solver } = this;
-    getVelocities(scene, last.vx, last.vy, last.w);
-    scene.bodies.forEach(({ c_velocity }, i) => {
-      c_velocity.v.x = (c_velocity.v.x + before.vx[i]) / 2;
-      c_velocity.v.y = (c_velocity.v.y + before.vy[i]) / 2;
-      c_velocity.w = (c_velocity.w + before.w[i]) / 2;
-    });
-    for (const joint of solver.joints) if (!joint.isReleased) this.bookJoint(joint, isImpact);
-    for (const touch of solver.rigid.live) this.bookTouch(touch, isImpact);
-    setVelocities(scene, last.vx, last.vy, last.w);
-  }
-
-  private bookJoint(joint: JointElement, isImpact: boolean): void {
-    joint.bookShock(isImpact ? 'solver-residual' : 'velocity-projection');
-    for (const stop of joint.stops) {
-      const { row } = stop;
-      if (!stop.isClosed || row.impulse === 0) continue;
-      const onA = -row.impulse * row.rateA();
-      const onB = row.impulse * row.rateB();
-      if (isImpact) stop.bookImpact(onA, onB);
-      else joint.bookWork(onA, onB, 'velocity-projection');
-    }
-    const { frictionRow } = joint;
-    if (isImpact || frictionRow?.sliding !== 0) return;
-    const { row } = frictionRow;
-    this.scene.numerical.add('velocity-projection', joint.a, -row.impulse * row.rateA());
-    this.scene.numerical.add('velocity-projection', joint.b, row.impulse * row.rateB());
-  }
-
-  private bookTouch(touch: Touch, isImpact: boolean): void {
-    const pair = this.manager.pairs[touch.pair];
-    const { contact, bodyA, bodyB } = touch;
-    for (let j = 0; j < contact.v_pointCount; j += 1) {
-      const point = contact.v_points[j as 0 | 1];
-      const { normalImpulse: n, tangentImpulse: t } = point;
-      if (n === 0 && t === 0) continue;
-      const { nA, nB, tA, tB } = this.solver.rigid.rate(touch, point);
-      const onA = -(n * nA + t * tA);
-      const onB = n * nB + t * tB;
-      if (!isImpact) {
-        this.scene.numerical.add('velocity-projection', bodyA, onA);
-        this.scene.numerical.add('velocity-projection', bodyB, onB);
-        continue;
-      }
-      addWork(pair.impact, pair, bodyA, onA, onB);
-      // What a belt puts in through its surface is no loss of the impact.
-      pair.impact.heat(-(onA + onB) + t * contact.m_tangentSpeed);
-      const { c } = this.scene.bodies[bodyB].c_position;
-      pair.reading.x = c.x + point.rB.x;
-      pair.reading.y = c.y + point.rB.y;
-      pair.reading.segment = touch.segment;
-    }
   }
 
   private kinetic({ vx, vy, w }: State): number {
@@ -338,9 +294,40 @@ export class Shock {
       strikes.push({ pair, ...place, approachSpeed: worst.approach, effectiveMass: this.effectiveMass(items, state) });
     }
     for (const { stop, approach } of stops) {
-      strikes.push({ stop, x: 0, y: 0, approachSpeed: approach, effectiveMass: stop.row.mass });
+      strikes.push({ stop, x: 0, y: 0, approachSpeed: approach, effectiveMass: this.massThroughJoints([stop.row]) });
     }
     return strikes;
+  }
+
+  /** Compliant pairs that touch now: no impulse, only the events' figures. */
+  softStrikes(state: State): Strike[] {
+    if (this.solver.soft.isEmpty) return [];
+    setVelocities(this.scene, state.vx, state.vy, state.w);
+    const strikes = this.solver.soft.strikes((touch, key) => this.wasClosed(touch, key));
+    for (const strike of strikes) strike.effectiveMass = this.massThroughJoints(strike.rows ?? []);
+    return strikes;
+  }
+
+  /** Effective mass of rows that share an impulse equally, joints holding. */
+  private massThroughJoints(rows: readonly AxisRow[]): number {
+    const { scene, solver } = this;
+    for (const { c_velocity } of scene.bodies) {
+      c_velocity.v.x = 0;
+      c_velocity.v.y = 0;
+      c_velocity.w = 0;
+    }
+    const joints = solver.joints.filter((joint) => !joint.isReleased);
+    for (const { reader } of joints) {
+      reader.save();
+      reader.joint.initVelocityConstraints(step);
+    }
+    for (const row of rows) row.apply(1 / rows.length);
+    this.repeat(() => {
+      for (const { reader } of joints) reader.joint.solveVelocityConstraints(step);
+    });
+    const rate = rows.reduce((sum, row) => sum + row.rate(), 0) / rows.length;
+    for (const { reader } of joints) reader.restore();
+    return rate > 0 ? 1 / rate : Infinity;
   }
 
   /**

@@ -2,7 +2,7 @@ import type { ContactManager } from './contact/manager.js';
 import { RigidContacts } from './contact/rigid.js';
 import { RollingResistance } from './contact/rolling.js';
 import { SoftContacts } from './contact/soft.js';
-import type { Element } from './element.js';
+import type { Element, Friction } from './element.js';
 import type { JointElement } from './kinds/joint.js';
 import { getVelocities, setVelocities, type Scene } from './scene.js';
 import { newState, type State } from './state.js';
@@ -138,13 +138,19 @@ export class VelocitySolver {
     return change / most;
   }
 
+  /** All dry friction but that of planck's contacts. */
+  frictions(): Friction[] {
+    return [...this.joints.flatMap(({ frictionRow }) => frictionRow ?? []), ...this.rolling, ...this.soft.live];
+  }
+
+  /** Lets go what has reached its static limit; true when the solve must be done again with a lower coefficient. */
   private breakAway(): boolean {
-    const again = this.rigid.breakAway();
-    for (const joint of this.joints) {
-      const row = joint.frictionRow;
-      if (row?.sliding === 0) row.sliding = row.breakaway();
+    let again = this.rigid.breakAway();
+    for (const friction of this.frictions()) {
+      if (friction.sliding !== 0) continue;
+      friction.sliding = friction.breakaway();
+      again ||= friction.sliding !== 0 && friction.drops;
     }
-    for (const rolling of this.rolling) if (rolling.sliding === 0) rolling.sliding = rolling.breakaway();
     return again;
   }
 }

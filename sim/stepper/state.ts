@@ -26,7 +26,7 @@ export function copyState(from: State, to: State): void {
   to.w.set(from.w);
 }
 
-export function isFinite_(state: State): boolean {
+export function isFiniteState(state: State): boolean {
   let sum = 0;
   for (const column of [state.x, state.y, state.a, state.vx, state.vy, state.w]) {
     for (const value of column) sum += value - value;

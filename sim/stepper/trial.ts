@@ -24,7 +24,7 @@ export class Trial {
   readonly mean: State;
   readonly middle: State;
   readonly next: State;
-  private readonly modes: (1 | -1 | 0)[] = [];
+  private readonly modes = new Map<Touch | Friction, 1 | -1 | 0>();
   private readonly startSlip = new Map<Touch | Friction, number>();
   private lastHalf = 0;
   count = 0;
@@ -42,23 +42,15 @@ export class Trial {
     this.next = newState(n);
   }
 
-  private frictions(): Friction[] {
-    return [...this.solver.joints.flatMap((joint) => joint.frictionRow ?? []), ...this.solver.rolling];
-  }
-
   /** Remembers which contacts stick and slide, so that every trial starts from the same. */
   begin(): void {
-    this.modes.length = 0;
-    for (const touch of this.manager.touches) this.modes.push(touch.sliding);
-    for (const friction of this.frictions()) this.modes.push(friction.sliding);
-    this.starters = [...this.manager.touches];
+    this.modes.clear();
+    for (const touch of this.manager.touches) this.modes.set(touch, touch.sliding);
+    for (const friction of this.solver.frictions()) this.modes.set(friction, friction.sliding);
   }
-  private starters: Touch[] = [];
 
   private restoreModes(): void {
-    let i = 0;
-    for (const touch of this.starters) touch.sliding = this.modes[i++]!;
-    for (const friction of this.frictions()) friction.sliding = this.modes[i++]!;
+    for (const [item, sliding] of this.modes) item.sliding = sliding;
   }
 
   /** Tries a step of `tau` from `state`: afterwards planck holds the end configuration, and contacts are evaluated there. */
@@ -98,7 +90,7 @@ export class Trial {
   private noteSlips(state: State): void {
     this.startSlip.clear();
     const sliding = this.solver.rigid.live.filter((touch) => touch.sliding !== 0);
-    const frictions = this.frictions().filter((friction) => friction.sliding !== 0);
+    const frictions = this.solver.frictions().filter((friction) => friction.sliding !== 0);
     if (sliding.length === 0 && frictions.length === 0) return;
     setVelocities(this.scene, state.vx, state.vy, state.w);
     for (const touch of sliding) this.startSlip.set(touch, (touch.sliding * this.solver.rigid.slip(touch)) / STILL);

@@ -86,8 +86,9 @@ function chainFrom(
 /** Runs met going from `seed` in a direction, each with its sense relative to the seed's own. */
 function walk(seed: SmoothRun, direction: 1 | -1, used: ReadonlySet<SmoothRun>): [SmoothRun, 1 | -1][] {
   const met: [SmoothRun, 1 | -1][] = [];
+  const isMet = (candidate: SmoothRun): boolean => met.some(([run]) => run === candidate);
   let link: RunLink | null = direction === 1 ? seed.next : seed.previous;
-  while (link && !used.has(link.run) && !met.some(([run]) => run === link!.run)) {
+  while (link && !used.has(link.run) && !isMet(link.run)) {
     const entersAtStart = link.at === 'start';
     const along: 1 | -1 = entersAtStart === (direction === 1) ? 1 : -1;
     met.push([link.run, along]);

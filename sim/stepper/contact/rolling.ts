@@ -1,5 +1,5 @@
 import { AxisRow } from '../axis-row.js';
-import type { Friction, HeldRow } from '../element.js';
+import type { Friction } from '../element.js';
 import { partInner, type Scene } from '../scene.js';
 import { addWork, type Pair } from './pair.js';
 
@@ -8,7 +8,9 @@ const SATURATED = 1 - 1e-9;
 /** Rolling resistance of a pair: a torque against the relative turn, at most lever arm × normal force. */
 export class RollingResistance implements Friction {
   sliding: 1 | -1 | 0 = 0;
-  readonly rows: readonly HeldRow[];
+  readonly a: number;
+  readonly b: number;
+  readonly drops = false;
   readonly row: AxisRow;
   private most = 0;
 
@@ -17,7 +19,8 @@ export class RollingResistance implements Friction {
     readonly pair: Pair,
   ) {
     this.row = new AxisRow(partInner(scene, pair.low), partInner(scene, pair.high));
-    this.rows = [this.row];
+    this.a = pair.low;
+    this.b = pair.high;
     this.row.turn();
   }
 
@@ -47,6 +50,10 @@ export class RollingResistance implements Friction {
     scene.numerical.share('solver-residual', pair.low, pair.high, left);
     const half = pair.low >= 0 && pair.high >= 0 ? left / 2 : left;
     addWork(pair.rolling, pair, pair.low, pair.low >= 0 ? onA - half : onA, onB - half);
+  }
+
+  isHolding(): boolean {
+    return this.sliding === 0 && Math.abs(this.row.impulse) < this.most * SATURATED;
   }
 
   breakaway(): 1 | -1 | 0 {

@@ -35,19 +35,19 @@ export class DamperElement implements Element {
     const booked = scene.books.open('damper', damper.id, PairAccount.bodies(scene.ids, a, b), { heat: true });
     this.account = new PairAccount(booked, a, b);
     this.row.turn();
-    this.drawnLength = this.ends ? this.length() : 0;
+    this.drawnLength = this.ends ? this.lengthOf(this.ends) : 0;
   }
 
-  private length(): number {
-    anchorAt(this.scene, this.ends![0], this.pointA);
-    anchorAt(this.scene, this.ends![1], this.pointB);
+  private lengthOf([from, to]: [Anchor, Anchor]): number {
+    anchorAt(this.scene, from, this.pointA);
+    anchorAt(this.scene, to, this.pointB);
     return Math.hypot(this.pointB.x - this.pointA.x, this.pointB.y - this.pointA.y);
   }
 
   prepare(half: number, ratio: number): void {
     this.half = half;
     if (this.ends) {
-      const length = this.length();
+      const length = this.lengthOf(this.ends);
       const scale = length > 0 ? 1 / length : 0;
       const { pointA: p, pointB: q } = this;
       this.row.aimBetween((q.x - p.x) * scale, (q.y - p.y) * scale, p.x, p.y, q.x, q.y);
@@ -83,7 +83,7 @@ export class DamperElement implements Element {
   reading(): LinkReading {
     const { length, force, energy } = this.scene.scale;
     if (!this.ends) return { deflection: 0, force: this.lastForce * energy };
-    return { deflection: (this.length() - this.drawnLength) * length, force: this.lastForce * force };
+    return { deflection: (this.lengthOf(this.ends) - this.drawnLength) * length, force: this.lastForce * force };
   }
 }
 

@@ -1,6 +1,6 @@
 import { AxisRow } from '../axis-row.js';
 import { PairAccount } from '../books.js';
-import type { Friction, HeldRow } from '../element.js';
+import type { Friction } from '../element.js';
 import { partInner, type Scene } from '../scene.js';
 import type { JointElement, JointImpulse } from './joint.js';
 
@@ -14,7 +14,9 @@ const reaction: JointImpulse = { px: 0, py: 0, momentA: 0, momentB: 0 };
 export class JointFriction implements Friction {
   sliding: 1 | -1 | 0 = 0;
   readonly row: AxisRow;
-  readonly rows: readonly HeldRow[];
+  readonly a: number;
+  readonly b: number;
+  readonly drops = false;
   private readonly account: PairAccount;
   private half = 0;
 
@@ -24,7 +26,8 @@ export class JointFriction implements Friction {
     private readonly bound: FrictionBound,
   ) {
     this.row = new AxisRow(partInner(scene, joint.a), partInner(scene, joint.b));
-    this.rows = [this.row];
+    this.a = joint.a;
+    this.b = joint.b;
     const bodies = PairAccount.bodies(scene.ids, joint.a, joint.b);
     const booked = scene.books.open('joint-friction', joint.id, bodies, { heat: true });
     this.account = new PairAccount(booked, joint.a, joint.b);
@@ -64,7 +67,10 @@ export class JointFriction implements Friction {
     this.account.add(onA - half, onB - half);
   }
 
-  /** The breakaway direction when the last solve saturated, else 0. */
+  isHolding(): boolean {
+    return this.sliding === 0 && !this.joint.isReleased && Math.abs(this.row.impulse) < this.most() * SATURATED;
+  }
+
   breakaway(): 1 | -1 | 0 {
     const most = this.most();
     if (most === 0 || Math.abs(this.row.impulse) < most * SATURATED) return 0;

@@ -2,7 +2,7 @@ import { TimeStep } from 'planck';
 import type { JointLimits, Pin, Slide, Weld } from '../../mechanism/kinds/joint.js';
 import type { AxisRow } from '../axis-row.js';
 import { PairAccount } from '../books.js';
-import type { Element, Friction, Stop } from '../element.js';
+import type { Element, Stop } from '../element.js';
 import type { JointInternals } from '../planck-internals.js';
 import { anchorAt, anchorOf, partIndex, partInner, type Anchor, type Scene } from '../scene.js';
 import { JointFriction, type FrictionBound } from './joint-friction.js';
@@ -46,7 +46,6 @@ export class JointElement implements Element {
   readonly a: number;
   readonly b: number;
   isReleased = false;
-  readonly friction?: Friction;
   readonly stops: readonly Stop[];
   readonly frictionRow?: JointFriction;
   private readonly account: PairAccount;
@@ -75,7 +74,6 @@ export class JointElement implements Element {
     this.axis = joint.kind === 'slide' ? localAxis(scene, this.a, joint.axis) : { x: 1, y: 0 };
     if (joint.kind !== 'weld' && joint.friction) {
       this.frictionRow = new JointFriction(scene, this, boundOf(scene, joint));
-      this.friction = this.frictionRow;
     }
     this.stops = joint.kind !== 'weld' && joint.limits ? this.limitStops(joint.limits) : [];
   }
@@ -106,12 +104,12 @@ export class JointElement implements Element {
     this.frictionRow?.solve();
   }
 
-  book(half: number): void {
+  book(): void {
     if (this.isReleased) return;
     this.reader.impulse(this.reaction);
     this.bookImpulse(this.reaction, 2, 'solver-residual');
     this.frictionRow?.book();
-    for (const stop of this.stops) stop.bookStep(half);
+    for (const stop of this.stops) stop.bookStep();
   }
 
   /** Books `times` the present impulse at the velocities now in planck's bodies. */

@@ -15,7 +15,7 @@ export class LoadElement implements Element {
   private readonly row: AxisRow;
   private readonly booked: BookedAccount;
   private readonly body: number;
-  private readonly anchor: Anchor | null;
+  private readonly anchor: Anchor;
   private readonly point = { x: 0, y: 0 };
 
   constructor(
@@ -25,7 +25,7 @@ export class LoadElement implements Element {
   ) {
     this.body = partIndex(scene, load.kind === 'force' ? load.on.of : load.on);
     this.row = new AxisRow(scene.groundInner, partInner(scene, this.body));
-    this.anchor = load.kind === 'force' ? anchorOf(scene, load.on) : null;
+    this.anchor = load.kind === 'force' ? anchorOf(scene, load.on) : { body: this.body, x: 0, y: 0 };
     this.booked = scene.books.open('load', load.id, this.body < 0 ? [] : [scene.ids[this.body]]);
     this.row.turn();
   }
@@ -46,7 +46,7 @@ export class LoadElement implements Element {
     if (size === 0) return 0;
     const angle = load.follows === 'body' ? turnOf(this.scene, this.body) : 0;
     const [c, s] = [Math.cos(angle), Math.sin(angle)];
-    const { x, y } = anchorAt(this.scene, this.anchor!, this.point);
+    const { x, y } = anchorAt(this.scene, this.anchor, this.point);
     this.row.aim((c * fx - s * fy) / size, (s * fx + c * fy) / size, x, y);
     return size / this.scene.scale.force;
   }
