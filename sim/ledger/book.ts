@@ -139,7 +139,7 @@ function resolution(recording: Recording, span: Span, inside: ReadonlySet<string
   return Number.isFinite(sizes.value) ? ROUNDINGS * Number.EPSILON * sizes.value : 0;
 }
 
-/** Lets finite numbers through; any other is nil and leaves one finding for what it belongs to. */
+/** Lets finite numbers through, −0 as 0; any other is nil and leaves one finding for what it belongs to. */
 class FiniteGuard {
   readonly findings: Finding[] = [];
   private readonly seen = new Set<string>();
@@ -150,7 +150,7 @@ class FiniteGuard {
   ) {}
 
   finite(value: number, what: string, of: string[]): number {
-    if (Number.isFinite(value)) return value;
+    if (Number.isFinite(value)) return value + 0;
     const key = [what, ...of].join(' ');
     if (!this.seen.has(key)) this.findings.push(this.finding(what, of));
     this.seen.add(key);

@@ -1,18 +1,19 @@
 import type { CheckResult, ResultFinding } from './result.js';
 
 /**
- * A result with every number finite: one that is not becomes 0, and a finding names the first of them with its place.
+ * A result with every number finite, and −0 as 0: one that is not finite becomes 0, and a finding names the first of them
+ * with its place.
  * JSON has no other numbers, and a reader must never take a nil that stands for one as measured.
  */
 export function onlyFinite(result: CheckResult): CheckResult {
   const bad: string[] = [];
   const clean = replaced(result, '', bad) as CheckResult;
-  return bad.length === 0 ? result : { ...clean, findings: [...clean.findings, nonFiniteFinding(bad)] };
+  return bad.length === 0 ? clean : { ...clean, findings: [...clean.findings, nonFiniteFinding(bad)] };
 }
 
 function replaced(value: unknown, pointer: string, bad: string[]): unknown {
   if (typeof value === 'number') {
-    if (Number.isFinite(value)) return value;
+    if (Number.isFinite(value)) return value + 0;
     bad.push(pointer);
     return 0;
   }
