@@ -122,8 +122,11 @@ export class StationWatch {
     item.left -= 1;
     if (item.left > 0) return null;
     item.reached = true;
-    this.reachedTimes.set(item.station.id, time);
-    return item.station.id;
+    const { id } = item.station;
+    this.reachedTimes.set(id, time);
+    // What waits for this one looks for a passage of its own, not for the one that reached this.
+    for (const waiting of this.watched) if (waiting.station.after === id) waiting.side = 0;
+    return id;
   }
 }
 

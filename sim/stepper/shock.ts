@@ -1,10 +1,10 @@
 import { TimeStep } from 'planck';
-import type { AxisRow } from './axis-row.js';
+import { AxisRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
 import type { Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
-import { getVelocities, setVelocities, type Scene } from './scene.js';
+import { getVelocities, partInner, setVelocities, type Scene } from './scene.js';
 import { ShockBooks } from './shock-books.js';
 import type { VelocitySolver } from './solver.js';
 import { newState, type State } from './state.js';
@@ -13,8 +13,6 @@ import { newState, type State } from './state.js';
 const IMPACT = 1e-6;
 /** A closed point or joint whose rate is off by more than this is brought back [engine speed]. */
 const OFF = 1e-8;
-/** Friction bound while a sticking contact is brought exactly to rest. */
-const UNBOUNDED = 1e9;
 const MOST_SWEEPS = 2000;
 const CONVERGED = 1e-14;
 
@@ -28,6 +26,15 @@ export interface Strike {
   effectiveMass: number;
   /** Rows of its points, for the effective mass through the joints. */
   rows?: AxisRow[];
+}
+
+/** A row that brings a rate to its target in a correction. */
+export interface HeldRow {
+  a: number;
+  b: number;
+  row: AxisRow;
+  target: number;
+  least: number;
 }
 
 interface Struck {
@@ -117,7 +124,9 @@ export class Shock {
         if (isNew && approach > IMPACT) {
           isImpact = true;
           struck.push({ touch, point: j as 0 | 1, approach });
-        } else if (approach > OFF) isOff = true;
+        } else if (approach > OFF || (approach < -OFF && this.isPressed(touch, contact.m_manifold.points[j].id.key))) {
+          isOff = true;
+        }
         const slip = tB - tA - contact.m_tangentSpeed;
         if (touch.sliding === 0 && this.isRubbing(touch) && Math.abs(slip) > OFF) isOff = true;
       }
@@ -173,17 +182,45 @@ export class Shock {
     return strikes;
   }
 
-  /** Brings velocities back onto what holds already; booked as velocity-projection. */
+  /**
+   * Brings velocities back onto what holds already; booked as velocity-projection. Points that carried force over the
+   * step were closed all through it, so that their normal rate is nil either way; others are only kept from approaching.
+   */
   private correct(state: State): void {
-    for (const touch of this.solver.rigid.live) {
-      touch.contact.v_friction = touch.sliding === 0 && this.isRubbing(touch) ? UNBOUNDED : 0;
-    }
+    const rows = this.solver.rigid.live.flatMap((touch) => this.heldRows(touch));
     for (const friction of this.holding) friction.aim();
-    this.iterate(() => {
+    this.repeat(() => {
+      this.sweepJoints();
       for (const friction of this.holding) friction.hold();
+      for (const { row, target, least } of rows) row.solve(target, least, Infinity);
     });
     getVelocities(this.scene, state.vx, state.vy, state.w);
-    this.books.book(this.before, false, this.holding);
+    this.books.correction(this.before, [...this.holding, ...rows]);
+  }
+
+  /** Rows of a touch's closed points: along the normal, and along the tangent where it sticks. */
+  private heldRows(touch: Touch): HeldRow[] {
+    const { contact, bodyA: a, bodyB: b } = touch;
+    const { v_normal: n } = contact;
+    const rows: HeldRow[] = [];
+    for (let j = 0; j < contact.v_pointCount; j += 1) {
+      const { rB } = contact.v_points[j];
+      const { c } = this.scene.bodies[b].c_position;
+      const aimed = (nx: number, ny: number, target: number, least: number): HeldRow => {
+        const row = new AxisRow(partInner(this.scene, a), partInner(this.scene, b));
+        row.aim(nx, ny, c.x + rB.x, c.y + rB.y);
+        return { a, b, row, target, least };
+      };
+      const isPressed = this.isPressed(touch, contact.m_manifold.points[j].id.key);
+      rows.push(aimed(n.x, n.y, 0, isPressed ? -Infinity : 0));
+      const sticks = touch.sliding === 0 && this.isRubbing(touch);
+      if (sticks) rows.push(aimed(n.y, -n.x, contact.m_tangentSpeed, -Infinity));
+    }
+    return rows;
+  }
+
+  private isPressed({ pressed }: Touch, key: number): boolean {
+    return pressed[0] === key || pressed[1] === key;
   }
 
   private impact(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): void {
@@ -208,7 +245,7 @@ export class Shock {
     }
     this.restitutionCut = this.isPlastic ? 1 : cut;
     getVelocities(this.scene, state.vx, state.vy, state.w);
-    this.books.book(this.before, true, []);
+    this.books.impact(this.before);
   }
 
   private solveImpact(struck: Struck[], stops: { stop: Stop; approach: number }[], cut: number): void {
@@ -220,20 +257,22 @@ export class Shock {
       touch.contact.v_points[point].velocityBias = approach < restSpeed ? 0 : cut * restitution * approach;
     }
     const targets = new Map(stops.map(({ stop, approach }) => [stop, cut * stop.restitution * approach]));
-    this.iterate(() => undefined, targets);
+    this.iterate(targets);
   }
 
-  private iterate(more: () => void, targets?: Map<Stop, number>): void {
-    const { solver } = this;
+  private iterate(targets?: ReadonlyMap<Stop, number>): void {
     this.repeat(() => {
-      for (const joint of solver.joints) {
-        if (joint.isReleased) continue;
-        joint.reader.joint.solveVelocityConstraints(step);
-        for (const stop of joint.stops) if (stop.isClosed) stop.row.solve(targets?.get(stop) ?? 0, 0, Infinity);
-      }
-      more();
-      solver.rigid.solve();
+      this.sweepJoints(targets);
+      this.solver.rigid.solve();
     });
+  }
+
+  private sweepJoints(targets?: ReadonlyMap<Stop, number>): void {
+    for (const joint of this.solver.joints) {
+      if (joint.isReleased) continue;
+      joint.reader.joint.solveVelocityConstraints(step);
+      for (const stop of joint.stops) if (stop.isClosed) stop.row.solve(targets?.get(stop) ?? 0, 0, Infinity);
+    }
   }
 
   /** Repeats a sweep until the velocities stand still. */
@@ -340,7 +379,7 @@ export class Shock {
     const live = this.solver.rigid.live;
     const all = live.splice(0, live.length, ...live.filter((touch) => chosen.has(touch)));
     for (const touch of live) touch.contact.v_friction = 0;
-    this.iterate(() => undefined);
+    this.iterate();
     let energy = 0;
     let most = 0;
     for (const { touch, point, approach } of items) {

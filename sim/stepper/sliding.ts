@@ -36,7 +36,7 @@ export class SlidingModes {
   /** Tells of pairs that began or ceased to slide in the last step. */
   notice(log: RunLog): void {
     for (const pair of this.manager.pairs) {
-      if (pair.reading.points === 0) continue;
+      if (pair.reading.points === 0 || pair.friction === null) continue;
       const slides = this.isSliding(pair);
       if (slides === pair.wasSliding) continue;
       pair.wasSliding = slides;

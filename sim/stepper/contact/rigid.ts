@@ -6,7 +6,7 @@ import type { State } from '../state.js';
 import type { ContactManager } from './manager.js';
 import { addWork, type Pair } from './pair.js';
 import { CORE } from './shapes.js';
-import { fillManifold, isClosedKey, type Touch } from './touch.js';
+import { fillManifold, isClosedKey, NO_KEY, type Touch } from './touch.js';
 
 const SATURATED = 1 - 1e-9;
 const step = new TimeStep();
@@ -121,8 +121,10 @@ export class RigidContacts {
     const { contact, bodyA, bodyB } = touch;
     const saturated = this.isSaturated(touch, contact.m_friction);
     const force = this.half > 0 ? 1 / this.half : 0;
+    touch.pressed[0] = touch.pressed[1] = NO_KEY;
     for (let j = 0; j < contact.v_pointCount; j += 1) {
       const point = contact.v_points[j as 0 | 1];
+      if (point.normalImpulse > 0) touch.pressed[j as 0 | 1] = contact.m_manifold.points[j].id.key;
       this.rate(touch, point);
       const normal = 2 * point.normalImpulse;
       const tangent = 2 * point.tangentImpulse;

@@ -49,6 +49,9 @@ export interface Touch {
   /** It has been looked at before: `armed` and `side` are known. */
   seen: boolean;
 
+  /** Keys of the points that carried force over the last step (−1: none). */
+  pressed: [number, number];
+
   /** +1 or −1: slides that way along the tangent; 0: sticks. */
   sliding: 1 | -1 | 0;
   /** Where it last was on its chain. */
@@ -79,6 +82,7 @@ export function newTouch(id: number, contact: ContactInternals, bodyA: number, b
     side: 0,
     armed: true,
     seen: false,
+    pressed: [NO_KEY, NO_KEY],
     sliding: 0,
     foot: { foot: newFoot(), link: 0, held: false },
     curved: false,
