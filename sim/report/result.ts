@@ -1,9 +1,5 @@
 import * as v from 'valibot';
 
-/**
- * The result of a check, version 1, as one JSON object. All numbers are SI and finite. This schema is the source of the
- * types below and of the JSON Schema beside the examples.
- */
 const joules = (what: string) => v.pipe(v.number(), v.finite(), v.description(`${what} [J]`));
 const si = (what: string) => v.pipe(v.number(), v.finite(), v.description(what));
 const id = v.string();
@@ -122,6 +118,10 @@ const handCheck = v.strictObject({
   speed: v.optional(si('[m/s]')),
 });
 
+/**
+ * The result of a check, version 1, as one JSON object. All numbers are SI and finite. This schema is the source of the
+ * types below and of the JSON Schema beside the examples.
+ */
 export const resultSchema = v.pipe(
   v.strictObject({
     format: v.literal('joulewright-result/1'),
