@@ -34,7 +34,9 @@ export type Values<C extends Code> = Record<Slots<(typeof catalogue)[C]['says']>
 export function problem<C extends Code>(code: C, place: Place, values: Values<C>): Problem {
   const { severity, says } = catalogue[code];
   const given: Record<string, string | number | undefined> = values;
-  const text = says.replace(/\{(\w+)\}/g, (_, name: string) => String(given[name]));
+  const filled = says.replace(/\{(\w+)\}/g, (_, name: string) => String(given[name]));
+  // A suggestion ends with a question mark of its own.
+  const text = filled.replace(/\?\.$/, '?');
   const made: Problem = { severity, code, text, pointer: place.pointer, of: place.of };
   if (given.found !== undefined) made.found = String(given.found);
   if (given.accepted !== undefined) made.accepted = String(given.accepted);

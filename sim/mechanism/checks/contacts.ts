@@ -35,7 +35,9 @@ function checkCompliance(value: ContactDocument, place: Place, { reading }: Chec
 }
 
 function checkRests(checked: Checked): void {
-  const { mechanism, reading } = checked;
+  const { mechanism, draft, reading } = checked;
+  // A contact that is wrong itself might have been the one between them.
+  if (draft.contacts?.some(({ value }) => value === undefined)) return;
   for (const { id, rest } of mechanism.bodies) {
     if (!rest || mechanism.contacts.some(({ between }) => between.includes(id) && between.includes(rest.on))) continue;
     const place = { ...placeOf(checked, id, 'rest'), of: [id, rest.on] };

@@ -14,11 +14,14 @@ export function checkMaterials(checked: Checked): void {
     const accepted = `a name of the table${near ? `; did you mean "${near}"?` : ''}`;
     reading.report('unknown-material', placeOf(checked, id, 'material'), { found: `"${material}"`, accepted });
   }
+  const seen = new Set<string>();
   for (const [a, row] of Object.entries(table)) {
     for (const b of Object.keys(row)) {
-      if (a >= b || !Object.hasOwn(table, b) || !Object.hasOwn(table[b], a)) continue;
-      const place = { pointer: step(step('/materials', b), a), of: [] };
-      reading.report('duplicate-materials', place, { found: `${a} on ${b}`, accepted: 'one entry in either order' });
+      const pair = JSON.stringify([a, b].sort());
+      const place = { pointer: step(step('/materials', a), b), of: [] };
+      const values = { found: `${a} on ${b}`, accepted: 'one entry in either order' };
+      if (seen.has(pair)) reading.report('duplicate-materials', place, values);
+      seen.add(pair);
     }
   }
 }

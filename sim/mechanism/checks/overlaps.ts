@@ -1,7 +1,8 @@
 import type { Vec } from '../../core/vec.js';
-import { bodyGap, convexParts, TOUCHING, trackGap, type TrackPath } from '../../geometry/index.js';
+import { bodyGap, TOUCHING, trackGap, type TrackPath } from '../../geometry/index.js';
 import type { ContactPair } from '../kinds/contact.js';
 import type { PlacedBody } from '../resolve/body.js';
+import { reachOf } from '../resolve/outline.js';
 import { formatQuantity } from '../units/format.js';
 import { placeOf, type Checked } from './checked.js';
 
@@ -10,7 +11,7 @@ const NEARLY = 0.01;
 
 /** Bodies that start inside each other, or in or behind a track, where a contact pair lists them. */
 export function checkOverlaps(checked: Checked): void {
-  const bodies = new Map(checked.placed.map((body) => [body.id, { body, reach: reachOf(body) }]));
+  const bodies = new Map(checked.placed.map((body) => [body.id, { body, reach: reachOf(body.outline) }]));
   for (const pair of checked.mechanism.contacts) {
     const first = bodies.get(pair.between[0]);
     const second = bodies.get(pair.between[1]);
@@ -27,12 +28,6 @@ interface Reached {
   reach: number;
 }
 
-const reachOf = ({ shape }: PlacedBody): number =>
-  Math.max(
-    0,
-    ...convexParts(shape).flatMap(({ points, radius }) => points.map((p) => radius + Math.hypot(p[0], p[1]))),
-  );
-
 function checkBodies(a: Reached, b: Reached, pair: ContactPair, checked: Checked): void {
   const apart = Math.hypot(a.body.at[0] - b.body.at[0], a.body.at[1] - b.body.at[1]);
   if (apart > a.reach + b.reach) return;
@@ -42,8 +37,10 @@ function checkBodies(a: Reached, b: Reached, pair: ContactPair, checked: Checked
 }
 
 function checkTrack({ body, reach }: Reached, path: TrackPath, pair: ContactPair, checked: Checked): void {
-  if (isFar(body.at, reach, path)) return;
   const { extent } = checked.mechanism;
+  const near = Math.max(reach, NEARLY * extent);
+  const isOutright = namesBoth(pair, checked);
+  if (!isOutright && !path.closed && isFar(body.at, reach + near, path)) return;
   const { gap, state, at } = trackGap(body, path);
   if (state === 'clear' || gap >= -TOUCHING * extent) return;
   const where = `[${at.map((part) => formatQuantity(part, 'length')).join(', ')}]`;
@@ -52,19 +49,15 @@ function checkTrack({ body, reach }: Reached, path: TrackPath, pair: ContactPair
     report(pair, `"${body.id}" ${depth} inside "${path.id}" at ${where}`, 'error', checked);
     return;
   }
-  const isOutright = namesBoth(pair, checked);
-  const isNear = -gap <= Math.max(reach, NEARLY * extent);
+  const isNear = -gap <= near;
   if (!path.closed && !isNear && !isOutright) return;
   const isWrong = path.closed || (isNear && isOutright);
   report(pair, `"${body.id}" ${depth} behind "${path.id}" at ${where}`, isWrong ? 'error' : 'warning', checked);
 }
 
-/** So far from the track that its outline cannot reach it: then it is inside nothing, unless a closed track is around it. */
-function isFar([x, y]: Vec, reach: number, { box, closed }: TrackPath): boolean {
-  if (closed) return false;
-  const margin = 2 * reach;
-  return x < box.minX - margin || x > box.maxX + margin || y < box.minY - margin || y > box.maxY + margin;
-}
+/** Farther than `margin` from everything of the track [m]. */
+const isFar = ([x, y]: Vec, margin: number, { box }: TrackPath): boolean =>
+  x < box.minX - margin || x > box.maxX + margin || y < box.minY - margin || y > box.maxY + margin;
 
 const namesBoth = (pair: ContactPair, { draft }: Checked): boolean =>
   draft.contacts?.find(({ place }) => place.pointer === pair.pointer)?.value?.between.includes('*') === false;

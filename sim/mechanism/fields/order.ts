@@ -1,35 +1,38 @@
 import { isObject, type JsonObject, type JsonValue } from '../json/value.js';
 import { narrowed } from './lookup.js';
-import type { Spec } from './spec.js';
+import type { RecordSpec, Spec } from './spec.js';
 
 /**
- * The same value with every object's keys in the order of its field table: known ones first, then unknown ones in the
- * order they came. Where a value does not fit its description it stays as it came.
+ * The same value with every object's keys in one order: first those of its field table, in the table's order, then names
+ * of the author's and keys nobody knows, by their code units. Two documents that say the same come out the same.
  */
-export function inOrder(spec: Spec, value: JsonValue): JsonValue {
-  const exact = narrowed(spec, value, null);
-  if (Array.isArray(value)) return value.map((item, i) => ordered(itemSpec(exact, i), item));
+export function inOrder(spec: Spec | undefined, value: JsonValue): JsonValue {
+  const exact = spec && narrowed(spec, value, null);
+  if (Array.isArray(value)) return value.map((item, i) => inOrder(childSpec(exact, i), item));
   if (!isObject(value)) return value;
-  if (exact?.type === 'map') return mapValues(value, (item) => inOrder(exact.value, item));
-  if (exact?.type !== 'record') return value;
-  const tag = spec.type === 'tagged' ? [spec.tag] : [];
-  const known = Object.keys(exact.fields);
-  const first = 'id' in exact.fields ? ['id', ...tag] : tag;
-  const keys = new Set([...first, ...known, ...Object.keys(value)].filter((key) => Object.hasOwn(value, key)));
-  return Object.fromEntries(
-    [...keys].map((key) => [
-      key,
-      ordered(Object.hasOwn(exact.fields, key) ? exact.fields[key].spec : undefined, value[key]),
-    ]),
-  );
+  const entries = keysInOrder(spec, exact, value).map((key): [string, JsonValue] => [
+    key,
+    inOrder(exact?.type === 'map' ? exact.value : fieldSpec(exact, key), value[key]),
+  ]);
+  return Object.fromEntries(entries);
 }
 
-const ordered = (spec: Spec | undefined, value: JsonValue): JsonValue => (spec ? inOrder(spec, value) : value);
+function keysInOrder(spec: Spec | undefined, exact: Spec | undefined, value: JsonObject): string[] {
+  const known = exact?.type === 'record' ? knownKeys(exact, spec?.type === 'tagged' ? spec.tag : undefined) : [];
+  const rest = Object.keys(value).sort();
+  return [...new Set([...known, ...rest])].filter((key) => Object.hasOwn(value, key));
+}
 
-function itemSpec(spec: Spec | undefined, index: number): Spec | undefined {
+/** The id first, then what tells the variant, then the fields as the table has them. */
+function knownKeys({ fields }: RecordSpec, tag: string | undefined): string[] {
+  const first = [...('id' in fields ? ['id'] : []), ...(tag === undefined ? [] : [tag])];
+  return [...first, ...Object.keys(fields)];
+}
+
+const fieldSpec = (spec: Spec | undefined, key: string): Spec | undefined =>
+  spec?.type === 'record' && Object.hasOwn(spec.fields, key) ? spec.fields[key].spec : undefined;
+
+function childSpec(spec: Spec | undefined, index: number): Spec | undefined {
   if (spec?.type === 'list') return spec.item;
   return spec?.type === 'tuple' ? spec.items[index] : undefined;
 }
-
-const mapValues = (object: JsonObject, change: (value: JsonValue) => JsonValue): JsonObject =>
-  Object.fromEntries(Object.entries(object).map(([key, value]) => [key, change(value)]));

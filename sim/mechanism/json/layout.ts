@@ -23,15 +23,15 @@ export function layOut(value: JsonValue, indent = '', used = 0): string {
 function onOneLine(value: JsonValue, room: number): string | undefined {
   if (typeof value !== 'object' || value === null) return JSON.stringify(value);
   const parts: string[] = [];
-  let length = 4;
+  let length = Array.isArray(value) ? 2 : 4;
   const items = Array.isArray(value) ? value.map((item) => ['', item] as const) : Object.entries(value);
   for (const [key, item] of items) {
     const name = Array.isArray(value) ? '' : `${JSON.stringify(key)}: `;
     const part = onOneLine(item, room - length - name.length);
     if (part === undefined) return undefined;
+    length += name.length + part.length + (parts.length > 0 ? 2 : 0);
+    if (length > room) return undefined;
     parts.push(name + part);
-    length += name.length + part.length + 2;
-    if (length - 2 > room) return undefined;
   }
   if (Array.isArray(value)) return `[${parts.join(', ')}]`;
   return parts.length === 0 ? '{}' : `{ ${parts.join(', ')} }`;

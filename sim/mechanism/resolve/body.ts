@@ -5,6 +5,7 @@ import type { Element } from '../fields/spec.js';
 import { inside, type Reading } from '../fields/reading.js';
 import type { Body, BodyDocument, Shape } from '../kinds/body.js';
 import { resolveCam } from './cam.js';
+import { outlineOf, type Outline } from './outline.js';
 import { restPose, type Pose } from './rest.js';
 import { formatQuantity } from '../units/format.js';
 
@@ -12,6 +13,7 @@ import { formatQuantity } from '../units/format.js';
 export interface PlacedBody extends Pose {
   id: string;
   shape: Shape;
+  outline: Outline;
   place: Place;
 }
 
@@ -26,25 +28,25 @@ export function resolveBody(
   paths: ReadonlyMap<string, TrackPath>,
   reading: Reading,
 ): ResolvedBody {
-  const outline = draft.shape;
-  const placing = outline && poseOf(draft, outline, paths, place, reading);
-  if (!outline || !placing || draft.id === undefined) return { placed: undefined, body: undefined };
-  const shape = resolveShape(outline, placing, inside(place, 'shape'), reading);
+  const drawn = draft.shape;
+  const placing = drawn && poseOf(draft, drawn, paths, place, reading);
+  if (!drawn || !placing || draft.id === undefined) return { placed: undefined, body: undefined };
+  const shape = resolveShape(drawn, placing, inside(place, 'shape'), reading);
   if (!shape) return { placed: undefined, body: undefined };
-  const placed = { id: draft.id, shape, place, ...placing };
+  const placed = { id: draft.id, shape, outline: outlineOf(shape), place, ...placing };
   return { placed, body: value && completed(value, shape, placing, place, reading) };
 }
 
-type Outline = BodyDocument['shape'];
+type DrawnShape = BodyDocument['shape'];
 
-function resolveShape(shape: Outline, pose: Pose, place: Place, reading: Reading): Shape | undefined {
+function resolveShape(shape: DrawnShape, pose: Pose, place: Place, reading: Reading): Shape | undefined {
   if (shape.kind === 'polygon') return { kind: 'polygon', points: counterClockwise(shape.points) };
   return shape.kind === 'cam' ? resolveCam(shape, pose, place, reading) : shape;
 }
 
 function poseOf(
   draft: Partial<BodyDocument>,
-  shape: Outline,
+  shape: DrawnShape,
   paths: ReadonlyMap<string, TrackPath>,
   place: Place,
   reading: Reading,

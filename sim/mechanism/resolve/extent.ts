@@ -1,9 +1,10 @@
 import type { Vec } from '../../core/vec.js';
-import { placedParts, type TrackPath } from '../../geometry/index.js';
+import type { TrackPath } from '../../geometry/index.js';
 import { isObject, type JsonValue } from '../json/value.js';
 import type { Element } from '../fields/spec.js';
 import type { TrackDocument } from '../kinds/track.js';
 import type { PlacedBody } from './body.js';
+import { boxPoints } from './outline.js';
 
 /** Diagonal of the box around points [m]; 0 for none. */
 export function diagonal(points: readonly Vec[]): number {
@@ -26,15 +27,7 @@ export const trackPoints = ({ box }: TrackPath): Vec[] => [
 ];
 
 /** Points whose box is the box around a body where it is. */
-export const bodyPoints = (body: PlacedBody): Vec[] => [
-  body.at,
-  ...placedParts(body).flatMap(({ points, radius }) =>
-    points.flatMap(([x, y]): Vec[] => [
-      [x - radius, y - radius],
-      [x + radius, y + radius],
-    ]),
-  ),
-];
+export const bodyPoints = (body: PlacedBody): Vec[] => [body.at, ...boxPoints(body.outline, body)];
 
 /** The points tracks are drawn through, before anything is known of their arcs. */
 export const drawnTrackPoints = (tracks: readonly Element<TrackDocument>[]): Vec[] =>

@@ -161,7 +161,13 @@ export const full = (): JsonObject => ({
   contacts: [
     { between: ['block', 'ramp'], restSpeed: '2 mm/s' },
     { between: ['block', '*'], friction: 0.1 },
-    { between: ['plate', 'belt'], stiffness: '50 N/mm', damping: '10 N s/m', staticFriction: 0.3, kineticFriction: 0.2 },
+    {
+      between: ['plate', 'belt'],
+      stiffness: '50 N/mm',
+      damping: '10 N s/m',
+      staticFriction: 0.3,
+      kineticFriction: 0.2,
+    },
     { between: ['wheel', 'belt'], friction: 0.3, restitution: 0.5, rollingResistance: '0.5 mm' },
   ],
   joints: [
@@ -184,7 +190,14 @@ export const full = (): JsonObject => ({
       friction: { coefficient: 0.1 },
       limits: { from: '-20 mm', to: '100 mm' },
     },
-    { id: 'guide', kind: 'slide', between: ['bob', 'ground'], at: ['4 m', 0], axis: [0, 1], friction: { force: '3 N' } },
+    {
+      id: 'guide',
+      kind: 'slide',
+      between: ['bob', 'ground'],
+      at: ['4 m', 0],
+      axis: [0, 1],
+      friction: { force: '3 N' },
+    },
     { id: 'weld', kind: 'weld', between: ['cam', 'flat-cam'] },
     {
       id: 'rope',
@@ -264,7 +277,13 @@ export const full = (): JsonObject => ({
     { id: 'brake', between: ['wheel', 'ground'], coefficient: '0.5 N m s/rad' },
   ],
   drives: [
-    { id: 'motor', on: 'axle', motor: { stallTorque: '2 N m', noLoadSpeed: '1500 rpm' }, efficiency: 0.8, until: '2 s' },
+    {
+      id: 'motor',
+      on: 'axle',
+      motor: { stallTorque: '2 N m', noLoadSpeed: '1500 rpm' },
+      efficiency: 0.8,
+      until: '2 s',
+    },
     {
       id: 'push',
       on: 'slide',
@@ -355,7 +374,14 @@ export const full = (): JsonObject => ({
     { id: 'c10', measure: 'stroke', of: 'slide', from: '1', to: '2', atMost: '80 mm' },
     { id: 'c11', measure: 'storedEnergy', of: 'spring', at: '2', atLeast: '1 J' },
     { id: 'c12', measure: 'returnMargin', spring: 'spring', from: '1', to: '2', kineticEnergy: '0.1 J', atLeast: 1.2 },
-    { id: 'c13', measure: 'work', account: { account: 'friction', of: ['block', 'ramp'] }, from: '1', to: '2', atLeast: '-4 J' },
+    {
+      id: 'c13',
+      measure: 'work',
+      account: { account: 'friction', of: ['block', 'ramp'] },
+      from: '1',
+      to: '2',
+      atLeast: '-4 J',
+    },
     { id: 'c14', measure: 'peakPower', of: 'motor', from: '1', to: '2', atMost: '200 W' },
     { id: 'c15', measure: 'meanPower', of: 'motor', from: '1', to: '2', atMost: '100 W' },
     { id: 'c16', measure: 'efficiency', useful: ['gravity'], input: ['drive'], from: '1', to: '2', atLeast: '60 %' },

@@ -140,7 +140,10 @@ describe('Reading a quantity', () => {
 
   it('suggests the unit that was meant', () => {
     const result = readQuantity('3 lbs');
-    expect(result).toMatchObject({ ok: false, fault: { accepted: expect.stringContaining('did you mean lb?') as string } });
+    expect(result).toMatchObject({
+      ok: false,
+      fault: { accepted: expect.stringContaining('did you mean lb?') as string },
+    });
   });
 
   it('keeps zero apart from what is too small to be told from it', () => {
