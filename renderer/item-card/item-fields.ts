@@ -8,7 +8,7 @@ import type { Joint } from '../../sim/mechanism/kinds/joint.js';
 import type { Spring } from '../../sim/mechanism/kinds/spring.js';
 import type { Track } from '../../sim/mechanism/kinds/track.js';
 import type { Mechanism } from '../../sim/mechanism/model.js';
-import { degrees, figures, millimetres, type Shown } from '../format/quantity.js';
+import { degrees, figures, fixed, millimetres, type Shown } from '../format/quantity.js';
 import { itemData } from '../parts-list/item-data.js';
 
 /** A field of an item card: its name, the letter of its quantity, its value and unit. */
@@ -45,12 +45,14 @@ export function itemFields(item: Item, mechanism: Mechanism, items: readonly Ite
 const field = (name: string, shown: Shown, symbol?: string): CardField => ({ name, ...shown, ...(symbol === undefined ? {} : { symbol }) });
 const plain = (name: string, value: string): CardField => ({ name, value, unit: '' });
 const number = (name: string, value: number, unit: string, symbol?: string) => field(name, { value: figures(value), unit }, symbol);
-const place = ([x, y]: Vec): Shown => ({ value: `${figures(x * 1e3)}, ${figures(y * 1e3)}`, unit: 'mm' });
+/** Tenths of a millimetre, without zeros that say nothing. */
+const tidy = (millimetres: number) => fixed(millimetres, 1).replace(/\.0$/, '');
+const place = ([x, y]: Vec): Shown => ({ value: `${tidy(x * 1e3)}, ${tidy(y * 1e3)}`, unit: 'mm' });
 
 function bodyFields({ mass, inertia, at, angle, velocity, spin, rest }: Body): CardField[] {
   return [
     number('Mass', mass, 'kg', 'm'),
-    number('Inertia', inertia, 'kg m²', 'J'),
+    ...(inertia === 0 ? [] : [number('Inertia', inertia, 'kg m²', 'J')]),
     field('At', place(at)),
     field('Angle', degrees(angle), 'φ'),
     number('Speed at start', Math.hypot(...velocity), 'm/s', 'v₀'),

@@ -1,4 +1,4 @@
-import { niceAtLeast } from '../../sim/drawing/paper.js';
+import { niceAtLeast, scaleEnd } from '../../sim/drawing/paper.js';
 import type { Strip } from '../../sim/drawing/strip.js';
 import { figures } from '../format/quantity.js';
 import { families } from '../sheet/executor.js';
@@ -156,18 +156,28 @@ function drawTraces(context: Context, { layout, axis, strip, speed, force }: Cha
     context.setLineDash([]);
   }
   if (speed && speed.peak > 0) {
-    traceLine(context, xs, scaled(speed, niceAtLeast(speed.peak)));
+    traceLine(context, xs, scaled(speed, scaleEnd(speed.peak)));
     context.stroke();
   }
+  const low = (trace: Trace | null, i: number) => !trace || trace.values[i] < 0.42 * trace.peak;
   const { left, right } = layout;
-  const beside = (trace: Trace, text: string, from: number, to: number) => {
-    // The name stands where its line is low and leaves room above it.
-    const candidates = [...xs.keys()].filter((i) => xs[i] > from && xs[i] < to);
-    const place = candidates.find((i) => trace.values[i] < 0.45 * trace.peak) ?? candidates[0];
-    if (place !== undefined) halo(context, text, Math.min(xs[place] + 12, right - 80), top + 9, colours);
-  };
-  if (speed) beside(speed, 'speed', left + (right - left) * 0.2, right);
+  if (speed) {
+    // The name stands over a stretch where both lines are low; where there is none, at the left end.
+    const clear = runOf(xs, (i) => low(speed, i) && low(force, i), 60);
+    halo(context, 'speed', clear ?? left + 12, top + 9, colours);
+  }
   if (force) halo(context, force.label, right - 8, bottom - 10, colours, 'right');
+}
+
+/** Where a stretch of at least `width` pixels begins over which every sample is as wanted, with a small inset. */
+function runOf(xs: Float64Array, isWanted: (i: number) => boolean, width: number): number | null {
+  let start = -1;
+  for (let i = 0; i < xs.length; i++) {
+    if (!isWanted(i)) start = -1;
+    else if (start < 0) start = i;
+    else if (xs[i] - xs[start] >= width) return xs[start] + 10;
+  }
+  return null;
 }
 
 function drawScales(context: Context, { layout, axis, unit, speed }: Chart, { top, step }: EnergyTicks, colours: Colours): void {
@@ -183,7 +193,7 @@ function drawScales(context: Context, { layout, axis, unit, speed }: Chart, { to
     context.fillText(k === last ? `${text} ${unit.unit}` : text, layout.left - 7, y);
   }
   if (speed && speed.peak > 0) {
-    context.fillText(`${figures(niceAtLeast(speed.peak))} m/s`, layout.left - 7, layout.speed.top + 1);
+    context.fillText(`${figures(scaleEnd(speed.peak))} m/s`, layout.left - 7, layout.speed.top + 1);
     context.fillText('0', layout.left - 7, layout.speed.bottom);
   }
   context.textAlign = 'center';

@@ -9,13 +9,17 @@ export interface Trace {
   peak: number;
 }
 
-/** Speed of a body's mass centre [m/s]. */
+/** A body slower than this all along stands still [m/s]: it is pinned, and what is left is rounding. */
+const rounding = 1e-9;
+
+/** Speed of a body's mass centre [m/s]; null for one that stands still. */
 export function speedTrace(recording: Recording, { rows }: Strip, body: string): Trace | null {
   const columns = bodyOf(recording, body)?.columns;
   if (!columns) return null;
   const speed = (row: number) =>
     Math.hypot(valueAt(recording, row, columns.vx), valueAt(recording, row, columns.vy));
-  return traceOf(recording, rows, speed);
+  const trace = traceOf(recording, rows, speed);
+  return trace.peak > rounding ? trace : null;
 }
 
 export interface ForceTrace extends Trace {

@@ -18,12 +18,17 @@ export interface LabelledBand {
 /** Width of a character of the labels, near enough to tell whether one fits along its band [px]. */
 const character = 6.3;
 
-/** The loss map beside the tracks: bands in the looks of their accounts, with their names and joules. */
-export function lossFigures(bands: readonly LabelledBand[], pixels: number, perPixel: number): Figure[] {
+/** The loss map beside the tracks, bands with their names and joules; and its lowest edge on paper [px]. */
+export function lossFigure(
+  bands: readonly LabelledBand[],
+  pixels: number,
+  perPixel: number,
+): { figure: Figure; bottom: number } {
   const boxes: Vec[] = [];
   const labels = bands.flatMap((each) => labelOperations(each, pixels, perPixel, boxes));
   const operations = [...bands.flatMap(({ band, pattern }) => lossBand(band, pattern, pixels, perPixel)), ...labels];
-  return [{ key: 'loss', layer: 'tracings', on: 'ground', operations }];
+  const edges = operations.flatMap((each) => (each.kind === 'line' ? each.points.map(([, y]) => y) : each.kind === 'text' ? [each.at[1] + 8] : []));
+  return { figure: { key: 'loss', layer: 'tracings', on: 'ground', operations }, bottom: Math.max(...edges) };
 }
 
 function labelOperations({ band, label, figure, picked }: LabelledBand, pixels: number, perPixel: number, placed: Vec[]): DrawOperation[] {

@@ -1,11 +1,11 @@
 import type { Vec } from '../../sim/core/vec.js';
-import { anchorOf } from '../../sim/drawing/anchors.js';
-import { balloonOperations, placeBalloons, type Balloon } from '../../sim/drawing/balloons.js';
+import { anchorOf, type AnchorOf } from '../../sim/drawing/anchors.js';
+import { apart, balloonOperations, placeBalloons, type Balloon } from '../../sim/drawing/balloons.js';
 import type { Figure } from '../../sim/drawing/figure.js';
 import type { Item } from '../../sim/drawing/items.js';
 import { phantomOperations } from '../../sim/drawing/kinds/body.js';
 import { moved, type DrawOperation } from '../../sim/drawing/operations.js';
-import { toPaper } from '../../sim/drawing/paper.js';
+import { boxAround, toPaper } from '../../sim/drawing/paper.js';
 import { posesAt } from '../../sim/drawing/pose.js';
 import type { Scene } from '../../sim/drawing/scene.js';
 import { stationMarks, type StationName } from '../../sim/drawing/stations.js';
@@ -15,30 +15,40 @@ import { bodyAtRow, bodyOf } from '../../sim/recording/reader.js';
 /** More items than this, and joints go without balloons: the parts list has them. */
 const crowded = 10;
 
-/** A balloon for each item, placed on the sheet as drawn; on a run it goes along with its body. */
-export function balloonFigures(scene: Scene, items: readonly Item[], ink: readonly Vec[], picked: string | null): Figure[] {
+/** A placed balloon and what it belongs to. */
+export interface ItemBalloon {
+  item: Item;
+  balloon: Balloon;
+  anchor: AnchorOf;
+}
+
+/** A balloon for each item, placed on the sheet as drawn. */
+export function placeItemBalloons(scene: Scene, items: readonly Item[], ink: readonly Vec[]): ItemBalloon[] {
   const shown = items.filter(({ kind }) => kind !== 'joint' || items.length <= crowded);
   const anchors = shown.flatMap((item) => {
-    const { at, onLine } = anchorOf(item, scene);
-    const place = at(scene.drawn);
-    return place ? [{ item, at, place, onLine, number: item.number }] : [];
+    const { at: anchor, onLine } = anchorOf(item, scene);
+    const at = anchor(scene.drawn);
+    return at ? [{ item, anchor, number: item.number, at, onLine }] : [];
   });
   const paper = ink.map((point) => toPaper(point, scene.pixels));
-  const roof = (x: number, half: number) =>
-    paper.reduce((high, [px, py]) => (Math.abs(px - x) <= half ? Math.min(high, py) : high), Infinity);
-  const placed = placeBalloons(anchors.map(({ place, ...rest }) => ({ ...rest, at: place })), (x, half) => safeRoof(roof(x, half), paper)); // prettier-ignore
-  return placed.map((balloon) => {
-    const anchor = anchors.find(({ number }) => number === balloon.number);
-    return {
-      key: `balloon:${balloon.number}`,
-      layer: 'balloons',
-      live: (now) => balloonOperations(followed(balloon, anchor?.at(now), anchor?.item.kind), anchor?.item.id === picked),
-    };
+  const around = (left: number, right: number) =>
+    boxAround(paper.filter(([x]) => x >= left && x <= right)) ?? boxAround(paper) ?? { left, right, low: 0, high: 0 };
+  const placed = placeBalloons(anchors, around);
+  return anchors.map(({ item, anchor, number }) => {
+    const balloon = placed.find((each) => each.number === number)!;
+    return { item, anchor, balloon };
   });
 }
 
-function safeRoof(found: number, paper: readonly Vec[]): number {
-  return Number.isFinite(found) ? found : Math.min(...paper.map(([, y]) => y));
+/** The balloons as figures; on a run they go along with their bodies. */
+export function balloonFigures(balloons: readonly ItemBalloon[], picked: string | null): Figure[] {
+  // Those that stand still come first: it is the moving ones that give way.
+  const order = [...balloons].sort((a, b) => Number(a.item.kind === 'body') - Number(b.item.kind === 'body'));
+  const live: Extract<Figure, { live: unknown }>['live'] = (now) => {
+    const placed = apart(order.map(({ item, balloon, anchor }) => followed(balloon, anchor(now), item.kind)));
+    return placed.flatMap((balloon, i) => balloonOperations(balloon, order[i].item.id === picked));
+  };
+  return [{ key: 'balloons', layer: 'balloons', live }];
 }
 
 /** The balloon of a body moves with it; others stay, and only their leaders follow. */

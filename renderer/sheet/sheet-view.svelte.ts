@@ -16,14 +16,17 @@ import { energy } from '../format/quantity.js';
 import type { Layout } from '../frame/layout.js';
 import type { Workbench } from '../state/workbench.svelte.js';
 import type { RigidFigure } from './executor.js';
-import { fitDrawing, type Fit } from './fit.js';
-import { lossFigures, type LabelledBand } from './loss-figures.js';
-import { balloonFigures, stationFigures } from './sheet-figures.js';
+import { clearances, fitDrawing, isFree, readingsCorners, type Fit } from './fit.js';
+import { lossFigure, type LabelledBand } from './loss-figures.js';
+import { balloonFigures, placeItemBalloons, stationFigures, type ItemBalloon } from './sheet-figures.js';
 
 type LiveFigure = Extract<Figure, { live: unknown }>;
 
 /** Room around the drawing [px]: balloons above, stations and the legend below. */
-const margins = { full: { top: 74, bottom: 92, side: 24 }, compact: { top: 20, bottom: 74, side: 22 } };
+const margins = {
+  full: { top: 64, bottom: 92, side: 24, below: 60 },
+  compact: { top: 20, bottom: 74, side: 22, below: 78 },
+};
 export const readingsSize = { full: { width: 336, height: 127 }, compact: { width: 324, height: 118 } };
 
 /** What lies on the sheet's field, worked out from the drawing, the run and the page that is open. */
@@ -48,9 +51,16 @@ export class SheetView {
   readonly scene: Scene | null = $derived(
     this.bench.drawing.mechanism && this.fit ? buildScene(this.bench.drawing.mechanism, this.fit.scale.pixels) : null,
   );
+  private readonly size = $derived(this.bench.view.geometry.compact ? 'compact' : 'full');
+  private readonly placed = $derived.by(() => this.placeBalloons());
+  readonly readings: Vec = $derived.by(() => this.placeReadings());
   private readonly bands = $derived.by(() => this.labelledBands());
   /** Loss that stands for a pixel, and a round figure with its length for the legend; null without a loss map. */
   readonly loss = $derived(this.bands.length > 0 ? lossScale(this.bands.map(({ band }) => band)) : null);
+  private readonly lossTracing = $derived(
+    this.scene && this.loss ? lossFigure(this.bands, this.scene.pixels, this.loss.perPixel) : null,
+  );
+  private readonly lossBottom = $derived(this.lossTracing?.bottom ?? -Infinity);
   readonly legendPattern = $derived(this.bands[0]?.pattern ?? 'friction');
   /** [N] that a pixel of an arrow stands for. */
   readonly newtonsPerPixel = $derived(this.scene ? forceScale(this.scene.mechanism) : 1);
@@ -89,8 +99,18 @@ export class SheetView {
   private layDown(): Fit | null {
     const box = boxAround(this.ink);
     if (!box) return null;
-    const size = this.bench.view.geometry.compact ? 'compact' : 'full';
-    return fitDrawing(box, this.ink, { width: this.field.width, height: this.field.onRun }, margins[size], readingsSize[size]);
+    const field = { width: this.field.width, height: this.field.onRun };
+    return fitDrawing(box, this.ink, field, margins[this.size], readingsSize[this.size]);
+  }
+
+  /** A corner for the readings that the drawing is not in. */
+  private placeReadings(): Vec {
+    const size = readingsSize[this.size];
+    const corners = readingsCorners({ width: this.field.width, height: this.field.onRun }, size);
+    const { fit, ink } = this;
+    if (!fit) return corners[0];
+    const free = clearances.flatMap((clear) => corners.filter((corner) => isFree(corner, size, ink, fit, clear)));
+    return free[0] ?? corners[0];
   }
 
   private labelledBands(): LabelledBand[] {
@@ -106,7 +126,7 @@ export class SheetView {
           band,
           pattern: accountLook(this.ended, 'friction', band.pair),
           label: lineName({ account: 'friction', of: band.pair, ...(band.name ? on : {}) }, items, mechanism).replace(/^Friction /, ''),
-          figure: line?.segment === band.segment && printed ? `${line.printed} ${printed.scale.unit}` : energyText(band.joules),
+          figure: line?.segment === band.segment && printed ? `${line.printed} ${printed.scale.unit}` : energyText(band.joules, printed?.scale),
           picked: picked !== null && line === picked,
         };
       });
@@ -126,25 +146,30 @@ export class SheetView {
       const operations = trail(ended, spec, scene.pixels, [from.time, to.time]);
       figures.push({ key: 'trail', layer: 'tracings', on: 'ground', operations });
     }
-    if (this.loss) figures.push(...lossFigures(this.bands, scene.pixels, this.loss.perPixel));
+    if (this.lossTracing) figures.push(this.lossTracing.figure);
     return figures.sort((a, b) => layers.indexOf(a.layer) - layers.indexOf(b.layer));
   }
 
   /** All pennants stand on one line below the drawing [px of paper]. */
   private baseLine(): number {
     const lowest = Math.min(...this.ink.map(([, y]) => y));
-    return toPaper([0, lowest], this.scene?.pixels ?? 1)[1] + 14;
+    const drawn = toPaper([0, lowest], this.scene?.pixels ?? 1)[1];
+    return Math.max(drawn, this.lossBottom) + 14;
+  }
+
+  private placeBalloons(): readonly ItemBalloon[] {
+    const { drawing, view } = this.bench;
+    if (!this.scene || !view.shown.balloons || view.geometry.compact) return [];
+    return placeItemBalloons(this.scene, drawing.items, inkPoints(this.scene.mechanism, null));
   }
 
   private balloons(): Figure[] {
     const { drawing, view } = this.bench;
-    if (!this.scene || !view.shown.balloons || view.geometry.compact) return [];
-    const still = inkPoints(this.scene.mechanism, null);
-    return balloonFigures(this.scene, drawing.items, still, view.sheet === 1 ? (drawing.item?.id ?? null) : null);
+    return balloonFigures(this.placed, view.sheet === 1 ? (drawing.item?.id ?? null) : null);
   }
 }
 
-function energyText(joules: number): string {
-  const { value, unit } = energy(joules);
+function energyText(joules: number, scale?: { unit: string; joules: number }): string {
+  const { value, unit } = energy(joules, scale);
   return `${value} ${unit}`;
 }

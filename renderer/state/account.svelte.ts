@@ -28,6 +28,7 @@ export class Account {
   constructor(
     private readonly recording: () => Recording | null,
     private readonly mechanism: () => Mechanism | null,
+    private readonly given: () => ReadonlyMap<string, string>,
   ) {}
 
   /** Names of the stations on the sheet and in the account. */
@@ -35,7 +36,7 @@ export class Account {
     const documented = this.mechanism()?.stations ?? [];
     const implied = this.stations.filter(({ id }) => documented.every((station) => station.id !== id));
     const known = implied.map(({ id }) => ({ id, when: { kind: id === 'start' ? 'start' : 'end' } as const }));
-    return nameStations(implied[0]?.id === 'start' ? [...known, ...documented] : [...documented, ...known]);
+    return nameStations(implied[0]?.id === 'start' ? [...known, ...documented] : [...documented, ...known], this.given());
   });
 
   /** The reached station with this mark in its pennant. */

@@ -21,7 +21,9 @@ export class Drawing {
   readonly mechanism: Mechanism | null = $derived(this.result?.mechanism ?? null);
   readonly problems: readonly Problem[] = $derived(sorted(this.result?.problems ?? []));
   readonly errors = $derived(this.problems.filter(({ severity }) => severity === 'error').length);
-  readonly items: readonly Item[] = $derived(this.mechanism ? numberItems(this.mechanism) : []);
+  /** Names given in the document, by id. */
+  readonly names: ReadonlyMap<string, string> = $derived(namesIn(this.result?.document ?? {}));
+  readonly items: readonly Item[] = $derived(this.mechanism ? numberItems(this.mechanism, this.names) : []);
   readonly item: Item | null = $derived(this.items.find(({ id }) => id === this.picked) ?? this.items[0] ?? null);
   readonly problem: Problem | null = $derived(this.problems[this.shown] ?? null);
 
@@ -36,9 +38,13 @@ export class Drawing {
     return this.mechanism?.title ?? textOf(this.result?.document?.['title']) ?? '';
   }
 
-  get notes(): string[] {
-    const notes = textOf(this.result?.document?.['notes']) ?? '';
-    return notes.split(/\n+|(?<=[.!?])\s+(?=[A-ZÄÖÜ])/).filter((note) => note.trim() !== '');
+  /** The document's notes, a line each; a line that begins with a number keeps it. */
+  get notes(): { number: string; text: string }[] {
+    const lines = (textOf(this.result?.document?.['notes']) ?? '').split('\n').filter((line) => line.trim() !== '');
+    return lines.map((line) => {
+      const [, number = '', text = line] = /^\s*(\d+)[.)]?\s+(.*)$/.exec(line) ?? [];
+      return { number, text };
+    });
   }
 
   sheetField(field: SheetField): string {
@@ -51,6 +57,18 @@ export class Drawing {
     const count = this.problems.length;
     if (count > 0) this.shown = (this.shown + by + count) % count;
   }
+}
+
+/** Every `id` with its `name` in the document's lists; ids are unique in a document. */
+function namesIn(document: Record<string, unknown>): Map<string, string> {
+  const elements = Object.values(document).flatMap((value): unknown[] => (Array.isArray(value) ? value : []));
+  return new Map(
+    elements.flatMap((element): [string, string][] => {
+      if (typeof element !== 'object' || element === null) return [];
+      const { id, name } = element as { id?: unknown; name?: unknown };
+      return typeof id === 'string' && typeof name === 'string' ? [[id, name]] : [];
+    }),
+  );
 }
 
 function textOf(value: unknown): string | undefined {

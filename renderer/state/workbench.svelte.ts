@@ -1,5 +1,7 @@
 import type { Vec } from '../../sim/core/vec.js';
 import { zoneAt } from '../frame/geometry.js';
+import { bodyOf, valueAt } from '../../sim/recording/reader.js';
+import type { Recording } from '../../sim/recording/recording.js';
 import { CancelledError } from '../../sim/protocol/index.js';
 import { Account } from './account.svelte.js';
 import { Drawing } from './drawing.svelte.js';
@@ -13,6 +15,21 @@ export interface OpenedFile {
   name: string;
   text: string;
   size: number;
+}
+
+/** Whether a body's mass centre goes anywhere in a run: further than a thousandth of the mechanism's extent. */
+function travels(recording: Recording, id: string, extent: number): boolean {
+  const columns = bodyOf(recording, id)?.columns;
+  if (!columns) return false;
+  const far = (column: number) => {
+    let [least, most] = [Infinity, -Infinity];
+    for (let row = 0; row < recording.rowCount; row++) {
+      const value = valueAt(recording, row, column);
+      [least, most] = [Math.min(least, value), Math.max(most, value)];
+    }
+    return most - least > 1e-3 * extent;
+  };
+  return far(columns.x) || far(columns.y);
 }
 
 /** Where the sheet's origin is in the window [px], and the scale of the drawing. */
@@ -32,6 +49,7 @@ export class Workbench {
   readonly account = new Account(
     () => (this.run.status === 'running' ? null : this.run.recording),
     () => this.drawing.mechanism,
+    () => this.drawing.names,
   );
   /** Something that went wrong outside the document: one sentence. */
   trouble = $state('');
@@ -43,7 +61,11 @@ export class Workbench {
   readonly subject: string | null = $derived.by(() => {
     const { mechanism, picked } = this.drawing;
     const isBody = mechanism?.bodies.some(({ id }) => id === picked);
-    return (isBody ? picked : (mechanism?.system[0] ?? mechanism?.bodies[0]?.id)) ?? null;
+    if (isBody || !mechanism) return isBody ? picked : null;
+    const { recording, status } = this.run;
+    // A wheel on its own axle goes nowhere: of the bodies inside, the first that does tells more.
+    const moving = recording && status !== 'running' ? mechanism.system.find((id) => travels(recording, id, mechanism.extent)) : null;
+    return moving ?? mechanism.system[0] ?? mechanism.bodies[0]?.id ?? null;
   });
 
   constructor(private readonly startSolver: () => Solver) {

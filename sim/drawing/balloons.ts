@@ -1,9 +1,13 @@
 import type { Vec } from '../core/vec.js';
 import { circle, inkFill, line, narrow, outline, paperFill, type DrawOperation } from './operations.js';
+import type { Box } from './paper.js';
 
 export const balloonRadius = 12;
+const pitch = 2 * balloonRadius + 10;
+/** Distance of a row of balloons from what is drawn [px]. */
+const clear = 34;
 
-/** An item's place on the drawing: where its leader ends [px], and whether on an outline (dot inside, arrow on a line). */
+/** An item's place on the drawing: where its leader ends [px], and whether on a surface (dot) or on a line (arrow). */
 export interface BalloonAnchor {
   number: number;
   at: Vec;
@@ -11,33 +15,68 @@ export interface BalloonAnchor {
 }
 export interface Balloon extends BalloonAnchor {
   center: Vec;
+  /** The way its row or column goes on. */
+  flow: Vec;
 }
 
 /**
- * Puts balloons above their items, aligned in rows: items whose balloons would be close share the highest one's row and
- * are spread along it in the order of their items, so that leaders don't cross.
+ * Puts balloons around their items, aligned: a few neighbours stand in a row above them in the order of their items; a
+ * cluster of many is shared out to a column on either side and the row above, so that leaders don't cross.
  *
- * @param roof the y [px, down] above which a balloon must be at an x, given the half width around it
+ * @param around the box [px, y down] of what is drawn between two x
  */
-export function placeBalloons(anchors: readonly BalloonAnchor[], roof: (x: number, half: number) => number): Balloon[] {
-  const pitch = 2 * balloonRadius + 11;
+export function placeBalloons(anchors: readonly BalloonAnchor[], around: (left: number, right: number) => Box): Balloon[] {
   const sorted = [...anchors].sort((a, b) => a.at[0] - b.at[0] || a.at[1] - b.at[1]);
   const groups: BalloonAnchor[][] = [];
   for (const anchor of sorted) {
     const group = groups[groups.length - 1];
-    if (group && anchor.at[0] - mean(group) < (group.length / 2 + 0.5) * pitch) group.push(anchor);
+    if (group && anchor.at[0] - mean(group, 0) < (group.length / 2 + 0.5) * pitch) group.push(anchor);
     else groups.push([anchor]);
   }
-  return groups.flatMap((group) => {
-    const middle = mean(group) + 14;
-    const width = (group.length - 1) * pitch;
-    const y = roof(middle, width / 2 + pitch) - 34;
-    return group.map((anchor, i) => ({ ...anchor, center: [middle - width / 2 + i * pitch, y] as Vec }));
-  });
+  return apart(groups.flatMap((group) => (group.length > 4 ? ring(group, around) : row(group, around))));
 }
 
-function mean(group: readonly BalloonAnchor[]): number {
-  return group.reduce((sum, { at }) => sum + at[0], 0) / group.length;
+/** Moves a balloon on in its row or column until it covers none before it. */
+export function apart(balloons: readonly Balloon[]): Balloon[] {
+  const placed: Balloon[] = [];
+  for (const balloon of balloons) {
+    const { flow } = balloon;
+    let [x, y] = balloon.center;
+    const covers = ({ center }: Balloon) => Math.hypot(center[0] - x, center[1] - y) < 2 * balloonRadius + 2;
+    while (placed.some(covers)) [x, y] = [x + flow[0] * 4, y + flow[1] * 4];
+    placed.push({ ...balloon, center: [x, y] });
+  }
+  return placed;
+}
+
+
+function row(group: readonly BalloonAnchor[], around: (left: number, right: number) => Box): Balloon[] {
+  const middle = mean(group, 0) + 14;
+  const half = ((group.length - 1) * pitch) / 2;
+  const y = around(middle - half - pitch, middle + half + pitch).low - clear;
+  return group.map((anchor, i) => ({ ...anchor, flow: [1, 0], center: [middle - half + i * pitch, y] }));
+}
+
+/** A third to the left, a third to the right, the rest above. */
+function ring(group: readonly BalloonAnchor[], around: (left: number, right: number) => Box): Balloon[] {
+  const side = Math.ceil(group.length / 3);
+  const reach = 4 * pitch;
+  const box = around(group[0].at[0] - reach, group[group.length - 1].at[0] + reach);
+  const column = (part: readonly BalloonAnchor[], x: number): Balloon[] => {
+    const byHeight = [...part].sort((a, b) => a.at[1] - b.at[1]);
+    const top = mean(part, 1) - ((part.length - 1) * pitch) / 2;
+    return byHeight.map((anchor, i) => ({ ...anchor, flow: [0, 1], center: [x, top + i * pitch] }));
+  };
+  const above = group.slice(side, group.length - side);
+  return [
+    ...column(group.slice(0, side), box.left - clear),
+    ...(above.length > 0 ? row(above, () => box) : []),
+    ...column(group.slice(group.length - side), box.right + clear),
+  ];
+}
+
+function mean(group: readonly BalloonAnchor[], axis: 0 | 1): number {
+  return group.reduce((sum, { at }) => sum + at[axis], 0) / group.length;
 }
 
 /** A balloon: circle and number, with a leader that ends in a dot on a surface and an arrow on a line. */
@@ -50,11 +89,13 @@ export function balloonOperations({ number, at, center, onLine }: Balloon, picke
   const end: DrawOperation = onLine
     ? { kind: 'line', points: [at, barb(1), barb(-1)], closed: true, fill: inkFill }
     : circle(at, 2.2, { fill: inkFill });
+  const ring = picked
+    ? circle(center, balloonRadius, { stroke: outline, fill: { tone: 'marker' } })
+    : circle(center, balloonRadius, { stroke: { ...outline, width: 1.3 }, fill: paperFill });
   return [
     line([start, at], narrow),
     end,
-    circle(center, balloonRadius, { fill: paperFill }),
-    circle(center, balloonRadius, picked ? { stroke: outline, fill: { tone: 'marker', tint: 0.62 } } : { stroke: { ...outline, width: 1.3 } }), // prettier-ignore
+    ring,
     { kind: 'text', at: center, text: String(number), size: 14, weight: 500, tone: 'ink', anchor: [0.5, 0.5] },
   ];
 }

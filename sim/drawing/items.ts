@@ -10,10 +10,14 @@ export interface Item {
   name: string;
 }
 
-/** Numbers the elements as the parts list has them: bodies, tracks, springs, dampers, drives, joints. */
-export function numberItems(mechanism: Mechanism): Item[] {
-  const named = (kind: ItemKind, list: readonly { id: string; name?: string }[]) =>
-    list.map(({ id, name }) => ({ id, kind, name: name ?? wordsOf(id) }));
+/**
+ * Numbers the elements as the parts list has them: bodies, tracks, springs, dampers, drives, joints.
+ *
+ * @param names as the document gives them, by id; an element without one is called by its id, read as words
+ */
+export function numberItems(mechanism: Mechanism, names: ReadonlyMap<string, string> = new Map()): Item[] {
+  const named = (kind: ItemKind, list: readonly { id: string }[]) =>
+    list.map(({ id }) => ({ id, kind, name: names.get(id) ?? wordsOf(id) }));
   return [
     ...named('body', mechanism.bodies),
     ...named('track', mechanism.tracks),

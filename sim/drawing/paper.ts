@@ -42,16 +42,25 @@ export function boxAround(points: readonly Vec[]): Box | null {
   return box;
 }
 
-/** Largest standard scale at which a box [m] fits a field [px]; the smallest there is where none does. */
-export function fittingScale(box: Box, width: number, height: number): DrawingScale {
-  const fits = ({ pixels }: DrawingScale) =>
-    (box.right - box.left) * pixels <= width && (box.high - box.low) * pixels <= height;
-  return drawingScales.find(fits) ?? drawingScales[drawingScales.length - 1];
+/** The standard scales at which a box [m] fits a field [px], largest first; at least the smallest there is. */
+export function fittingScales(box: Box, width: number, height: number): readonly DrawingScale[] {
+  const fitting = drawingScales.filter(
+    ({ pixels }) => (box.right - box.left) * pixels <= width && (box.high - box.low) * pixels <= height,
+  );
+  return fitting.length > 0 ? fitting : drawingScales.slice(-1);
 }
 
 /** Sheet coordinates [m], y up, to paper [px], y down; the paper's origin is the sheet's. */
 export function toPaper([x, y]: Vec, pixels: number): Vec {
   return [x * pixels, -y * pixels];
+}
+
+/** Rounds up to a figure a scale may end with: finer than 1, 2, 5, so that a trace fills its field. */
+export function scaleEnd(value: number): number {
+  if (!(value > 0)) return 1;
+  const power = 10 ** Math.floor(Math.log10(value) + 1e-9);
+  const mantissa = [1, 1.2, 1.6, 2, 2.4, 3, 4, 5, 6, 8, 10].find((each) => each * power >= value * (1 - 1e-9)) ?? 10;
+  return mantissa * power;
 }
 
 /** Rounds up to 1, 2 or 5 times a power of ten. */

@@ -6,6 +6,7 @@ import { circle, inkFill, line, lineWidth, outline, paperFill, polygon, segments
 import type { DrawOperation } from '../operations.js';
 import { toPaper } from '../paper.js';
 import { carried, type Poses } from '../pose.js';
+import { hatchSide } from '../hatch.js';
 import { groundMark } from './ground-mark.js';
 import { linkLine } from './link.js';
 import { zigzag } from './spring.js';
@@ -58,11 +59,13 @@ function slide({ between, at, axis, limits }: Slide, context: DrawingContext): D
   ];
 }
 
-/** The line a slide runs on, hatched at its ends where it belongs to the fixed frame. */
+/** The line a slide runs on; where it belongs to the fixed frame, its ends are hatched along it. */
 export function guideSymbol(from: Vec, to: Vec, grounded: boolean): DrawOperation[] {
-  const along = unit([to[0] - from[0], to[1] - from[1]]);
-  const marks = grounded ? [...groundMark(from, [-along[0], -along[1]], 7), ...groundMark(to, along, 7)] : [];
-  return [line([from, to]), ...marks];
+  if (!grounded) return [line([from, to])];
+  const [ux, uy] = unit([to[0] - from[0], to[1] - from[1]]);
+  const end = (at: Vec, sign: number): Vec[] => [at, [at[0] + sign * 13 * ux, at[1] + sign * 13 * uy]];
+  const hatch = (path: Vec[]) => segments(hatchSide(path, { side: ux < 0 || (ux === 0 && uy < 0) ? -1 : 1, spacing: 4.5, depth: 4.5 }));
+  return [line([from, to]), hatch(end(from, 1)), hatch(end(to, -1).reverse())];
 }
 
 export function slideBox(at: Vec, along: Vec): DrawOperation[] {

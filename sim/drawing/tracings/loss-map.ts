@@ -1,5 +1,5 @@
 import type { Vec } from '../../core/vec.js';
-import { buildTrack, nearestOnRun, newFoot, pointAt, type SmoothRun, type TrackPath } from '../../geometry/index.js';
+import { buildTrack, nearestOnRun, newFoot, pointAt, type Piece, type SmoothRun, type TrackPath } from '../../geometry/index.js';
 import type { Mechanism } from '../../mechanism/model.js';
 import type { AccountSpec, ContactSpec, Recording } from '../../recording/recording.js';
 import { contactOf, valueAt } from '../../recording/reader.js';
@@ -51,16 +51,27 @@ function addLoss(tally: Tally, recording: Recording, account: AccountSpec, conta
   tally.add(touches(row - 1) ? place(row - 1) : end, end, joules);
 }
 
+/** A stretch of a run within one drawn segment: what was lost in it, and over which part of it. */
+interface Cell {
+  segment: number;
+  from: number;
+  to: number;
+  joules: number;
+  /** Arc lengths between which it was passed; low > high while it was not. */
+  low: number;
+  high: number;
+}
+
 /** Heat by cells of a track's runs. */
 class Tally {
-  private readonly cells: Float64Array[];
+  private readonly cells: Cell[][];
   private readonly foot = newFoot();
 
   constructor(
     private readonly path: TrackPath,
-    private readonly size: number,
+    size: number,
   ) {
-    this.cells = path.runs.map((run) => new Float64Array(Math.max(1, Math.ceil(run.length / size))));
+    this.cells = path.runs.map((run) => run.pieces.flatMap((piece) => cellsOf(piece, size)));
   }
 
   /** Spreads joules evenly along the track between two contact places; on two runs, all goes to the second. */
@@ -68,16 +79,20 @@ class Tally {
     const b = this.nearest(end);
     const a = this.nearest(start);
     const from = a.run === b.run ? a.s : b.s;
-    const cells = this.cells[b.run];
-    const width = this.path.runs[b.run].length / cells.length;
-    const index = (s: number) => Math.min(cells.length - 1, Math.max(0, Math.floor(s / width)));
     const [low, high] = [Math.min(from, b.s), Math.max(from, b.s)];
-    if (high - low < 1e-12) cells[index(b.s)] += joules;
-    else
-      for (let i = index(low); i <= index(high); i++) {
-        const covered = Math.min(high, (i + 1) * width) - Math.max(low, i * width);
-        cells[i] += (joules * Math.max(0, covered)) / (high - low);
-      }
+    const cells = this.cells[b.run];
+    if (high - low < 1e-12) {
+      const cell = cells.find(({ to }) => to >= b.s) ?? cells[cells.length - 1];
+      cell.joules += joules;
+      return;
+    }
+    for (const cell of cells) {
+      const [first, last] = [Math.max(low, cell.from), Math.min(high, cell.to)];
+      if (last <= first) continue;
+      cell.joules += (joules * (last - first)) / (high - low);
+      cell.low = Math.min(cell.low, first);
+      cell.high = Math.max(cell.high, last);
+    }
   }
 
   private nearest([x, y]: Vec): { run: number; s: number } {
@@ -89,30 +104,47 @@ class Tally {
     return best;
   }
 
+  /** Neighbouring cells of a segment make one band. */
   bands(pair: [string, string], names: readonly (string | undefined)[]): LossBand[] {
     const bands: LossBand[] = [];
     this.path.runs.forEach((run, index) => {
-      const cells = this.cells[index];
-      const width = run.length / cells.length;
-      cells.forEach((joules, i) => {
-        if (joules === 0) return;
-        const segment = pointAt(run, (i + 0.5) * width).segment;
+      let before: Cell | null = null;
+      for (const cell of this.cells[index]) {
+        const isPassed = cell.high > cell.low && cell.joules !== 0;
         const last = bands[bands.length - 1];
-        const places = cellPlaces(run, this.path.side, i * width, width, joules / width);
-        if (last?.segment === segment && i > 0 && cells[i - 1] !== 0) {
-          last.joules += joules;
-          last.places.push(...places);
-        } else bands.push({ pair, track: this.path.id, segment, name: names[segment], joules, places });
-      });
+        const goesOn = before !== null && before.segment === cell.segment;
+        if (isPassed && goesOn && last) {
+          last.joules += cell.joules;
+          last.places.push(...cellPlaces(run, this.path.side, cell));
+        } else if (isPassed) {
+          const { segment, joules } = cell;
+          const places = cellPlaces(run, this.path.side, cell);
+          bands.push({ pair, track: this.path.id, segment, name: names[segment], joules, places });
+        }
+        before = isPassed ? cell : null;
+      }
     });
     return bands;
   }
 }
 
-function cellPlaces(run: SmoothRun, side: TrackPath['side'], from: number, width: number, density: number) {
+function cellsOf({ from, length, segment }: Piece, size: number): Cell[] {
+  const count = Math.max(1, Math.ceil(length / size));
+  return Array.from({ length: count }, (_, i) => ({
+    segment,
+    from: from + (length * i) / count,
+    to: from + (length * (i + 1)) / count,
+    joules: 0,
+    low: Infinity,
+    high: -Infinity,
+  }));
+}
+
+function cellPlaces(run: SmoothRun, side: TrackPath['side'], { low, high, joules }: Cell): LossBand['places'] {
+  const density = joules / (high - low);
   return [0, 0.5, 1].map((share) => {
-    const { x, y, tx, ty } = pointAt(run, from + share * width);
+    const { x, y, tx, ty } = pointAt(run, low + share * (high - low));
     const into: Vec = side === 'right' ? [-ty, tx] : [ty, -tx];
-    return { at: [x, y] as Vec, into, density };
+    return { at: [x, y], into, density };
   });
 }

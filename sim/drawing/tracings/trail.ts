@@ -21,7 +21,7 @@ export function trail(recording: Recording, body: BodySpec, pixels: number, span
     const mark = markAt(recording, body, pixels, k * interval);
     marks.push(...mark.stroke);
     // Figures keep apart, or slow stretches would print over themselves.
-    if (k % 2 === 1 || (figured && Math.hypot(mark.label[0] - figured[0], mark.label[1] - figured[1]) < 46)) continue;
+    if (k === 0 || k % 2 === 1 || (figured && Math.hypot(mark.label[0] - figured[0], mark.label[1] - figured[1]) < 46)) continue;
     figured = mark.label;
     figures.push(figure(mark.label, k * interval, interval));
   }
