@@ -88,9 +88,9 @@ export class Engine {
     this.bookGravity();
     this.log.record();
     this.log.reach(this.watch.reach(({ when }) => when.kind === 'start' || isDue(when, 0), 0));
+    this.sliding.renew();
     // Nothing was closed before the start, so a body drawn running into what it touches strikes it at once.
     this.strike(false);
-    this.sliding.renew();
     this.checkEnd();
   }
 
@@ -144,6 +144,7 @@ export class Engine {
     this.sliding.notice(this.log);
     this.passStations(met);
     this.noticePartings();
+    this.sliding.renewFresh();
     const soft = this.shock.softStrikes(scene.state);
     if (soft.length > 0) this.log.struck(soft, this.log.record());
     this.strike(true);
@@ -236,14 +237,15 @@ export class Engine {
         rowBefore = this.log.record();
         if (counts) this.log.struck(struck, rowBefore);
       });
+      if (this.shock.hasChanged) this.log.moved();
       if (strikes.length === 0) return;
-      this.log.moved();
       this.reportCut(strikes);
       this.turnStations(before, rowBefore);
       this.log.record();
       this.shock.remember();
       for (const touch of manager.touches) manager.settle(touch);
       this.sliding.renew();
+      this.sliding.notice(this.log);
     }
   }
 

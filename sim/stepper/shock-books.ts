@@ -69,7 +69,7 @@ export class ShockBooks {
   }
 
   private bookTouch(touch: Touch): void {
-    const pair = this.manager.pairs[touch.pair];
+    const pair = this.manager.pairs[touch.solvedPair];
     const { contact, bodyA, bodyB } = touch;
     for (let j = 0; j < contact.v_pointCount; j += 1) {
       const point = contact.v_points[j];
@@ -84,7 +84,7 @@ export class ShockBooks {
       const { c } = this.scene.bodies[bodyB].c_position;
       pair.reading.x = c.x + point.rB.x;
       pair.reading.y = c.y + point.rB.y;
-      pair.reading.segment = touch.segment;
+      pair.reading.segment = touch.solvedSegment;
     }
   }
 }

@@ -2,7 +2,7 @@ import { TimeStep } from 'planck';
 import { AxisRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
-import type { Touch } from './contact/touch.js';
+import { NO_KEY, type Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
 import { getVelocities, partInner, setVelocities, type Scene } from './scene.js';
 import { ShockBooks } from './shock-books.js';
@@ -62,6 +62,8 @@ export class Shock {
   private holding: Friction[] = [];
   /** What part of the restitution the last impact was left with, so that it added no energy. */
   restitutionCut = 1;
+  /** The last call of `resolve` changed the velocities. */
+  hasChanged = false;
   /** Takes every impact as plastic. */
   isPlastic = false;
 
@@ -150,7 +152,7 @@ export class Shock {
   }
 
   private isRubbing(touch: Touch): boolean {
-    return this.manager.pairs[touch.pair].staticFriction > 0;
+    return this.manager.pairs[touch.solvedPair].staticFriction > 0;
   }
 
   /**
@@ -162,6 +164,7 @@ export class Shock {
   resolve(state: State, beforeImpact: (strikes: Strike[]) => void): Strike[] {
     this.ready(state);
     const { struck, stops, isImpact, isOff } = this.approaches();
+    this.hasChanged = isImpact || isOff;
     if (!isImpact && !isOff) {
       this.finish();
       return [];
@@ -179,6 +182,8 @@ export class Shock {
     beforeImpact(strikes);
     this.impact(struck, stops, state);
     this.finish();
+    // What pressed before the impact may well lift off after it.
+    for (const touch of this.manager.touches) touch.pressed[0] = touch.pressed[1] = NO_KEY;
     return strikes;
   }
 
@@ -250,10 +255,10 @@ export class Shock {
 
   private solveImpact(struck: Struck[], stops: { stop: Stop; approach: number }[], cut: number): void {
     for (const touch of this.solver.rigid.live) {
-      touch.contact.v_friction = this.manager.pairs[touch.pair].kineticFriction;
+      touch.contact.v_friction = this.manager.pairs[touch.solvedPair].kineticFriction;
     }
     for (const { touch, point, approach } of struck) {
-      const { restitution, restSpeed } = this.manager.pairs[touch.pair];
+      const { restitution, restSpeed } = this.manager.pairs[touch.solvedPair];
       touch.contact.v_points[point].velocityBias = approach < restSpeed ? 0 : cut * restitution * approach;
     }
     const targets = new Map(stops.map(({ stop, approach }) => [stop, cut * stop.restitution * approach]));
@@ -321,7 +326,7 @@ export class Shock {
   private strikes(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): Strike[] {
     const byPair = new Map<Pair, Struck[]>();
     for (const item of struck) {
-      const pair = this.manager.pairs[item.touch.pair];
+      const pair = this.manager.pairs[item.touch.solvedPair];
       byPair.set(pair, [...(byPair.get(pair) ?? []), item]);
     }
     const strikes: Strike[] = [];

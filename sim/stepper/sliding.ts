@@ -1,5 +1,6 @@
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
+import type { Touch } from './contact/touch.js';
 import type { RunLog } from './run-log.js';
 import { setVelocities, type Scene } from './scene.js';
 import type { VelocitySolver } from './solver.js';
@@ -17,15 +18,24 @@ export class SlidingModes {
 
   /** Starts everything again by the rates it has: at the start, and after an impact. */
   renew(): void {
-    const { scene, solver } = this;
-    setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
-    solver.rigid.prepare(0, 0, scene.time);
-    for (const touch of solver.rigid.live) touch.sliding = signOf(solver.rigid.slip(touch));
-    for (const friction of solver.frictions()) {
+    for (const touch of this.ready()) touch.sliding = signOf(this.solver.rigid.slip(touch));
+    for (const friction of this.solver.frictions()) {
       friction.aim();
       friction.sliding = signOf(friction.slip());
     }
-    for (const pair of this.manager.pairs) pair.wasSliding = this.isSliding(pair);
+  }
+
+  /** Contacts that have just closed, or come onto another pair's stretch, start by the rates they have. */
+  renewFresh(): void {
+    if (!this.manager.touches.some(({ isFresh }) => isFresh)) return;
+    for (const touch of this.ready()) if (touch.isFresh) touch.sliding = signOf(this.solver.rigid.slip(touch));
+  }
+
+  private ready(): readonly Touch[] {
+    const { scene, solver } = this;
+    setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
+    solver.rigid.prepare(0, 0, scene.time);
+    return solver.rigid.live;
   }
 
   /** What stopped sliding at a step's end sticks from now on, until its static limit is met. */
@@ -33,20 +43,20 @@ export class SlidingModes {
     for (const passage of met) if (passage.kind === 'slip') passage.source.sliding = 0;
   }
 
-  /** Tells of pairs that began or ceased to slide in the last step. */
+  /** Tells of pairs in lasting contact that began or ceased to slide. */
   notice(log: RunLog): void {
     for (const pair of this.manager.pairs) {
-      if (pair.reading.points === 0 || pair.friction === null) continue;
+      if (pair.friction === null) continue;
       const slides = this.isSliding(pair);
       if (slides === pair.wasSliding) continue;
       pair.wasSliding = slides;
-      log.pair(slides ? 'slips' : 'sticks', pair);
+      if (pair.isLasting) log.pair(slides ? 'slips' : 'sticks', pair);
     }
   }
 
   private isSliding({ index }: Pair): boolean {
     const { rigid, soft } = this.solver;
     if (soft.live.some((point) => point.pair.index === index && point.sliding !== 0)) return true;
-    return rigid.live.some((touch) => touch.pair === index && touch.sliding !== 0);
+    return rigid.live.some((touch) => touch.solvedPair === index && touch.sliding !== 0);
   }
 }

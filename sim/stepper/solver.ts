@@ -96,8 +96,8 @@ export class VelocitySolver {
 
   private normalImpulse(rolling: RollingResistance): number {
     let sum = 0;
-    for (const { pair, contact } of this.rigid.live) {
-      if (this.manager.pairs[pair] !== rolling.pair) continue;
+    for (const { solvedPair, contact } of this.rigid.live) {
+      if (solvedPair !== rolling.pair.index) continue;
       for (let j = 0; j < contact.v_pointCount; j += 1) sum += contact.v_points[j as 0 | 1].normalImpulse;
     }
     return sum + this.soft.normalImpulse(rolling.pair);

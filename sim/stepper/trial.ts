@@ -15,6 +15,7 @@ const WARM_LEAST = 1e-3;
 /** Something whose value turns negative within a step; values are in units of their own tolerance. */
 export type Passage =
   | { kind: 'gap'; source: Touch; value: number }
+  | { kind: 'seam'; source: Touch; value: number }
   | { kind: 'slip'; source: Touch | Friction; value: number }
   | { kind: 'stop'; source: Stop; value: number }
   | { kind: 'station'; source: number; value: number };
@@ -103,6 +104,8 @@ export class Trial {
     for (const source of this.manager.touches) {
       const value = this.gapValue(source);
       if (value < -1) found.push({ kind: 'gap', source, value });
+      const beyond = seamValue(this.manager.seamNow(source));
+      if (beyond < -1) found.push({ kind: 'seam', source, value: beyond });
     }
     for (const joint of this.solver.joints) {
       for (const source of joint.stops) {
@@ -124,6 +127,7 @@ export class Trial {
   /** Value of a passage at the trial's end. */
   valueOf(passage: Passage): number {
     if (passage.kind === 'gap') return this.gapValue(passage.source);
+    if (passage.kind === 'seam') return seamValue(this.manager.seamNow(passage.source));
     if (passage.kind === 'slip') return this.slipValue(passage.source);
     if (passage.kind === 'stop') return stopValue(passage.source, passage.source.gap());
     return this.stationValue(passage.source);
@@ -132,6 +136,7 @@ export class Trial {
   /** Value of a passage at the step's start. */
   startValueOf(passage: Passage, state: State): number {
     if (passage.kind === 'gap') return (passage.source.openGap - SKIN / 4) / (SKIN / 4);
+    if (passage.kind === 'seam') return seamValue(passage.source.startSeam);
     if (passage.kind === 'slip') return this.startSlip.get(passage.source) ?? Infinity;
     if (passage.kind === 'stop') return stopValue(passage.source, passage.source.gapAtStart);
     this.motion.state = state;
@@ -158,3 +163,6 @@ export class Trial {
 }
 
 const stopValue = (stop: Stop, gap: number): number => (stop.isClosed ? Infinity : (gap - SKIN / 4) / (SKIN / 4));
+
+/** Met a little beyond the seam, so that the next step starts on the other stretch. */
+const seamValue = (distance: number): number => (distance + SKIN / 2) / (SKIN / 4);

@@ -1,4 +1,13 @@
-import { joinTracks, nearestOnRun, newFoot, type Foot, type RunLink, type SmoothRun } from '../../geometry/index.js';
+import {
+  joinTracks,
+  nearestOnRun,
+  newFoot,
+  pointAt,
+  TOUCHING,
+  type Foot,
+  type RunLink,
+  type SmoothRun,
+} from '../../geometry/index.js';
 import type { Track } from '../../mechanism/kinds/track.js';
 
 /** One smooth run of a track in a chain. `along` is +1 where the chain runs with the track's path, −1 against it. */
@@ -8,6 +17,8 @@ export interface Link {
   along: 1 | -1;
   /** Sign of the free side relative to the run's path: +1 left, −1 right, 0 both. */
   free: 1 | -1 | 0;
+  /** Lines only. */
+  isStraight: boolean;
 }
 
 /** Bounding box in engine units. */
@@ -28,8 +39,20 @@ export interface Chain {
   /** One straight line: every point of a face meets it along one normal. */
   straight: boolean;
   /** Open ends, corners included [engine length]. */
-  ends: { x: number; y: number; link: number }[];
+  ends: ChainEnd[];
   bounds: Bounds;
+}
+
+export interface ChainEnd {
+  x: number;
+  y: number;
+  link: number;
+  segment: number;
+  /** Direction of the link's path there. */
+  tx: number;
+  ty: number;
+  /** Another track lies against it, so that nothing flat can reach it: the inside of a corner. */
+  isHidden: boolean;
 }
 
 export interface ChainFoot {
@@ -52,6 +75,7 @@ export function buildChains(tracks: readonly Track[], extent: number): Chain[] {
       chains.push(chainFrom(run, used, owner, tracks));
     }
   }
+  for (const chain of chains) hideInsideCorners(chain, chains, TOUCHING * extent);
   return chains;
 }
 
@@ -70,7 +94,8 @@ function chainFrom(
   const links = steps.map(([run, along]): Link => {
     const track = owner.get(run) ?? 0;
     const side = tracks[track].side;
-    return { run, track, along, free: side === 'both' ? 0 : side === 'left' ? 1 : -1 };
+    const isStraight = run.pieces.every((piece) => piece.kind === 'line');
+    return { run, track, along, free: side === 'both' ? 0 : side === 'left' ? 1 : -1, isStraight };
   });
   const closed = isRing || (links.length === 1 && seed.closed);
   const single = links[0].run;
@@ -98,15 +123,47 @@ function walk(seed: SmoothRun, direction: 1 | -1, used: ReadonlySet<SmoothRun>):
   return met;
 }
 
-function openEnds(links: Link[]): Chain['ends'] {
-  const first = links[0];
-  const last = links[links.length - 1];
-  const [sx, sy] = first.along === 1 ? first.run.start : first.run.end;
-  const [ex, ey] = last.along === 1 ? last.run.end : last.run.start;
-  return [
-    { x: sx, y: sy, link: 0 },
-    { x: ex, y: ey, link: links.length - 1 },
-  ];
+function openEnds(links: Link[]): ChainEnd[] {
+  const last = links.length - 1;
+  const end = (link: number, atStart: boolean): ChainEnd => {
+    const { run, along } = links[link];
+    const { x, y, tx, ty, segment } = pointAt(run, atStart === (along === 1) ? 0 : run.length);
+    return { x, y, link, segment, tx, ty, isHidden: false };
+  };
+  return [end(0, true), end(last, false)];
+}
+
+const other: ChainFoot = { foot: newFoot(), link: 0, held: false };
+
+/** Marks the ends of a chain that another track (or its own far end) stands against, on the free side. */
+function hideInsideCorners(chain: Chain, chains: readonly Chain[], near: number): void {
+  chain.ends.forEach((end, index) => {
+    const { free } = chain.links[end.link];
+    if (free === 0) return;
+    const [nx, ny] = [-end.ty * free, end.tx * free];
+    end.isHidden = chains.some((candidate) => {
+      if (candidate === chain && chain.ends.length === 0) return false;
+      const met = candidate === chain ? ownFarEnd(chain, index, near) : nearestOnChain(candidate, end.x, end.y, other);
+      if (!met || Math.abs(met.foot.distance) > near) return false;
+      if (candidate !== chain && !met.held && !isAtEnd(candidate, met, near)) return true;
+      // Where two ends meet, the other path leads away from here, into our free side or out of it.
+      const away = met.foot.s <= near ? 1 : -1;
+      return away * (met.foot.tx * nx + met.foot.ty * ny) > 1e-9;
+    });
+  });
+}
+
+function ownFarEnd(chain: Chain, index: number, near: number): ChainFoot | null {
+  const [here, there] = [chain.ends[index], chain.ends[1 - index]];
+  if (Math.hypot(here.x - there.x, here.y - there.y) > near) return null;
+  const { run } = chain.links[there.link];
+  const atStart = Math.hypot(run.start[0] - there.x, run.start[1] - there.y) <= near;
+  pointAt(run, atStart ? 0 : run.length, other.foot);
+  return other;
+}
+
+function isAtEnd({ links }: Chain, { foot, link }: ChainFoot, near: number): boolean {
+  return foot.s <= near || foot.s >= links[link].run.length - near;
 }
 
 function boundsOf(links: Link[]): Bounds {

@@ -1,40 +1,80 @@
 import { MANIFOLD_CIRCLES, MANIFOLD_FACE_B, type Pose } from '../planck-internals.js';
-import type { ArcPiece } from '../../geometry/index.js';
-import type { Chain } from './chain.js';
+import { pieceExtremeAlong } from '../../geometry/index.js';
+import type { Chain, Link } from './chain.js';
 import type { CoreShape, CornersShape } from './shapes.js';
 import type { PairOf } from './surface.js';
 import { setCandidate, type Touch } from './touch.js';
 
+/** A point of a track that a face or a round end of a body can meet. `vertex` ≥ 0: met by that round end. */
+interface Feature {
+  gap: number;
+  edge: number;
+  vertex: number;
+  x: number;
+  y: number;
+  /** Direction of the path there. */
+  tx: number;
+  ty: number;
+  key: number;
+  link: number;
+  segment: number;
+}
+
 /**
- * Contact of a body's flat faces (and a bar's round ends) with the corners, ends and bulging arcs of a chain, where the
- * track is the sharper of the two: a box that tips over an edge or rides on a hump.
+ * Contact of a body's flat faces (and a bar's round ends) with the corners, ends and bulges of a chain, where the track
+ * is the sharper of the two: a box that tips over an edge or rides on a hump. The two nearest points on one face count.
  */
 export function coreAgainstCorners(touch: Touch, pose: Pose, pairOf: PairOf): void {
   const { chain } = touch.shapeA as CornersShape;
   touch.count = 0;
-  best.gap = Infinity;
-  chain.ends.forEach((end, index) => {
-    againstPoint(touch.shapeB, pose, end.x, end.y, index, chain.links[end.link].track);
-  });
-  for (const link of chain.links) {
-    for (const piece of link.run.pieces) {
-      if (piece.kind === 'arc') againstArc(touch.shapeB, pose, piece, link);
-    }
-  }
-  if (best.gap === Infinity) return;
-  touch.pair = pairOf(touch.bodyB, -1, best.track);
-  touch.segment = best.segment;
-  place(touch);
+  const features = featuresOf(touch.shapeB, chain, pose);
+  const nearest = leastOf(features);
+  if (!nearest) return;
+  touch.pair = pairOf(touch.bodyB, -1, chain.links[nearest.link].track);
+  touch.segment = nearest.segment;
+  touch.foot.link = nearest.link;
+  touch.foot.foot.tx = nearest.tx;
+  touch.foot.foot.ty = nearest.ty;
+  place(touch, nearest);
+  if (nearest.vertex >= 0) return;
+  const second = leastOf(
+    features.filter((other) => other !== nearest && other.vertex < 0 && other.edge === nearest.edge),
+  );
+  if (!second) return;
+  setCandidate(touch, 1, second.key, second.gap, second.x, second.y);
+  touch.count = 2;
 }
 
-/** The nearest feature found so far. */
-const best = { gap: Infinity, edge: -1, vertex: -1, x: 0, y: 0, key: 0, track: 0, segment: 0 };
+function featuresOf(core: CoreShape, chain: Chain, pose: Pose): Feature[] {
+  const features: Feature[] = [];
+  chain.ends.forEach((end, index) => {
+    if (end.isHidden) return;
+    const feature = meetPoint(core, pose, end.x, end.y);
+    if (!feature) return;
+    features.push({ ...feature, ...end, key: 64 + 16 * index + (feature.vertex >= 0 ? 8 : 0), segment: end.segment });
+  });
+  chain.links.forEach((link, index) => {
+    if (link.isStraight) return;
+    core.normals.forEach((_, edge) => features.push(...bulges(core, edge, pose, link, index)));
+  });
+  return features;
+}
 
-function againstPoint(core: CoreShape, pose: Pose, x: number, y: number, index: number, track: number): void {
-  const dx = x - pose.p.x;
-  const dy = y - pose.p.y;
-  const lx = pose.q.c * dx + pose.q.s * dy;
-  const ly = -pose.q.s * dx + pose.q.c * dy;
+/** Nearest by size of the gap: a point deep in the body is behind another face. */
+function leastOf(features: readonly Feature[]): Feature | undefined {
+  let least: Feature | undefined;
+  for (const feature of features) if (!least || Math.abs(feature.gap) < Math.abs(least.gap)) least = feature;
+  return least;
+}
+
+function toBody({ p, q }: Pose, x: number, y: number): [number, number] {
+  const dx = x - p.x;
+  const dy = y - p.y;
+  return [q.c * dx + q.s * dy, -q.s * dx + q.c * dy];
+}
+
+function meetPoint(core: CoreShape, pose: Pose, x: number, y: number): Pick<Feature, 'gap' | 'edge' | 'vertex'> | null {
+  const [lx, ly] = toBody(pose, x, y);
   let out = -Infinity;
   let edge = 0;
   core.normals.forEach((normal, i) => {
@@ -45,12 +85,14 @@ function againstPoint(core: CoreShape, pose: Pose, x: number, y: number, index: 
     edge = i;
   });
   const vertex = out > 0 || core.vertices.length === 2 ? beyond(core, edge, lx, ly) : -1;
-  if (vertex >= 0 && core.m_radius === 0) return;
-  const corner = core.vertices[Math.max(vertex, 0)];
-  const gap = (vertex >= 0 ? Math.hypot(lx - corner.x, ly - corner.y) : out) - core.m_radius;
-  keep(gap, edge, vertex, x, y, 64 + index * 16 + (vertex >= 0 ? 8 : 0), track, 0);
+  // Two sharp corners have no normal between them and never meet.
+  if (vertex >= 0 && core.m_radius === 0) return null;
+  if (vertex < 0) return { gap: out - core.m_radius, edge, vertex };
+  const corner = core.vertices[vertex];
+  return { gap: Math.hypot(lx - corner.x, ly - corner.y) - core.m_radius, edge, vertex };
 }
 
+/** The end of an edge that a point lies beyond, or −1 where its foot is on the edge. */
 function beyond(core: CoreShape, edge: number, x: number, y: number): number {
   const from = core.vertices[edge];
   const next = (edge + 1) % core.vertices.length;
@@ -60,69 +102,55 @@ function beyond(core: CoreShape, edge: number, x: number, y: number): number {
   return along > (to.x - from.x) ** 2 + (to.y - from.y) ** 2 ? next : -1;
 }
 
-/** The point of a bulging arc whose surface looks straight at a face, where it lies on the arc and on the face. */
-function againstArc(core: CoreShape, pose: Pose, arc: ArcPiece, link: Chain['links'][number]): void {
-  const free = link.free === 0 ? Math.sign(arc.curvature) * -1 : link.free;
-  if (arc.curvature * free >= 0) return;
-  const radius = 1 / Math.abs(arc.curvature);
-  const bend = Math.sign(arc.curvature);
-  const cx = arc.start[0] - arc.tangent[1] * bend * radius;
-  const cy = arc.start[1] + arc.tangent[0] * bend * radius;
-  core.normals.forEach((normal, edge) => {
-    const nx = pose.q.c * normal.x - pose.q.s * normal.y;
-    const ny = pose.q.s * normal.x + pose.q.c * normal.y;
-    const x = cx - nx * radius;
-    const y = cy - ny * radius;
-    if (!isOnArc(arc, x - cx, y - cy, radius)) return;
-    const dx = x - pose.p.x;
-    const dy = y - pose.p.y;
-    const lx = pose.q.c * dx + pose.q.s * dy;
-    const ly = -pose.q.s * dx + pose.q.c * dy;
-    if (beyond(core, edge, lx, ly) >= 0) return;
-    const v = core.vertices[edge];
+/** Points of a link's arcs and splines that bulge towards a face and look straight at it. */
+function bulges(core: CoreShape, edge: number, pose: Pose, link: Link, index: number): Feature[] {
+  const normal = core.normals[edge];
+  const nx = pose.q.c * normal.x - pose.q.s * normal.y;
+  const ny = pose.q.s * normal.x + pose.q.c * normal.y;
+  const v = core.vertices[edge];
+  return pieceExtremeAlong(link.run, nx, ny).flatMap((foot) => {
+    const free = link.free === 0 ? -Math.sign(foot.curvature) : link.free;
+    const isBulge = foot.curvature * free < 0;
+    const facing = free * (foot.tx * ny - foot.ty * nx);
+    if (!isBulge || facing >= 0) return [];
+    const [lx, ly] = toBody(pose, foot.x, foot.y);
+    if (beyond(core, edge, lx, ly) >= 0) return [];
     const gap = normal.x * (lx - v.x) + normal.y * (ly - v.y) - core.m_radius;
-    // A face far behind the arc is another side of the body.
-    if (gap > -radius) keep(gap, edge, -1, x, y, 256 + arc.segment * 16 + edge, link.track, arc.segment);
+    // A face farther behind than the bulge is thick belongs to another side of the body.
+    if (gap < -1 / Math.abs(foot.curvature)) return [];
+    const key = 1024 + (index * 64 + foot.piece) * 64 + edge;
+    return [
+      {
+        gap,
+        edge,
+        vertex: -1,
+        x: foot.x,
+        y: foot.y,
+        tx: foot.tx,
+        ty: foot.ty,
+        key,
+        link: index,
+        segment: foot.segment,
+      },
+    ];
   });
 }
 
-function isOnArc(arc: ArcPiece, rx: number, ry: number, radius: number): boolean {
-  const sx = arc.tangent[1] * Math.sign(arc.curvature) * radius;
-  const sy = -arc.tangent[0] * Math.sign(arc.curvature) * radius;
-  const turned = Math.atan2(sx * ry - sy * rx, sx * rx + sy * ry) * Math.sign(arc.curvature);
-  const swept = arc.length / radius;
-  return (turned < 0 ? turned + 2 * Math.PI : turned) <= swept;
-}
-
-function keep(
-  gap: number,
-  edge: number,
-  vertex: number,
-  x: number,
-  y: number,
-  key: number,
-  track: number,
-  segment: number,
-): void {
-  if (Math.abs(gap) >= Math.abs(best.gap)) return;
-  Object.assign(best, { gap, edge, vertex, x, y, key, track, segment });
-}
-
-function place(touch: Touch): void {
+function place(touch: Touch, { edge, vertex, x, y, key, gap }: Feature): void {
   const core = touch.shapeB;
-  if (best.vertex >= 0) {
-    touch.type = MANIFOLD_CIRCLES;
-    touch.point.x = best.x;
-    touch.point.y = best.y;
-    const v = core.vertices[best.vertex];
-    setCandidate(touch, 0, best.key, best.gap, v.x, v.y);
-  } else {
-    touch.type = MANIFOLD_FACE_B;
-    touch.normal.x = core.normals[best.edge].x;
-    touch.normal.y = core.normals[best.edge].y;
-    touch.point.x = core.vertices[best.edge].x;
-    touch.point.y = core.vertices[best.edge].y;
-    setCandidate(touch, 0, best.key, best.gap, best.x, best.y);
-  }
   touch.count = 1;
+  if (vertex >= 0) {
+    touch.type = MANIFOLD_CIRCLES;
+    touch.point.x = x;
+    touch.point.y = y;
+    const v = core.vertices[vertex];
+    setCandidate(touch, 0, key, gap, v.x, v.y);
+    return;
+  }
+  touch.type = MANIFOLD_FACE_B;
+  touch.normal.x = core.normals[edge].x;
+  touch.normal.y = core.normals[edge].y;
+  touch.point.x = core.vertices[edge].x;
+  touch.point.y = core.vertices[edge].y;
+  setCandidate(touch, 0, key, gap, x, y);
 }

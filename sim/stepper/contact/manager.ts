@@ -10,7 +10,7 @@ import { coresOf, cornersOf } from './outline.js';
 import { buildPair, type Pair } from './pair.js';
 import { CORE, CoreShape, CornersShape, SURFACE, SurfaceShape } from './shapes.js';
 import { coreAgainstSurface, type PairOf } from './surface.js';
-import { isClosedKey, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
+import { fillManifold, isClosedKey, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
 
 /** A point nearer than this is closed [engine length]; touches are found to a quarter of it. */
 export const SKIN = 1e-7;
@@ -182,6 +182,30 @@ export class ContactManager {
     return drop > travel ? Infinity : gap;
   }
 
+  /**
+   * How far a closed point is from where another contact pair takes over (the next track of a chain), negative beyond:
+   * friction changes there at once, not at the next step.
+   */
+  seamNow(touch: Touch): number {
+    if (touch.shapeA.kind !== SURFACE || touch.shapeA.chain.links.length < 2 || !this.isActive(touch)) return Infinity;
+    const { chain } = touch.shapeA;
+    const { foot, link } = touch.foot;
+    const pairAt = (index: number): number => this.pairOf(touch.bodyB, -1, chain.links[index].track);
+    const fromEntry = (index: number, s: number): number =>
+      chain.links[index].along === 1 ? s : chain.links[index].run.length - s;
+    const count = chain.links.length;
+    const { startLink } = touch;
+    const [before, after] = chain.closed
+      ? [(startLink + count - 1) % count, (startLink + 1) % count]
+      : [startLink - 1, startLink + 1];
+    const differs = (index: number): boolean => index >= 0 && index < count && pairAt(index) !== pairAt(startLink);
+    const done = fromEntry(link, foot.s);
+    const left = chain.links[link].run.length - done;
+    if (link === startLink) return Math.min(differs(before) ? done : Infinity, differs(after) ? left : Infinity);
+    if (link === after && differs(after)) return -done;
+    return link === before && differs(before) ? -left : Infinity;
+  }
+
   /** Takes the present candidates as the state at the start of the next step. */
   settle(touch: Touch): void {
     let lowest = Infinity;
@@ -189,6 +213,7 @@ export class ContactManager {
     if (!touch.seen) touch.armed = lowest >= -BEHIND;
     else if (!touch.armed && lowest >= 0) touch.armed = true;
     touch.seen = true;
+    const wasActive = this.isActive(touch);
     touch.closed[0] = NO_KEY;
     touch.closed[1] = NO_KEY;
     if (touch.armed && touch.pair >= 0) {
@@ -201,6 +226,12 @@ export class ContactManager {
       }
     }
     touch.openGap = leastOpenGap(touch);
+    touch.isFresh = this.isActive(touch) && (!wasActive || touch.pair !== touch.startPair);
+    touch.startPair = touch.pair;
+    touch.startLink = touch.foot.link;
+    touch.startSeam = this.seamNow(touch);
+    // Trials of the next step all start from here, whatever the ones before them found at their ends.
+    fillManifold(touch, ({ key }) => isClosedKey(touch, key));
   }
 
   /** A compliant pair may overlap as far as its force allows. */
@@ -210,10 +241,6 @@ export class ContactManager {
 
   isActive(touch: Touch): boolean {
     return touch.closed[0] !== NO_KEY;
-  }
-
-  isClosed(touch: Touch, key: number): boolean {
-    return isClosedKey(touch, key);
   }
 
   /** Speed of a track's surface along its path at a time [engine speed]. */

@@ -25,8 +25,9 @@ export class RigidContacts {
     private readonly manager: ContactManager,
   ) {}
 
+  /** The pair that the present solve is for. */
   private pairOf(touch: Touch): Pair {
-    return this.manager.pairs[touch.pair];
+    return this.manager.pairs[touch.solvedPair];
   }
 
   /** Readies the closed points at the mid-step configuration; `ratio` > 0 scales last step's impulses (warm start). */
@@ -36,9 +37,15 @@ export class RigidContacts {
     step.dtRatio = ratio;
     this.live.length = 0;
     for (const touch of this.manager.touches) {
-      if (!this.manager.isActive(touch) || this.pairOf(touch).isSoft) continue;
-      if (touch.curved) this.manager.evaluate(touch);
-      if (touch.pair < 0 || fillManifold(touch, ({ key }) => isClosedKey(touch, key)) === 0) continue;
+      if (!this.manager.isActive(touch)) continue;
+      if (touch.curved) {
+        this.manager.evaluate(touch);
+        fillManifold(touch, ({ key }) => isClosedKey(touch, key));
+      }
+      if (touch.pair < 0 || touch.contact.m_manifold.pointCount === 0) continue;
+      if (this.manager.pairs[touch.pair].isSoft) continue;
+      touch.solvedPair = touch.pair;
+      touch.solvedSegment = touch.segment;
       this.live.push(touch);
       this.ready(touch, time);
     }
@@ -175,7 +182,7 @@ export class RigidContacts {
     const sign = pair.first === bodyB || (pair.first < 0 && bodyB < 0) ? 1 : -1;
     reading.nx = sign * contact.v_normal.x;
     reading.ny = sign * contact.v_normal.y;
-    reading.segment = touch.segment;
+    if (share >= 0.5) reading.segment = touch.solvedSegment;
     reading.points += 1;
   }
 

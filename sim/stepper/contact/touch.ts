@@ -31,6 +31,15 @@ export interface Touch {
   pair: number;
   /** Index of the track's segment under it; −1 between bodies. */
   segment: number;
+  /** Pair and segment that the last solve was for (the present ones are those of the latest configuration). */
+  solvedPair: number;
+  solvedSegment: number;
+  /** Pair and link of the chain it was on at the start of the step, and how far from the next pair's stretch. */
+  startPair: number;
+  startLink: number;
+  startSeam: number;
+  /** Newly closed, or on another pair than before: whether it slides must be found out. */
+  isFresh: boolean;
 
   type: number;
   normal: XY;
@@ -72,6 +81,12 @@ export function newTouch(id: number, contact: ContactInternals, bodyA: number, b
     bodyB,
     pair: -1,
     segment: -1,
+    solvedPair: -1,
+    solvedSegment: -1,
+    startPair: -1,
+    startLink: 0,
+    startSeam: Infinity,
+    isFresh: true,
     type: MANIFOLD_CIRCLES,
     normal: { x: 0, y: 1 },
     point: { x: 0, y: 0 },
