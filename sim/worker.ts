@@ -1,5 +1,13 @@
 import { readMechanism } from './mechanism/index.js';
-import { FrameCutter, serve, webPort, type Handlers, type Progress, type RunFrame, type SolverMethods } from './protocol/index.js';
+import {
+  FrameCutter,
+  serve,
+  webPort,
+  type Handlers,
+  type Progress,
+  type RunFrame,
+  type SolverMethods,
+} from './protocol/index.js';
 import { startRun, unsupported } from './stepper/index.js';
 
 /** Wall-clock time between two frames [ms]: the pen of the recorder moves some thirty times a second. */
@@ -28,7 +36,13 @@ export const solver: Handlers<SolverMethods> = {
 
 async function sendLayout(run: ReturnType<typeof startRun>, progress: Progress<RunFrame>): Promise<void> {
   const { solver, layout, step } = run.recording();
-  await progress.send({ part: 'layout', solver, layout, duration: run.duration, ...(step === undefined ? {} : { step }) });
+  await progress.send({
+    part: 'layout',
+    solver,
+    layout,
+    duration: run.duration,
+    ...(step === undefined ? {} : { step }),
+  });
 }
 
 /** Lets messages in, so that a run can be halted. */

@@ -40,12 +40,21 @@ function listen(server: Server, port: number): Promise<number> {
 }
 
 async function answer(root: string, request: IncomingMessage, response: ServerResponse): Promise<void> {
-  if (request.method !== 'GET') return end(response, 405, { allow: 'GET' });
+  if (request.method !== 'GET') {
+    end(response, 405, { allow: 'GET' });
+    return;
+  }
   // A name other than loopback's in Host is a page elsewhere that was pointed here.
-  if (!/^(127\.0\.0\.1|localhost)(:\d+)?$/.test(request.headers.host ?? '')) return end(response, 403);
+  if (!/^(127\.0\.0\.1|localhost)(:\d+)?$/.test(request.headers.host ?? '')) {
+    end(response, 403);
+    return;
+  }
   const [path] = (request.url ?? '/').split(/[?#]/);
   const file = await readStaticFile(root, path);
-  if (!file) return end(response, 404);
+  if (!file) {
+    end(response, 404);
+    return;
+  }
   response.writeHead(200, { ...file.headers, 'content-length': file.body.length });
   response.end(file.body);
 }

@@ -13,5 +13,7 @@ export function blankRows(count: number): number {
  */
 export function shownLines(lines: readonly PageLine[], room: number): readonly PageLine[] {
   if (lines.length <= room) return lines;
-  return lines.filter(({ role, account, printed }) => role !== 'entry' || account === 'numerical' || Number(printed) !== 0);
+  return lines.filter(
+    ({ role, account, printed }) => role !== 'entry' || account === 'numerical' || Number(printed) !== 0,
+  );
 }

@@ -52,7 +52,13 @@ export function makeCommands(bench: Workbench) {
     run: () => playback.toggle(),
   };
   const back: Command = { id: 'back', label: 'Back a tick', shortcut: ',', isEnabled: onRunSheet, run: () => playback.tick(-1) }; // prettier-ignore
-  const on: Command = { id: 'on', label: 'On a tick', shortcut: '.', isEnabled: onRunSheet, run: () => playback.tick(1) };
+  const on: Command = {
+    id: 'on',
+    label: 'On a tick',
+    shortcut: '.',
+    isEnabled: onRunSheet,
+    run: () => playback.tick(1),
+  };
   const slower: Command = { id: 'slower', label: 'Slower paper', shortcut: '[', isEnabled: onRunSheet, run: () => playback.changeRate(-1) }; // prettier-ignore
   const faster: Command = { id: 'faster', label: 'Faster paper', shortcut: ']', isEnabled: onRunSheet, run: () => playback.changeRate(1) }; // prettier-ignore
   const stations = Array.from({ length: 9 }, (_, i): Command => ({

@@ -6,7 +6,11 @@ export interface Demo extends OpenedFile {
   drawingNumber: string;
 }
 
-const texts = import.meta.glob<string>('../../assets/examples/*.json', { query: '?raw', import: 'default', eager: true });
+const texts = import.meta.glob<string>('../../assets/examples/*.json', {
+  query: '?raw',
+  import: 'default',
+  eager: true,
+});
 
 export const demos: readonly Demo[] = Object.entries(texts)
   .map(([path, text]) => demoOf(path.slice(path.lastIndexOf('/') + 1), text))
@@ -14,5 +18,11 @@ export const demos: readonly Demo[] = Object.entries(texts)
 
 function demoOf(name: string, text: string): Demo {
   const document = JSON.parse(text) as { title?: string; sheet?: { drawingNumber?: string } };
-  return { name, text, size: text.length, title: document.title ?? name, drawingNumber: document.sheet?.drawingNumber ?? '' };
+  return {
+    name,
+    text,
+    size: text.length,
+    title: document.title ?? name,
+    drawingNumber: document.sheet?.drawingNumber ?? '',
+  };
 }

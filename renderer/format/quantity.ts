@@ -14,9 +14,15 @@ export function fixed(value: number, decimals: number): string {
 export function figures(value: number, digits = 4): string {
   if (value === 0 || !Number.isFinite(value)) return value === 0 ? '0' : '–';
   const size = Math.floor(Math.log10(Math.abs(value)));
-  if (size < -4 || size > 6) return value.toExponential(digits - 1).replace('-', '−').replace('e', ' × 10^');
+  if (size < -4 || size > 6)
+    return value
+      .toExponential(digits - 1)
+      .replace('-', '−')
+      .replace('e', ' × 10^');
   const rounded = Number(value.toPrecision(digits));
-  return fixed(rounded, Math.max(0, digits - 1 - size)).replace(/(\.\d*?)0+$/, '$1').replace(/\.$/, '');
+  return fixed(rounded, Math.max(0, digits - 1 - size))
+    .replace(/(\.\d*?)0+$/, '$1')
+    .replace(/\.$/, '');
 }
 
 /** Lengths on the sheet are in millimetres up to ten metres of extent, in metres beyond. */

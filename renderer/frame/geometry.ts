@@ -24,7 +24,12 @@ export function frameGeometry(width: number, height: number): FrameGeometry {
   const compact = width < full.width || height < full.height;
   const [margin, top, band] = compact ? [6, 32, 14] : [8, 37, 16];
   const outer = { x: margin, y: top, width: width - 2 * margin, height: height - top - margin };
-  const inner = { x: outer.x + band, y: outer.y + band, width: outer.width - 2 * band, height: outer.height - 2 * band };
+  const inner = {
+    x: outer.x + band,
+    y: outer.y + band,
+    width: outer.width - 2 * band,
+    height: outer.height - 2 * band,
+  };
   return {
     compact,
     outer,

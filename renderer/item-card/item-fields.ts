@@ -42,9 +42,14 @@ export function itemFields(item: Item, mechanism: Mechanism, items: readonly Ite
   return [shape, ...fields[item.kind](), ...contactFields(item, mechanism, items)];
 }
 
-const field = (name: string, shown: Shown, symbol?: string): CardField => ({ name, ...shown, ...(symbol === undefined ? {} : { symbol }) });
+const field = (name: string, shown: Shown, symbol?: string): CardField => ({
+  name,
+  ...shown,
+  ...(symbol === undefined ? {} : { symbol }),
+});
 const plain = (name: string, value: string): CardField => ({ name, value, unit: '' });
-const number = (name: string, value: number, unit: string, symbol?: string) => field(name, { value: figures(value), unit }, symbol);
+const number = (name: string, value: number, unit: string, symbol?: string) =>
+  field(name, { value: figures(value), unit }, symbol);
 /** Tenths of a millimetre, without zeros that say nothing. */
 const tidy = (millimetres: number) => fixed(millimetres, 1).replace(/\.0$/, '');
 const place = ([x, y]: Vec): Shown => ({ value: `${tidy(x * 1e3)}, ${tidy(y * 1e3)}`, unit: 'mm' });
@@ -95,11 +100,7 @@ function lengthBetween([a, b]: readonly [{ at: Vec }, { at: Vec }]): number {
 
 function damperFields(damper: Damper, nameOf: NameOf): CardField[] {
   const ends = damper.between.map((end) => (typeof end === 'string' ? end : end.of));
-  return [
-    plain('Acts in', damper.acts),
-    plain('End A on', nameOf(ends[0])),
-    plain('End B on', nameOf(ends[1])),
-  ];
+  return [plain('Acts in', damper.acts), plain('End A on', nameOf(ends[0])), plain('End B on', nameOf(ends[1]))];
 }
 
 function driveFields({ on, efficiency }: Drive, nameOf: NameOf): CardField[] {

@@ -26,7 +26,10 @@ const span = linkLine(...across);
 const hill: Vec[] = Array.from({ length: 25 }, (_, i) => [-24 + 2 * i, -4 + 7 / (1 + Math.exp(-(i - 12) / 2.5)) - 2]);
 
 const bodies: Record<'body' | 'particle' | 'track' | 'ground', KeySymbol> = {
-  body: { name: 'Body', operations: bodyOperations({ shape: { kind: 'box', width: 30, height: 18 }, centerOfMass: [0, 0] }, 1) },
+  body: {
+    name: 'Body',
+    operations: bodyOperations({ shape: { kind: 'box', width: 30, height: 18 }, centerOfMass: [0, 0] }, 1),
+  },
   particle: { name: 'Point mass', operations: [circle([0, 0], 4, { fill: inkFill })] },
   track: { name: 'Track', operations: trackOperations(hill, 'left') },
   ground: { name: 'Ground', operations: groundMark([0, -2], [0, 1], 22) },
@@ -62,8 +65,11 @@ function pitch([x, y]: Vec, radius: number): DrawOperation {
 /** The symbols that a drawing uses, in the groups of the Key. */
 export function symbolsOf(mechanism: Mechanism): { title: string; symbols: KeySymbol[] }[] {
   const { bodies: parts, tracks, springs, dampers, joints: links } = mechanism;
-  const ends = [...springs, ...dampers].flatMap(({ between }) => between.map((end) => (typeof end === 'string' ? end : end.of)));
-  const hasGround = ends.includes('ground') || links.some((joint) => 'between' in joint && joint.between.includes('ground'));
+  const ends = [...springs, ...dampers].flatMap(({ between }) =>
+    between.map((end) => (typeof end === 'string' ? end : end.of)),
+  );
+  const hasGround =
+    ends.includes('ground') || links.some((joint) => 'between' in joint && joint.between.includes('ground'));
   const groups = [
     {
       title: 'Bodies',

@@ -16,8 +16,10 @@ export function noteOf(bench: Workbench): Note {
   const { drawing, run, view } = bench;
   if (bench.trouble !== '') return { kind: 'trouble', text: bench.trouble };
   if (drawing.reading) return { kind: 'work', text: 'Reading the file.' };
-  if (run.status === 'running') return { kind: 'work', text: `Recording: ${fixed(run.time, 3)} s of at most ${fixed(run.duration, 3)} s.` };
-  if (drawing.problem && (view.sheet === 1 || !drawing.mechanism)) return { kind: drawing.errors > 0 ? 'trouble' : 'plain', text: problemText(bench) };
+  if (run.status === 'running')
+    return { kind: 'work', text: `Recording: ${fixed(run.time, 3)} s of at most ${fixed(run.duration, 3)} s.` };
+  if (drawing.problem && (view.sheet === 1 || !drawing.mechanism))
+    return { kind: drawing.errors > 0 ? 'trouble' : 'plain', text: problemText(bench) };
   if (!drawing.mechanism) return { kind: 'plain', text: 'Open a mechanism file, or drop one on the sheet.' };
   const picked = pickedText(bench);
   if (view.sheet === 2 && picked !== '') return { kind: 'plain', text: picked };
@@ -37,8 +39,13 @@ function pickedText({ account, drawing, run, zoneOf }: Workbench): string {
   if (!picked || !page || !printed || !ledger || !drawing.mechanism || !run.recording) return '';
   const span = pickedSpan(run.recording, page, picked);
   const places = entryOf(ledger, picked).flatMap((entry) => entry.places);
-  const here = places.filter(({ on, segment }) => picked.segment === undefined || (on === picked.on && segment === picked.segment));
-  const most = here.reduce<(typeof here)[number] | null>((a, b) => (a === null || Math.abs(b.work) > Math.abs(a.work) ? b : a), null);
+  const here = places.filter(
+    ({ on, segment }) => picked.segment === undefined || (on === picked.on && segment === picked.segment),
+  );
+  const most = here.reduce<(typeof here)[number] | null>(
+    (a, b) => (a === null || Math.abs(b.work) > Math.abs(a.work) ? b : a),
+    null,
+  );
   const zone = most === null ? null : zoneOf(most.at);
   return [
     `${lineName(picked, drawing.items, drawing.mechanism)}: ${picked.printed} ${printed.scale.unit}`,

@@ -49,7 +49,8 @@ function bodyData({ shape }: Body): string {
 function trackData({ segments, closed, surfaceSpeed }: Track): string {
   const names = segments.flatMap(({ name }) => (name === undefined ? [] : [name]));
   const parts = names.length > 0 ? names.join(', ') : segments.length === 1 ? 'one part' : `${segments.length} parts`;
-  const belt = surfaceSpeed === 0 ? '' : typeof surfaceSpeed === 'number' ? `, belt ${figures(surfaceSpeed)} m/s` : ', belt';
+  const belt =
+    surfaceSpeed === 0 ? '' : typeof surfaceSpeed === 'number' ? `, belt ${figures(surfaceSpeed)} m/s` : ', belt';
   return `${parts}${closed ? ', closed' : ''}${belt}`;
 }
 

@@ -45,7 +45,9 @@ export interface TimeAxis {
 
 /** While a run is recorded its end is open: the axis grows in round steps, and not beyond the greatest duration. */
 export function timeAxis(time: number, isOpen: boolean, duration: number): TimeAxis {
-  const wanted = isOpen ? Math.min(niceAtLeast(Math.max(time * 1.25, duration / 1000)), Math.max(duration, time)) : time;
+  const wanted = isOpen
+    ? Math.min(niceAtLeast(Math.max(time * 1.25, duration / 1000)), Math.max(duration, time))
+    : time;
   const end = wanted > 0 ? wanted : 1;
   const step = niceAtLeast(end / 10);
   return { end, step, decimals: Math.max(0, Math.ceil(-Math.log10(step) - 1e-9)) };

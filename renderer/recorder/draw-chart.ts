@@ -68,7 +68,12 @@ function drawHoles(context: Context, { width, holes }: ChartLayout, colours: Col
   for (const y of [holes[0] + 6.5, holes[1] - 6.5]) strokeLine(context, [0, y], [width, y]);
 }
 
-function drawGrid(context: Context, { layout, axis, speed }: Chart, { top, step }: EnergyTicks, colours: Colours): void {
+function drawGrid(
+  context: Context,
+  { layout, axis, speed }: Chart,
+  { top, step }: EnergyTicks,
+  colours: Colours,
+): void {
   context.strokeStyle = colours.hair;
   context.lineWidth = 0.95;
   for (let k = 0; k * (axis.step / 2) <= axis.end * (1 + 1e-9); k++) {
@@ -128,7 +133,11 @@ function drawEnergy(context: Context, chart: Chart, top: number, colours: Colour
   return labelLayers(xs, bands, names, (text) => context.measureText(text).width, layout);
 }
 
-function traceBand(context: Context, xs: Float64Array, { lower, upper }: { lower: Float64Array; upper: Float64Array }): void {
+function traceBand(
+  context: Context,
+  xs: Float64Array,
+  { lower, upper }: { lower: Float64Array; upper: Float64Array },
+): void {
   traceLine(context, xs, upper);
   for (let i = xs.length - 1; i >= 0; i--) context.lineTo(xs[i], lower[i]);
   context.closePath();
@@ -180,7 +189,12 @@ function runOf(xs: Float64Array, isWanted: (i: number) => boolean, width: number
   return null;
 }
 
-function drawScales(context: Context, { layout, axis, unit, speed }: Chart, { top, step }: EnergyTicks, colours: Colours): void {
+function drawScales(
+  context: Context,
+  { layout, axis, unit, speed }: Chart,
+  { top, step }: EnergyTicks,
+  colours: Colours,
+): void {
   context.fillStyle = colours.second;
   context.font = font(12);
   context.textBaseline = 'middle';
@@ -255,7 +269,14 @@ function drawLabel(context: Context, { text, at, from }: LayerLabel, colours: Co
 }
 
 /** A name on a ground of paper around its letters, readable over any hatch. */
-function halo(context: Context, text: string, x: number, y: number, colours: Colours, align: CanvasTextAlign = 'left'): void {
+function halo(
+  context: Context,
+  text: string,
+  x: number,
+  y: number,
+  colours: Colours,
+  align: CanvasTextAlign = 'left',
+): void {
   context.font = font(13, 500);
   context.textAlign = align;
   context.textBaseline = 'middle';
@@ -292,4 +313,3 @@ function strokeLine(context: Context, [x1, y1]: readonly [number, number], [x2, 
 export function font(size: number, weight = 400): string {
   return `${weight} ${size}px ${families.text}`;
 }
-

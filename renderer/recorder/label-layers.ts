@@ -63,10 +63,12 @@ export function labelLayers(
     const from: [number, number] = [xs[i], (band.lower[i] + band.upper[i]) / 2];
     const width = widthOf(text);
     const offsets = [22, -22, 40, -40].flatMap((dy) => [1, -1].map((side) => [side * (width / 2 + 26), -dy]));
-    const spot = offsets.map(([dx, dy]) => [from[0] + dx, from[1] + dy]).find(([x, y]) => {
-      const box = around(x, y, width);
-      return isOnPaper(box) && isFree(box);
-    });
+    const spot = offsets
+      .map(([dx, dy]) => [from[0] + dx, from[1] + dy])
+      .find(([x, y]) => {
+        const box = around(x, y, width);
+        return isOnPaper(box) && isFree(box);
+      });
     if (!spot) return null;
     taken.push(around(spot[0], spot[1], width));
     return { text, at: [spot[0], spot[1]], from };
@@ -77,7 +79,12 @@ export function labelLayers(
 }
 
 /** Highest lower and lowest upper edge of a band over a stretch: what a box must fit between. */
-function clearance(xs: Float64Array, { lower, upper }: Band, left: number, right: number): { top: number; bottom: number } {
+function clearance(
+  xs: Float64Array,
+  { lower, upper }: Band,
+  left: number,
+  right: number,
+): { top: number; bottom: number } {
   let [top, bottom] = [-Infinity, Infinity];
   for (let i = firstAt(xs, left); i < xs.length && xs[i] <= right; i++) {
     top = Math.max(top, upper[i]);

@@ -10,7 +10,9 @@ export function fillPattern(
   box: { left: number; top: number; right: number; bottom: number },
 ): void {
   const pattern = patterns[name];
-  context.fillStyle = pattern.fill ? blend(colours[pattern.fill.tone], colours.chart, pattern.fill.tint) : colours.chart;
+  context.fillStyle = pattern.fill
+    ? blend(colours[pattern.fill.tone], colours.chart, pattern.fill.tint)
+    : colours.chart;
   context.fillRect(box.left, box.top, box.right - box.left, box.bottom - box.top);
   context.strokeStyle = colours[pattern.tone];
   context.fillStyle = colours.ink;
@@ -21,7 +23,12 @@ export function fillPattern(
 
 type Box = Parameters<typeof fillPattern>[3];
 
-function hatch(context: CanvasRenderingContext2D, { angle, spacing }: Pattern['lines'][number], shift: number, box: Box): void {
+function hatch(
+  context: CanvasRenderingContext2D,
+  { angle, spacing }: Pattern['lines'][number],
+  shift: number,
+  box: Box,
+): void {
   const [ux, uy] = [Math.cos(angle), Math.sin(angle)];
   const corners = [box.left, box.right].flatMap((x) => [box.top, box.bottom].map((y) => y * ux - x * uy));
   const reach = Math.hypot(box.right - box.left, box.bottom - box.top);
@@ -37,7 +44,10 @@ function hatch(context: CanvasRenderingContext2D, { angle, spacing }: Pattern['l
   context.stroke();
 }
 
-const marks: Record<NonNullable<Pattern['mark']>, (context: CanvasRenderingContext2D, pattern: Pattern, box: Box) => void> = {
+const marks: Record<
+  NonNullable<Pattern['mark']>,
+  (context: CanvasRenderingContext2D, pattern: Pattern, box: Box) => void
+> = {
   zigzag: (context, _, { left, right, top, bottom }) => {
     context.beginPath();
     for (let y = Math.floor(top / 7) * 7; y < bottom + 7; y += 7) {
@@ -62,7 +72,8 @@ const marks: Record<NonNullable<Pattern['mark']>, (context: CanvasRenderingConte
 
 function lattice({ left, right, top, bottom }: Box, pitch: number, put: (x: number, y: number) => void): void {
   for (let j = Math.floor(top / pitch) * 2; j * (pitch / 2) < bottom; j++)
-    for (let x = Math.floor(left / pitch) * pitch + (j % 2) * (pitch / 2); x < right; x += pitch) put(x, j * (pitch / 2));
+    for (let x = Math.floor(left / pitch) * pitch + (j % 2) * (pitch / 2); x < right; x += pitch)
+      put(x, j * (pitch / 2));
 }
 
 function dot(context: CanvasRenderingContext2D, x: number, y: number, radius: number): void {

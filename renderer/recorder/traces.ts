@@ -16,8 +16,7 @@ const rounding = 1e-9;
 export function speedTrace(recording: Recording, { rows }: Strip, body: string): Trace | null {
   const columns = bodyOf(recording, body)?.columns;
   if (!columns) return null;
-  const speed = (row: number) =>
-    Math.hypot(valueAt(recording, row, columns.vx), valueAt(recording, row, columns.vy));
+  const speed = (row: number) => Math.hypot(valueAt(recording, row, columns.vx), valueAt(recording, row, columns.vy));
   const trace = traceOf(recording, rows, speed);
   return trace.peak > rounding ? trace : null;
 }

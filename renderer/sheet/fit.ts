@@ -44,7 +44,13 @@ export function fitDrawing(box: Box, ink: readonly Vec[], field: Size, margins: 
 }
 
 /** Where the drawing may lie at a scale: in the middle of the field or of what the readings leave, high or low. */
-function places(box: Box, scale: DrawingScale, field: Size, { top, bottom, side, below }: Margins, readings: Size): Fit[] {
+function places(
+  box: Box,
+  scale: DrawingScale,
+  field: Size,
+  { top, bottom, side, below }: Margins,
+  readings: Size,
+): Fit[] {
   const width = (box.right - box.left) * scale.pixels;
   const spare = field.height - top - bottom - (box.high - box.low) * scale.pixels;
   const rest = field.width - readings.width - 2 * gapToEdge;
@@ -69,7 +75,13 @@ export function readingsCorners(field: Size, readings: Size): Vec[] {
 }
 
 /** Whether the drawing leaves a box free. */
-export function isFree([left, top]: Vec, size: Size, ink: readonly Vec[], { scale, origin }: Fit, clear: number): boolean {
+export function isFree(
+  [left, top]: Vec,
+  size: Size,
+  ink: readonly Vec[],
+  { scale, origin }: Fit,
+  clear: number,
+): boolean {
   return !ink.some(([x, y]) => {
     const [px, py] = [origin[0] + x * scale.pixels, origin[1] - y * scale.pixels];
     return px > left - clear && px < left + size.width + clear && py > top - clear && py < top + size.height + clear;

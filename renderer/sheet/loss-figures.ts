@@ -27,11 +27,18 @@ export function lossFigure(
   const boxes: Vec[] = [];
   const labels = bands.flatMap((each) => labelOperations(each, pixels, perPixel, boxes));
   const operations = [...bands.flatMap(({ band, pattern }) => lossBand(band, pattern, pixels, perPixel)), ...labels];
-  const edges = operations.flatMap((each) => (each.kind === 'line' ? each.points.map(([, y]) => y) : each.kind === 'text' ? [each.at[1] + 8] : []));
+  const edges = operations.flatMap((each) =>
+    each.kind === 'line' ? each.points.map(([, y]) => y) : each.kind === 'text' ? [each.at[1] + 8] : [],
+  );
   return { figure: { key: 'loss', layer: 'tracings', on: 'ground', operations }, bottom: Math.max(...edges) };
 }
 
-function labelOperations({ band, label, figure, picked }: LabelledBand, pixels: number, perPixel: number, placed: Vec[]): DrawOperation[] {
+function labelOperations(
+  { band, label, figure, picked }: LabelledBand,
+  pixels: number,
+  perPixel: number,
+  placed: Vec[],
+): DrawOperation[] {
   const { at, angle } = bandLabel(band, pixels, perPixel);
   const ground = picked ? 'marker' : 'paper';
   const style = { size: 12.5, weight: 500, tone: 'ink', ground } as const;
@@ -43,7 +50,8 @@ function labelOperations({ band, label, figure, picked }: LabelledBand, pixels: 
   const [x, y] = toPaper(middle.at, pixels);
   const down = middle.into[1] <= 0 ? 1 : -1;
   const top: Vec = [x - 26, at[1] + down * 16];
-  while (placed.some(([px, py]) => Math.abs(px - top[0]) < 70 && Math.abs(py - top[1]) < 34)) (top as [number, number])[1] += down * 36;
+  while (placed.some(([px, py]) => Math.abs(px - top[0]) < 70 && Math.abs(py - top[1]) < 34))
+    (top as [number, number])[1] += down * 36;
   placed.push(top);
   return [
     { kind: 'line', points: [[x, (y + at[1]) / 2 - down * 4], [x - 6, top[1] - down * 9]], stroke: { width: 0.95, tone: 'ink' } }, // prettier-ignore

@@ -39,11 +39,11 @@ export class PixiExecutor implements SheetExecutor {
       autoDensity: true,
       resolution: window.devicePixelRatio,
     });
-    return new PixiExecutor(renderer as Renderer);
+    return new PixiExecutor(renderer);
   }
 
   get canvas(): HTMLCanvasElement {
-    return this.renderer.canvas as HTMLCanvasElement;
+    return this.renderer.canvas;
   }
 
   setViewport({ width, height, originX, originY, ratio }: Viewport): void {
@@ -58,7 +58,8 @@ export class PixiExecutor implements SheetExecutor {
 
   setFigures(figures: readonly RigidFigure[]): void {
     this.parts.clear();
-    for (const { rigid } of this.layers.values()) for (const child of rigid.removeChildren()) child.destroy({ children: true });
+    for (const { rigid } of this.layers.values())
+      for (const child of rigid.removeChildren()) child.destroy({ children: true });
     for (const { layer, on, operations } of figures) {
       const container = new Container();
       this.draw(container, operations);
@@ -121,7 +122,12 @@ export class PixiExecutor implements SheetExecutor {
       fill: colours[each.tone],
     });
     if (each.ground) ground(graphics, each, style, each.ground === 'marker' ? colours.marked : colours[each.ground]);
-    const text = new Text({ text: each.text, style, resolution: this.ratio, anchor: { x: each.anchor[0], y: each.anchor[1] } });
+    const text = new Text({
+      text: each.text,
+      style,
+      resolution: this.ratio,
+      anchor: { x: each.anchor[0], y: each.anchor[1] },
+    });
     // Whole pixels keep upright text crisp; the origin of the paper is at one too.
     const snap = (value: number, size: number, anchor: number) =>
       each.angle ? value : Math.round((value - size * anchor) * this.ratio) / this.ratio + size * anchor;
@@ -151,8 +157,13 @@ function shape(graphics: Graphics, each: Exclude<DrawOperation, TextOperation>, 
     const { ends } = each;
     if (ends.length === 0) return;
     for (let i = 0; i < ends.length; i += 4) graphics.moveTo(ends[i], ends[i + 1]).lineTo(ends[i + 2], ends[i + 3]);
-  } else graphics.poly(each.points.flatMap(([x, y]) => [x, y]), each.closed ?? false);
+  } else
+    graphics.poly(
+      each.points.flatMap(([x, y]) => [x, y]),
+      each.closed ?? false,
+    );
   if (each.kind !== 'segments' && each.fill) graphics.fill(fillColour(each.fill, colours));
   const { stroke } = each;
-  if (stroke) graphics.stroke({ width: stroke.width, color: colours[stroke.tone], cap: stroke.cap ?? 'butt', join: 'round' });
+  if (stroke)
+    graphics.stroke({ width: stroke.width, color: colours[stroke.tone], cap: stroke.cap ?? 'butt', join: 'round' });
 }

@@ -34,9 +34,9 @@ export function placeItemBalloons(scene: Scene, items: readonly Item[], ink: rea
   const around = (left: number, right: number) =>
     boxAround(paper.filter(([x]) => x >= left && x <= right)) ?? boxAround(paper) ?? { left, right, low: 0, high: 0 };
   const placed = placeBalloons(anchors, around);
-  return anchors.map(({ item, anchor, number }) => {
-    const balloon = placed.find((each) => each.number === number)!;
-    return { item, anchor, balloon };
+  return anchors.flatMap(({ item, anchor, number }) => {
+    const balloon = placed.find((each) => each.number === number);
+    return balloon ? [{ item, anchor, balloon }] : [];
   });
 }
 

@@ -1,4 +1,13 @@
-import { accountPage, bookLedger, scaleOf, stationRows, type AccountPage, type Ledger, type PageLine, type StationRow } from '../../sim/ledger/index.js';
+import {
+  accountPage,
+  bookLedger,
+  scaleOf,
+  stationRows,
+  type AccountPage,
+  type Ledger,
+  type PageLine,
+  type StationRow,
+} from '../../sim/ledger/index.js';
 import { mergeNumerical } from '../account/merge-numerical.js';
 import { nameStations, type StationName } from '../../sim/drawing/stations.js';
 import type { Mechanism } from '../../sim/mechanism/model.js';
@@ -22,7 +31,9 @@ export class Account {
   readonly ledger: Ledger | null = $derived.by(() => this.book(this.page));
   readonly printed: AccountPage | null = $derived.by(() => this.print());
   readonly picked: PageLine | null = $derived(
-    [...(this.printed?.received ?? []), ...(this.printed?.paidOut ?? [])].find((line) => lineKey(line) === this.pickedKey) ?? null,
+    [...(this.printed?.received ?? []), ...(this.printed?.paidOut ?? [])].find(
+      (line) => lineKey(line) === this.pickedKey,
+    ) ?? null,
   );
 
   constructor(
@@ -36,7 +47,10 @@ export class Account {
     const documented = this.mechanism()?.stations ?? [];
     const implied = this.stations.filter(({ id }) => documented.every((station) => station.id !== id));
     const known = implied.map(({ id }) => ({ id, when: { kind: id === 'start' ? 'start' : 'end' } as const }));
-    return nameStations(implied[0]?.id === 'start' ? [...known, ...documented] : [...documented, ...known], this.given());
+    return nameStations(
+      implied[0]?.id === 'start' ? [...known, ...documented] : [...documented, ...known],
+      this.given(),
+    );
   });
 
   /** The reached station with this mark in its pennant. */

@@ -35,12 +35,12 @@ export class Drawing {
   }
 
   get title(): string {
-    return this.mechanism?.title ?? textOf(this.result?.document?.['title']) ?? '';
+    return this.mechanism?.title ?? textOf(this.result?.document?.title) ?? '';
   }
 
   /** The document's notes, a line each; a line that begins with a number keeps it. */
   get notes(): { number: string; text: string }[] {
-    const lines = (textOf(this.result?.document?.['notes']) ?? '').split('\n').filter((line) => line.trim() !== '');
+    const lines = (textOf(this.result?.document?.notes) ?? '').split('\n').filter((line) => line.trim() !== '');
     return lines.map((line) => {
       const [, number = '', text = line] = /^\s*(\d+)[.)]?\s+(.*)$/.exec(line) ?? [];
       return { number, text };
@@ -48,7 +48,7 @@ export class Drawing {
   }
 
   sheetField(field: SheetField): string {
-    const sheet = this.result?.document?.['sheet'];
+    const sheet = this.result?.document?.sheet;
     const isRecord = typeof sheet === 'object' && sheet !== null && !Array.isArray(sheet);
     return (isRecord ? textOf(sheet[field]) : undefined) ?? '';
   }

@@ -4,6 +4,8 @@ import { CancelledError, FrameJoiner, type Client, type SolverMethods } from '..
 
 export type RunStatus = 'none' | 'running' | 'ended' | 'halted' | 'failed';
 
+const clock = new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit' });
+
 /** The run on the paper: recorded by the solver's thread, row by row. */
 export class Run {
   number = $state(0);
@@ -22,7 +24,7 @@ export class Run {
     this.clear();
     this.number += 1;
     this.status = 'running';
-    this.startedAt = new Date().toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' });
+    this.startedAt = clock.format(Date.now());
     const joiner = new FrameJoiner();
     const task = client.request('run', { mechanism }, (frame) => {
       joiner.add(frame);

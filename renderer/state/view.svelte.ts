@@ -23,7 +23,9 @@ export class View {
   pointer = $state.raw<readonly [number, number] | null>(null);
 
   readonly geometry = $derived(frameGeometry(this.width, this.height));
-  readonly theme: Theme = $derived(this.themeChoice === 'system' ? (this.systemDark ? 'dark' : 'light') : this.themeChoice);
+  readonly theme: Theme = $derived(
+    this.themeChoice === 'system' ? (this.systemDark ? 'dark' : 'light') : this.themeChoice,
+  );
 
   constructor() {
     const stored = localStorage.getItem(themeKey);

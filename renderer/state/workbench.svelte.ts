@@ -64,7 +64,10 @@ export class Workbench {
     if (isBody || !mechanism) return isBody ? picked : null;
     const { recording, status } = this.run;
     // A wheel on its own axle goes nowhere: of the bodies inside, the first that does tells more.
-    const moving = recording && status !== 'running' ? mechanism.system.find((id) => travels(recording, id, mechanism.extent)) : null;
+    const moving =
+      recording && status !== 'running'
+        ? mechanism.system.find((id) => travels(recording, id, mechanism.extent))
+        : null;
     return moving ?? mechanism.system[0] ?? mechanism.bodies[0]?.id ?? null;
   });
 

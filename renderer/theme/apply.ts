@@ -16,5 +16,5 @@ export function applyTheme(theme: Theme, root: HTMLElement = document.documentEl
   for (const tone of tones) root.style.setProperty(`--${tone}`, colours[tone]);
   root.style.setProperty('--marked', colours.marked);
   root.style.setProperty('color-scheme', theme);
-  root.dataset['theme'] = theme;
+  root.dataset.theme = theme;
 }

@@ -14,14 +14,18 @@ export type AnchorOf = (now: Poses) => Vec | null;
 export function anchorOf(item: Item, context: DrawingContext): { at: AnchorOf; onLine: boolean } {
   const { mechanism, pixels, drawn } = context;
   const byId = <T extends { id: string }>(list: readonly T[]) => list.find(({ id }) => id === item.id);
-  const middle = (between: readonly [PointOn, PointOn]): AnchorOf => (now) => {
-    const [a, b] = between.map((end) => toPaper(carried(end, drawn, now), pixels));
-    return [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2];
-  };
-  const pivot = (of: readonly string[]): AnchorOf => (now) => {
-    const pose = of.map((id) => now.get(id)).find((each) => each !== undefined);
-    return pose ? toPaper(pose.at, pixels) : null;
-  };
+  const middle =
+    (between: readonly [PointOn, PointOn]): AnchorOf =>
+    (now) => {
+      const [a, b] = between.map((end) => toPaper(carried(end, drawn, now), pixels));
+      return [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2];
+    };
+  const pivot =
+    (of: readonly string[]): AnchorOf =>
+    (now) => {
+      const pose = of.map((id) => now.get(id)).find((each) => each !== undefined);
+      return pose ? toPaper(pose.at, pixels) : null;
+    };
   const atJoint = (id: string): AnchorOf => {
     const joint = mechanism.joints.find((each) => each.id === id);
     if (!joint || !('between' in joint)) return () => null;
@@ -29,7 +33,11 @@ export function anchorOf(item: Item, context: DrawingContext): { at: AnchorOf; o
     const of = joint.between[0] === 'ground' ? joint.between[1] : joint.between[0];
     return (now) => toPaper(carried({ of, at: joint.at }, drawn, now), pixels);
   };
-  const link = (list: readonly ({ id: string } & ({ between: readonly [PointOn, PointOn] } | { between: readonly [string, string] }))[]) => {
+  const link = (
+    list: readonly ({ id: string } & (
+      { between: readonly [PointOn, PointOn] } | { between: readonly [string, string] }
+    ))[],
+  ) => {
     const found = byId(list);
     if (!found) return () => null;
     const [first, second] = found.between;

@@ -25,7 +25,10 @@ export interface Balloon extends BalloonAnchor {
  *
  * @param around the box [px, y down] of what is drawn between two x
  */
-export function placeBalloons(anchors: readonly BalloonAnchor[], around: (left: number, right: number) => Box): Balloon[] {
+export function placeBalloons(
+  anchors: readonly BalloonAnchor[],
+  around: (left: number, right: number) => Box,
+): Balloon[] {
   const sorted = [...anchors].sort((a, b) => a.at[0] - b.at[0] || a.at[1] - b.at[1]);
   const groups: BalloonAnchor[][] = [];
   for (const anchor of sorted) {
@@ -48,7 +51,6 @@ export function apart(balloons: readonly Balloon[]): Balloon[] {
   }
   return placed;
 }
-
 
 function row(group: readonly BalloonAnchor[], around: (left: number, right: number) => Box): Balloon[] {
   const middle = mean(group, 0) + 14;

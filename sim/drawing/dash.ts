@@ -16,7 +16,7 @@ export function dashed(points: readonly Vec[], pattern: readonly number[], close
   for (let i = 1; i < path.length; i++) {
     const [a, b] = [path[i - 1], path[i]];
     const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
-    for (let done = 0; done < length; ) {
+    for (let done = 0; done < length;) {
       const next = Math.min(length, done + left);
       if (index % 2 === 0) pushBetween(ends, a, b, done / length, next / length);
       left -= next - done;

@@ -11,8 +11,7 @@ export type FigureLayer = (typeof layers)[number];
  * only moved; a live one is drawn anew for each instant, in paper pixels of the sheet.
  */
 export type Figure = { key: string; layer: FigureLayer; item?: string } & (
-  | { on: string; operations: DrawOperation[] }
-  | { live: (now: Poses) => DrawOperation[] }
+  { on: string; operations: DrawOperation[] } | { live: (now: Poses) => DrawOperation[] }
 );
 
 /** What a symbol is drawn for. */

@@ -44,18 +44,26 @@ export function energyStrip(recording: Recording, system: readonly string[], sam
       values: over((row) => Math.max(0, -workOn(recording, spec, system, row))),
     }));
   const stored = mine
-    .filter(({ account, columns }) => account !== 'gravity' && columns.stored !== undefined)
-    .map((spec): StripLayer => ({
+    .flatMap((spec) =>
+      spec.account === 'gravity' || spec.columns.stored === undefined ? [] : [{ spec, column: spec.columns.stored }],
+    )
+    .map(({ spec, column }): StripLayer => ({
       key: accountKey(spec),
       kind: 'stored',
       account: spec,
       pattern: 'spring',
-      values: over((row) => Math.max(0, valueAt(recording, row, spec.columns.stored!))),
+      values: over((row) => Math.max(0, valueAt(recording, row, column))),
     }));
   const layers = [
     ...losses,
     ...stored,
-    { key: 'motion', kind: 'motion', account: null, pattern: 'motion', values: over((row) => kinetic(recording, system, row)) },
+    {
+      key: 'motion',
+      kind: 'motion',
+      account: null,
+      pattern: 'motion',
+      values: over((row) => kinetic(recording, system, row)),
+    },
     { key: 'height', kind: 'height', account: null, pattern: 'gravity', values: height(recording, mine, over) },
   ] satisfies StripLayer[];
   const times = over((row) => valueAt(recording, row, 0));
@@ -80,7 +88,12 @@ function sampleRows({ rowCount, events }: Recording, samples: number): Int32Arra
   return Int32Array.from(chosen).sort();
 }
 
-function workOn(recording: Recording, { bodies, columns }: AccountSpec, system: readonly string[], row: number): number {
+function workOn(
+  recording: Recording,
+  { bodies, columns }: AccountSpec,
+  system: readonly string[],
+  row: number,
+): number {
   return columns.work.reduce(
     (sum, column, i) => (system.includes(bodies[i]) ? sum + valueAt(recording, row, column) : sum),
     0,
@@ -98,7 +111,11 @@ function kinetic(recording: Recording, system: readonly string[], row: number): 
 }
 
 /** Potential energy of gravity above the least of the run. */
-function height(recording: Recording, accounts: readonly AccountSpec[], over: (value: (row: number) => number) => Float64Array) {
+function height(
+  recording: Recording,
+  accounts: readonly AccountSpec[],
+  over: (value: (row: number) => number) => Float64Array,
+) {
   const columns = accounts.flatMap(({ account, columns: { stored } }) => account === 'gravity' && stored !== undefined ? [stored] : []); // prettier-ignore
   const values = over((row) => columns.reduce((sum, column) => sum + valueAt(recording, row, column), 0));
   const least = values.reduce((low, value) => Math.min(low, value), Infinity);

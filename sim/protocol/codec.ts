@@ -27,8 +27,8 @@ export function decodeServerMessage(message: unknown): ServerMessage {
 }
 
 function decode(message: unknown, known: Record<string, (fields: Fields) => boolean>): unknown {
-  if (isFields(message) && isCount(message['id']) && typeof message['type'] === 'string') {
-    const fits = Object.hasOwn(known, message['type']) ? known[message['type']] : undefined;
+  if (isFields(message) && isCount(message.id) && typeof message.type === 'string') {
+    const fits = Object.hasOwn(known, message.type) ? known[message.type] : undefined;
     if (fits?.(message)) return message;
   }
   throw new ProtocolError('bad-message', `A message of this protocol has a type and an id; found ${sketch(message)}.`);
@@ -43,7 +43,7 @@ function isCount(value: unknown): value is number {
 }
 
 function isWireError(value: unknown): value is WireError {
-  return isFields(value) && typeof value['code'] === 'string' && typeof value['message'] === 'string';
+  return isFields(value) && typeof value.code === 'string' && typeof value.message === 'string';
 }
 
 function sketch(message: unknown): string {

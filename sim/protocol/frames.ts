@@ -20,7 +20,7 @@ export class FrameCutter {
   /** The rows and events since the last call; null where there are none. */
   next({ rows, rowCount, layout, events }: Recording): Extract<RunFrame, { part: 'rows' }> | null {
     if (rowCount === this.rowsSent && events.length === this.eventsSent) return null;
-    const fresh = rows.slice(this.rowsSent * layout.width, rowCount * layout.width).buffer as ArrayBuffer;
+    const fresh = rows.slice(this.rowsSent * layout.width, rowCount * layout.width).buffer;
     const frame = {
       part: 'rows',
       rows: fresh,

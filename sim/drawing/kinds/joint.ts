@@ -64,7 +64,8 @@ export function guideSymbol(from: Vec, to: Vec, grounded: boolean): DrawOperatio
   if (!grounded) return [line([from, to])];
   const [ux, uy] = unit([to[0] - from[0], to[1] - from[1]]);
   const end = (at: Vec, sign: number): Vec[] => [at, [at[0] + sign * 13 * ux, at[1] + sign * 13 * uy]];
-  const hatch = (path: Vec[]) => segments(hatchSide(path, { side: ux < 0 || (ux === 0 && uy < 0) ? -1 : 1, spacing: 4.5, depth: 4.5 }));
+  const hatch = (path: Vec[]) =>
+    segments(hatchSide(path, { side: ux < 0 || (ux === 0 && uy < 0) ? -1 : 1, spacing: 4.5, depth: 4.5 }));
   return [line([from, to]), hatch(end(from, 1)), hatch(end(to, -1).reverse())];
 }
 

@@ -53,6 +53,11 @@ function gas(spring: GasSpring, context: DrawingContext) {
     const cylinder = [ends.at(0.08, -6), ends.at(0.6, -6), ends.at(0.6, 6), ends.at(0.08, 6)];
     const rod = [line([ends.a, ends.at(0.08)], outline), line([ends.at(0.6), ends.b], outline)];
     const piston = line([ends.at(0.5, -6), ends.at(0.5, 6)], narrow);
-    return [polygon(cylinder, { stroke: outline, fill: { tone: 'paper' } }), ...rod, piston, ...groundEnds(spring.between, ends)];
+    return [
+      polygon(cylinder, { stroke: outline, fill: { tone: 'paper' } }),
+      ...rod,
+      piston,
+      ...groundEnds(spring.between, ends),
+    ];
   };
 }

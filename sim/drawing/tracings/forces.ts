@@ -26,7 +26,12 @@ export function forcesOn(mechanism: Mechanism, recording: Recording, body: strin
   );
 }
 
-function contactForces(recording: Recording, { between, columns }: ContactSpec, body: string, row: number): BodyForce[] {
+function contactForces(
+  recording: Recording,
+  { between, columns }: ContactSpec,
+  body: string,
+  row: number,
+): BodyForce[] {
   const read = (column: number) => valueAt(recording, row, column);
   if (read(columns.points) === 0) return [];
   const sign = between[0] === body ? 1 : -1;
@@ -47,7 +52,12 @@ export function forceScale(mechanism: Mechanism, length = 50): number {
 }
 
 /** Forces as arrows on paper. Arrows are cut at `limit` pixels: an impact's neighbour row may hold a giant. */
-export function forceArrows(forces: readonly BodyForce[], pixels: number, perPixel: number, limit = 160): DrawOperation[] {
+export function forceArrows(
+  forces: readonly BodyForce[],
+  pixels: number,
+  perPixel: number,
+  limit = 160,
+): DrawOperation[] {
   return forces.flatMap(({ at, force }) => {
     const length = Math.min(norm(force) / perPixel, limit);
     const [ux, uy] = [force[0] / norm(force), force[1] / norm(force)];

@@ -16,7 +16,12 @@ export function lossScale(bands: readonly LossBand[], depth = 40): { perPixel: n
 }
 
 /** A band beside its track in the account's pattern, deep as the loss per metre; it takes the place of the hatch. */
-export function lossBand({ places }: LossBand, pattern: PatternName, pixels: number, perPixel: number): DrawOperation[] {
+export function lossBand(
+  { places }: LossBand,
+  pattern: PatternName,
+  pixels: number,
+  perPixel: number,
+): DrawOperation[] {
   const offset = (by: (density: number) => number): Vec[] =>
     places.map(({ at, into, density }) => {
       const [x, y] = toPaper(at, pixels);

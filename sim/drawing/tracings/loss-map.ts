@@ -1,5 +1,13 @@
 import type { Vec } from '../../core/vec.js';
-import { buildTrack, nearestOnRun, newFoot, pointAt, type Piece, type SmoothRun, type TrackPath } from '../../geometry/index.js';
+import {
+  buildTrack,
+  nearestOnRun,
+  newFoot,
+  pointAt,
+  type Piece,
+  type SmoothRun,
+  type TrackPath,
+} from '../../geometry/index.js';
 import type { Mechanism } from '../../mechanism/model.js';
 import type { AccountSpec, ContactSpec, Recording } from '../../recording/recording.js';
 import { contactOf, valueAt } from '../../recording/reader.js';
@@ -24,7 +32,8 @@ const cell = 1 / 80;
  */
 export function lossMap(mechanism: Mechanism, recording: Recording, [from, to]: [number, number]): LossBand[] {
   const lossy = recording.layout.accounts.filter(
-    ({ account, columns }) => (account === 'friction' || account === 'rolling-resistance') && columns.heat !== undefined,
+    ({ account, columns }) =>
+      (account === 'friction' || account === 'rolling-resistance') && columns.heat !== undefined,
   );
   return lossy.flatMap((account) => {
     if (!Array.isArray(account.of)) return [];
@@ -39,8 +48,8 @@ export function lossMap(mechanism: Mechanism, recording: Recording, [from, to]: 
 }
 
 function addLoss(tally: Tally, recording: Recording, account: AccountSpec, contact: ContactSpec, row: number): void {
-  const heat = account.columns.heat!;
-  const joules = valueAt(recording, row, heat) - valueAt(recording, row - 1, heat);
+  const { heat } = account.columns;
+  const joules = heat === undefined ? 0 : valueAt(recording, row, heat) - valueAt(recording, row - 1, heat);
   if (joules === 0) return;
   const place = (at: number): Vec => [
     valueAt(recording, at, contact.columns.x),

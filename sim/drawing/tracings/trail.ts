@@ -21,7 +21,8 @@ export function trail(recording: Recording, body: BodySpec, pixels: number, span
     const mark = markAt(recording, body, pixels, k * interval);
     marks.push(...mark.stroke);
     // Figures keep apart, or slow stretches would print over themselves.
-    if (k === 0 || k % 2 === 1 || (figured && Math.hypot(mark.label[0] - figured[0], mark.label[1] - figured[1]) < 46)) continue;
+    if (k === 0 || k % 2 === 1 || (figured && Math.hypot(mark.label[0] - figured[0], mark.label[1] - figured[1]) < 46))
+      continue;
     figured = mark.label;
     figures.push(figure(mark.label, k * interval, interval));
   }
@@ -58,5 +59,13 @@ function markAt(recording: Recording, body: BodySpec, pixels: number, time: numb
 
 function figure(at: Vec, time: number, interval: number): DrawOperation {
   const decimals = Math.max(1, Math.ceil(-Math.log10(interval) - 1e-9));
-  return { kind: 'text', at, text: time.toFixed(decimals), size: 11.5, tone: 'second', anchor: [0.5, 0.5], ground: 'paper' };
+  return {
+    kind: 'text',
+    at,
+    text: time.toFixed(decimals),
+    size: 11.5,
+    tone: 'second',
+    anchor: [0.5, 0.5],
+    ground: 'paper',
+  };
 }
