@@ -17,5 +17,6 @@ export default defineConfig({
     target: 'chrome150',
     sourcemap: true,
     chunkSizeWarningLimit: 2000,
+    rolldownOptions: { checks: { pluginTimings: false } },
   },
 });
