@@ -359,7 +359,7 @@ export const catalogue = {
   'no-bodies': {
     severity: 'warning',
     says: 'The mechanism has {found}; accepted is {accepted}.',
-    means: 'Nothing can move.',
+    means: 'Nothing can move, so that a run shows nothing.',
   },
   'too-many': {
     severity: 'error',

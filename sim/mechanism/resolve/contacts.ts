@@ -98,7 +98,9 @@ class Expander {
     const firsts = this.candidates(a);
     const seconds = this.candidates(b);
     const pairs = firsts.flatMap((first) => seconds.map((second) => this.ordered(first, second)));
-    const unique = new Map(pairs.map((pair) => [keyOf(pair), pair]));
+    // A pair may be found both ways round.
+    const unique = new Map<string, [string, string]>();
+    for (const pair of pairs) if (!unique.has(keyOf(pair))) unique.set(keyOf(pair), pair);
     return [...unique.values()].filter((pair) => this.isSensible(pair) && !this.jointed.has(keyOf(pair)));
   }
 

@@ -1,6 +1,7 @@
 import { add, left, scale, type Vec } from '../../core/vec.js';
-import { convexParts, pointAt, trackGap, type SmoothRun, type TrackPath } from '../../geometry/index.js';
+import { pointAt, trackGap, type SmoothRun, type TrackPath } from '../../geometry/index.js';
 import type { Shape } from '../kinds/body.js';
+import { outlineOf, reachOf } from './outline.js';
 
 export interface Pose {
   at: Vec;
@@ -36,22 +37,32 @@ function place(path: TrackPath, at: number): { run: SmoothRun; s: number } {
 const wrapped = (angle: number): number => (angle > Math.PI ? angle - 2 * Math.PI : angle);
 
 /**
- * Height of the origin at which the shape touches the run without going in: that of its lowest point on a straight or
- * convex run, and more where the run bends up beside it.
+ * Height of the origin at which the shape touches the run without going in. On a straight run that is the height of the
+ * origin over the shape's lowest point; more where the run bends up beside it, less where it falls away under a corner.
  */
 function heightToTouch(shape: Shape, run: SmoothRun, path: TrackPath, raised: (height: number) => Pose): number {
-  const parts = convexParts(shape);
-  if (parts.length === 0) return 0;
-  const points = parts.flatMap((part) => part.points.map((point) => ({ point, radius: part.radius })));
-  const lowest = Math.max(...points.map(({ point, radius }) => radius - point[1]));
-  const reach = Math.max(...points.map(({ point, radius }) => radius + Math.hypot(point[0], point[1])));
-  const alone: TrackPath = { ...path, runs: [run], corners: [], closed: run.closed };
+  const { points, radius } = outlineOf(shape);
+  const lowest = points.reduce(
+    (height, point) => Math.max(height, radius - point[1]),
+    points.length > 0 ? -Infinity : 0,
+  );
+  const reach = reachOf({ points, radius });
+  const side = path.side === 'right' ? 'right' : 'left';
+  const alone: TrackPath = { ...path, side, runs: [run], corners: [], closed: run.closed };
   const goesIn = (height: number): boolean => trackGap({ shape, ...raised(height) }, alone).gap < -1e-12 * reach;
-  if (reach === 0 || !goesIn(lowest)) return lowest;
-  let low = lowest;
-  let high = lowest + reach;
-  for (let i = 0; i < 60 && high - low > 1e-13 * reach; i += 1) {
+  const isClear = !goesIn(lowest);
+  if (reach === 0 || (isClear && goesIn(lowest - 1e-9 * reach))) return lowest;
+  const low = isClear ? lowest - 2 * reach : lowest;
+  return goesIn(low) ? leastClear(goesIn, low, low + 2 * reach, 1e-13 * reach) : lowest;
+}
+
+/** The least height, to within `slack`, that is clear: halves the interval between one that goes in and one that does not. */
+function leastClear(goesIn: (height: number) => boolean, from: number, to: number, slack: number): number {
+  let low = from;
+  let high = to;
+  while (high - low > slack) {
     const middle = (low + high) / 2;
+    if (middle === low || middle === high) break;
     if (goesIn(middle)) low = middle;
     else high = middle;
   }

@@ -45,7 +45,8 @@ describe('The catalogue of problems', () => {
     const description = readFileSync(resolve(import.meta.dirname, '../../../assets/schema/README.md'), 'utf8');
     for (const code of codes) {
       expect(catalogue[code].means, code).toMatch(/^[A-Z].{20,}\.$/);
-      expect(description, code).toContain(`| \`${code}\` |`);
+      const { severity, means } = catalogue[code];
+      expect(description).toContain(`| \`${code}\` | ${severity} | ${means} |`);
     }
   });
 });
