@@ -1,65 +1,14 @@
-import { createServer, type IncomingMessage, type Server, type ServerResponse } from 'node:http';
-import { readStaticFile } from './static-files.js';
+import { join } from 'node:path';
+import { readFileContent } from '../files/file-content.js';
+import { givenFile } from '../files/given-file.js';
+import { openBrowser } from './open-browser.js';
+import { serveWindow } from './server.js';
 
-export interface ServedWindow {
-  /** Where the window is, such as "http://127.0.0.1:41234/". */
-  address: string;
-  close(): Promise<void>;
-}
-
-export interface ServeOptions {
-  /** Folder of the built window. */
-  root: string;
-  /** 0 for any free port. */
-  port?: number;
-}
-
-/** Serves the built window to this machine only, on the loopback interface. */
-export async function serveWindow({ root, port = 0 }: ServeOptions): Promise<ServedWindow> {
-  const server = createServer((request, response) => void answer(root, request, response));
-  const bound = await listen(server, port);
-  return {
-    address: `http://127.0.0.1:${bound}/`,
-    close: () =>
-      new Promise((resolve) => {
-        server.close(() => resolve());
-        server.closeAllConnections();
-      }),
-  };
-}
-
-function listen(server: Server, port: number): Promise<number> {
-  return new Promise((resolve, reject) => {
-    server.once('error', reject);
-    server.listen(port, '127.0.0.1', () => {
-      const address = server.address();
-      if (typeof address === 'object' && address !== null) resolve(address.port);
-      else reject(new Error('The server has no port.'));
-    });
-  });
-}
-
-async function answer(root: string, request: IncomingMessage, response: ServerResponse): Promise<void> {
-  if (request.method !== 'GET') {
-    end(response, 405, { allow: 'GET' });
-    return;
-  }
-  // A name other than loopback's in Host is a page elsewhere that was pointed here.
-  if (!/^(127\.0\.0\.1|localhost)(:\d+)?$/.test(request.headers.host ?? '')) {
-    end(response, 403);
-    return;
-  }
-  const [path] = (request.url ?? '/').split(/[?#]/);
-  const file = await readStaticFile(root, path);
-  if (!file) {
-    end(response, 404);
-    return;
-  }
-  response.writeHead(200, { ...file.headers, 'content-length': file.body.length });
-  response.end(file.body);
-}
-
-function end(response: ServerResponse, status: number, headers: Record<string, string> = {}): void {
-  response.writeHead(status, { 'content-type': 'text/plain; charset=utf-8', ...headers });
-  response.end(`${status}\n`);
-}
+/** The window in a browser: `node dist/serve/serve.js [FILE] [--no-browser]`. It is served until the program is ended. */
+const words = process.argv.slice(2);
+const path = givenFile(words);
+const given = path === null ? null : await readFileContent(path);
+const { address } = await serveWindow({ root: join(import.meta.dirname, '../renderer'), given });
+const opened = !words.includes('--no-browser') && (await openBrowser(address));
+console.log(opened ? `Joulewright is open in the browser, at ${address}` : `Open ${address} in a browser.`);
+console.log('Ctrl+C ends it.');

@@ -62,7 +62,8 @@ export function resolveInside(root: string, path: string): string | null {
   }
 }
 
-function headersFor(type: string): Record<string, string> {
+/** Headers of everything that is sent. */
+export function headersFor(type: string): Record<string, string> {
   return {
     'content-type': type,
     'content-security-policy': contentSecurityPolicy,

@@ -16,6 +16,13 @@ export async function chooseFile(): Promise<OpenedFile | null> {
   return file && readFile(file);
 }
 
+/** The file that the program was started with; null when there was none. */
+export async function givenFile(): Promise<OpenedFile | null> {
+  if (window.joulewright) return window.joulewright.givenFile();
+  const response = await fetch('./given-file.json').catch(() => null);
+  return response?.ok ? ((await response.json()) as OpenedFile | null) : null;
+}
+
 export async function readFile(file: File): Promise<OpenedFile> {
   return { name: file.name, text: await file.text(), size: file.size };
 }
