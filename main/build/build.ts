@@ -66,5 +66,12 @@ export async function buildAll(): Promise<void> {
   await buildWindow({ configFile: resolve(root, '.config/vite.config.ts'), logLevel: 'warn' });
 }
 
-if (realpathSync(process.argv[1] ?? '') === fileURLToPath(import.meta.url))
-  await (process.argv[2] === 'cli' ? buildCommandLine() : buildAll());
+if (realpathSync(process.argv[1] ?? '') === fileURLToPath(import.meta.url)) {
+  try {
+    await (process.argv[2] === 'cli' ? buildCommandLine() : buildAll());
+  } catch (error) {
+    // The bundlers have shown where; a stack of theirs would bury it.
+    console.error((error as Error).message);
+    process.exitCode = 1;
+  }
+}
