@@ -59,9 +59,9 @@ export const catalogue = {
     means: 'The first key says which version of the format the file is written in.',
   },
   'more-problems': {
-    severity: 'error',
-    says: '{found} more problems are not listed.',
-    means: 'Only the first thousand are listed.',
+    severity: 'note',
+    says: 'Found {found}; listed are {accepted}.',
+    means: 'After a thousand errors reading stops; of warnings and notes the first thousand are listed.',
   },
   'missing-key': {
     severity: 'error',

@@ -2,7 +2,7 @@ import { problem, type Problem } from '../core/problem.js';
 import { documentFields, FORMAT, type MechanismDocument } from './document.js';
 import { collectIds } from './fields/ids.js';
 import { readRecord } from './fields/read-record.js';
-import { Reading, type AppliedDefault } from './fields/reading.js';
+import { Reading, TooManyErrors, type AppliedDefault } from './fields/reading.js';
 import { parseJson } from './json/parse.js';
 import { describe, isObject, own, type JsonObject } from './json/value.js';
 import { migrate } from './migrate.js';
@@ -55,9 +55,11 @@ function wrongFormat(tree: JsonObject): Problem {
 function readTree(tree: MechanismDocument, found: Problem[]): ReadResult {
   const { ids, problems } = collectIds(tree);
   const reading = new Reading(ids);
-  for (const each of [...found, ...problems]) reading.add(each);
-  const { draft } = readRecord(documentFields, tree, { pointer: '', of: [] }, reading);
-  const mechanism = resolveMechanism(draft, tree, reading);
+  const mechanism = untilTooMany(() => {
+    for (const each of [...found, ...problems]) reading.add(each);
+    const { draft } = readRecord(documentFields, tree, { pointer: '', of: [] }, reading);
+    return resolveMechanism(draft, tree, reading);
+  });
   reading.finish();
   return {
     document: tree,
@@ -65,4 +67,14 @@ function readTree(tree: MechanismDocument, found: Problem[]): ReadResult {
     problems: reading.problems,
     defaults: reading.defaults,
   };
+}
+
+/** What `read` gives; null where it gave up. */
+function untilTooMany(read: () => Mechanism): Mechanism | null {
+  try {
+    return read();
+  } catch (error) {
+    if (error instanceof TooManyErrors) return null;
+    throw error;
+  }
 }

@@ -10,8 +10,11 @@ export interface AppliedDefault {
   why: string;
 }
 
-/** At most so many problems are told; a last one says how many more there were. */
+/** So many errors end the reading; so many warnings and notes are told. */
 const MOST = 1000;
+
+/** Ends a reading in which everything seems to be wrong, so that it does not take for ever. */
+export class TooManyErrors extends Error {}
 
 /** What one reading of a document gathers. */
 export class Reading {
@@ -20,6 +23,8 @@ export class Reading {
   errorCount = 0;
   private untold = 0;
   private readonly listed = new Set<string>();
+  /** Where the text itself was wrong, which explains any problem with the value there. */
+  private readonly explained = new Set<string>();
 
   constructor(readonly ids: IdTable) {}
 
@@ -27,16 +32,18 @@ export class Reading {
     this.add(problem(code, place, values));
   }
 
+  /** @throws TooManyErrors */
   add(found: Problem): void {
-    if (found.severity === 'error') this.errorCount += 1;
-    if (this.problems.length >= MOST) {
+    if (found.code === 'wrong-type' && this.explained.has(found.pointer)) return;
+    if (found.code === 'not-finite' || found.code === 'number-range') this.explained.add(found.pointer);
+    if (found.severity !== 'error' && this.problems.length - this.errorCount >= MOST) {
       this.untold += 1;
       return;
     }
-    // What the text itself got wrong at a place explains any problem with the value there.
-    const isKnown = this.problems.some((other) => other.pointer === found.pointer && explains(other.code));
-    if (isKnown && found.code === 'wrong-type') return;
     this.problems.push(found);
+    if (found.severity !== 'error') return;
+    this.errorCount += 1;
+    if (this.errorCount >= MOST) throw new TooManyErrors();
   }
 
   applied(pointer: string, value: JsonValue, why: string): void {
@@ -53,12 +60,14 @@ export class Reading {
 
   /** Closes the list; call once. */
   finish(): void {
-    if (this.untold === 0) return;
-    this.problems.push(problem('more-problems', { pointer: '', of: [] }, { found: this.untold }));
+    if (this.errorCount >= MOST) this.more(`more than ${MOST} errors`);
+    else if (this.untold > 0) this.more(`${this.untold} more warnings and notes`);
+  }
+
+  private more(found: string): void {
+    this.problems.push(problem('more-problems', { pointer: '', of: [] }, { found, accepted: `${MOST}` }));
   }
 }
-
-const explains = (code: string): boolean => code === 'not-finite' || code === 'number-range';
 
 /** The place one key further in, of the same elements. */
 export const inside = (place: Place, key: string | number): Place => ({

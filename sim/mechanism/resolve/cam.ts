@@ -111,7 +111,7 @@ function spans(table: Vec[], over: number, lift: number): boolean {
 function checkTurn(segments: CamSegment[], place: Place, reading: Reading): boolean {
   const turn = segments.reduce((sum, segment) => sum + segment.over, 0);
   const lift = segments.reduce((sum, segment) => sum + segment.lift, 0);
-  const greatest = Math.max(...segments.map((segment) => Math.abs(segment.lift)));
+  const greatest = segments.reduce((most, segment) => Math.max(most, Math.abs(segment.lift)), 0);
   if (Math.abs(turn - 2 * Math.PI) > TURN_TOLERANCE) {
     const found = `${Number(((turn * 180) / Math.PI).toPrecision(9))} deg in all`;
     reading.report('cam-turn', place, { found, accepted: '360 deg in all' });

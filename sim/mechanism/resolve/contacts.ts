@@ -6,11 +6,13 @@ import type { ContactDocument, ContactPair, MaterialTable } from '../kinds/conta
 import type { Joint } from '../kinds/joint.js';
 import type { Track } from '../kinds/track.js';
 import { formatQuantity } from '../units/format.js';
-import { surfaceOf } from './surface.js';
+import { Surfaces } from './surface.js';
 
 export interface ContactScene {
-  bodies: readonly Pick<Body, 'id' | 'shape' | 'material'>[];
-  tracks: readonly Pick<Track, 'id' | 'material'>[];
+  bodies: readonly Pick<Body, 'id' | 'shape'>[];
+  tracks: readonly Pick<Track, 'id'>[];
+  /** Name of the material of a body or track. */
+  materialOf: ReadonlyMap<string, string | undefined>;
   joints: readonly Joint[];
   materials: MaterialTable;
   /** Default of `restSpeed` [m/s], and why. */
@@ -36,7 +38,8 @@ export function resolveContacts(
   for (const rank of [2, 1, 0]) {
     for (const entry of whole.filter((each) => rankOf(each.value) === rank)) expander.take(entry, rank);
   }
-  return expander.pairs().map(({ between, entry }) => contactPair(between, entry, scene, reading));
+  const surfaces = new Surfaces(scene.materials, reading);
+  return expander.pairs().map(({ between, entry }) => contactPair(between, entry, scene, surfaces, reading));
 }
 
 interface Won {
@@ -151,9 +154,16 @@ function sameValues(a: ContactDocument, b: ContactDocument): boolean {
   return [...keys].every((key) => rest[key] === other[key]);
 }
 
-function contactPair(between: [string, string], entry: Entry, scene: ContactScene, reading: Reading): ContactPair {
+function contactPair(
+  between: [string, string],
+  entry: Entry,
+  scene: ContactScene,
+  surfaces: Surfaces,
+  reading: Reading,
+): ContactPair {
   const { value, place } = entry;
-  const surface = surfaceOf(between, value, place, scene, reading);
+  const [a, b] = between.map((id) => scene.materialOf.get(id));
+  const surface = surfaces.of(value, place, a, b);
   if (value.restSpeed === undefined) {
     reading.appliedOnce(
       `${place.pointer}/restSpeed`,

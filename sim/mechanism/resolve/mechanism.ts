@@ -40,8 +40,9 @@ export function resolveMechanism(draft: DocumentDraft, tree: JsonObject, reading
   const mechanism = { ...heading(draft), ...parts, ...linked(draft, extent, reading), ...study(draft, tree, reading) };
   const { gravity } = mechanism;
   const scene = {
-    bodies: placed.map((body) => ({ ...body, material: materialOf(bodies, body.id) })),
+    bodies: placed,
     tracks,
+    materialOf: new Map([...bodies, ...tracks].map(({ id, material }) => [id, material])),
     joints: mechanism.joints,
     materials: draft.materials ?? {},
     restSpeed: restSpeedOf(norm(gravity), extent, bodies, tracks),
@@ -63,9 +64,6 @@ function placesOf(draft: DocumentDraft): Map<string, Place> {
   const places = lists.flatMap((elements) => elements.map(({ place }) => place));
   return new Map(places.flatMap((place) => place.of.map((id): [string, Place] => [id, place])));
 }
-
-const materialOf = (bodies: readonly Body[], id: string): string | undefined =>
-  bodies.find((body) => body.id === id)?.material;
 
 /** Each element that is right, resolved. */
 function resolved<T, R>(elements: Element<T>[] | undefined, resolve: (value: T, place: Place) => R | undefined): R[] {

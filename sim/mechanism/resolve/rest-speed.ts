@@ -15,7 +15,8 @@ export function restSpeedOf(
   bodies: readonly Body[],
   tracks: readonly Track[],
 ): { value: number; why: string } {
-  const starting = Math.max(0, ...bodies.map((body) => norm(body.velocity)), ...tracks.map(beltSpeed));
+  const speeds = [...bodies.map((body) => norm(body.velocity)), ...tracks.map(beltSpeed)];
+  const starting = speeds.reduce((most, speed) => Math.max(most, speed), 0);
   const [speed, of] =
     gravity > 0
       ? [Math.sqrt(gravity * extent), '√(g × extent)']

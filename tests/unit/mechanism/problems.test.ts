@@ -104,11 +104,20 @@ describe('Reading a document', () => {
     expect(told(readMechanism(' '.repeat(LARGEST_FILE)))).toEqual(['file-too-large ']);
   });
 
-  it('lists a thousand problems, and says how many more there are', () => {
+  it('stops after a thousand errors, and says so', () => {
     const bodies = Array.from({ length: 2000 }, () => ({}));
-    const { problems } = readDocument(altered(ramp(), { bodies }));
+    const { problems, mechanism } = readDocument(altered(ramp(), { bodies }));
     expect(problems).toHaveLength(1001);
-    expect(problems.at(-1)).toMatchObject({ code: 'more-problems', severity: 'error' });
+    expect(problems.at(-1)).toMatchObject({ code: 'more-problems', severity: 'note' });
+    expect(mechanism).toBeNull();
+  });
+
+  it('tells every error, however many notes there are', () => {
+    const extra = Object.fromEntries(Array.from({ length: 1500 }, (_, i) => [`x${i}`, i]));
+    const { problems } = readDocument({ ...extra, ...altered(ramp(), { run: {} }) });
+    expect(problems.filter(({ code }) => code === 'unknown-key')).toHaveLength(1000);
+    expect(problems.map(({ code }) => code)).toContain('missing-key');
+    expect(problems.at(-1)?.text).toBe('Found 500 more warnings and notes; listed are 1000.');
   });
 
   it('is not stained by prototype keys', () => {
