@@ -1,5 +1,5 @@
 import type { PointOn } from '../mechanism/kinds/joint.js';
-import type { AccountSpec, LinkSpec, RecordingLayout } from './recording.js';
+import type { AccountSpec, ContactSpec, LinkSpec, RecordingLayout } from './recording.js';
 
 /** An account before its columns are numbered: what it is, the bodies it works on, and which extra columns it needs. */
 export type AccountRequest = Omit<AccountSpec, 'columns'> & { heat?: boolean; stored?: boolean; input?: boolean };
@@ -30,10 +30,7 @@ export function buildLayout(request: LayoutRequest): RecordingLayout {
     columns: columns.named('x', 'y', 'angle', 'vx', 'vy', 'spin'),
   }));
   const accounts = request.accounts.map((account) => accountSpec(account, columns));
-  const contacts = (request.contacts ?? []).map(({ between }) => ({
-    between,
-    columns: columns.named('points', 'normal', 'friction', 'slip', 'x', 'y', 'nx', 'ny', 'segment'),
-  }));
+  const contacts = (request.contacts ?? []).map((contact) => contactSpec(contact, columns));
   const joints = (request.joints ?? []).map(({ id }) => ({
     id,
     columns: columns.named('fx', 'fy', 'torque', 'x', 'y', 'position'),
@@ -43,9 +40,41 @@ export function buildLayout(request: LayoutRequest): RecordingLayout {
   return { width: columns.next, bodies, accounts, contacts, joints, springs, dampers };
 }
 
+/**
+ * A layout with more accounts and contacts, which take columns after the ones there are; those keep theirs. Spare columns
+ * are left behind them, so that a run that finds its contacts one by one need not be copied each time.
+ */
+export function extendLayout(
+  layout: RecordingLayout,
+  more: Required<Pick<LayoutRequest, 'contacts'>> & Pick<LayoutRequest, 'accounts'>,
+): RecordingLayout {
+  const columns = new ColumnCounter(usedWidth(layout));
+  const accounts = [...layout.accounts, ...more.accounts.map((account) => accountSpec(account, columns))];
+  const contacts = [...layout.contacts, ...more.contacts.map((contact) => contactSpec(contact, columns))];
+  const width = columns.next <= layout.width ? layout.width : Math.ceil(columns.next * SPARE);
+  return { ...layout, width, accounts, contacts };
+}
+
+/** How much wider than needed an extended layout is made. */
+const SPARE = 1.25;
+
+/** First column that nothing has taken. */
+function usedWidth({ bodies, accounts, contacts, joints, springs, dampers }: RecordingLayout): number {
+  const named = [...bodies, ...contacts, ...joints, ...springs, ...dampers].flatMap(({ columns }) =>
+    Object.values(columns),
+  );
+  const booked = accounts.flatMap(({ columns: { work, heat = 0, stored = 0, input = 0 } }) => [
+    ...work,
+    heat,
+    stored,
+    input,
+  ]);
+  return 1 + [...named, ...booked].reduce((most, column) => Math.max(most, column), 0);
+}
+
 class ColumnCounter {
   /** Column 0 is time. */
-  next = 1;
+  constructor(public next = 1) {}
 
   take(): number {
     return this.next++;
@@ -62,6 +91,11 @@ function accountSpec({ heat, stored, input, ...account }: AccountRequest, column
   if (stored) numbered.stored = columns.take();
   if (input) numbered.input = columns.take();
   return { ...account, columns: numbered };
+}
+
+function contactSpec({ between }: { between: [string, string] }, columns: ColumnCounter): ContactSpec {
+  const named = columns.named('points', 'normal', 'friction', 'slip', 'x', 'y', 'nx', 'ny', 'segment');
+  return { between, columns: named };
 }
 
 function linkSpec({ id, between }: LinkRequest, columns: ColumnCounter): LinkSpec {

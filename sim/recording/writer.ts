@@ -20,7 +20,7 @@ export interface RecordingStart {
  * solver's steps become rows is the solver's choice; the writer only refuses to go back in time.
  */
 export class RecordingWriter {
-  readonly layout: RecordingLayout;
+  layout: RecordingLayout;
   private readonly solver: Recording['solver'];
   private readonly step: number | undefined;
   private rows: Float64Array;
@@ -63,6 +63,21 @@ export class RecordingWriter {
     this.count += 1;
     this.rows[this.offset(row)] = time;
     return row;
+  }
+
+  /**
+   * Take a layout that adds columns to the present one (`extendLayout`); they read 0 in the rows that are there. Views
+   * taken before keep their own rows and layout.
+   */
+  widen(layout: RecordingLayout): void {
+    const before = this.layout.width;
+    this.layout = layout;
+    if (layout.width === before) return;
+    const wider = new Float64Array((this.rows.length / before) * layout.width);
+    for (let row = 0; row < this.count; row += 1) {
+      wider.set(this.rows.subarray(row * before, (row + 1) * before), row * layout.width);
+    }
+    this.rows = wider;
   }
 
   /** Record something that happened, at a row that is already there. */

@@ -49,12 +49,6 @@ export class BookedAccount {
     sums[slot] = after;
   }
 
-  /** Sets the work of a slot whose account is a function of the state (gravity). */
-  setWork(slot: number, value: number): void {
-    this.sums[slot] = value;
-    this.rests[slot] = 0;
-  }
-
   /** Lost at the interface, positive. */
   heat(value: number): void {
     this.work(this.sums.length - 1, value);

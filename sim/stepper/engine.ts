@@ -17,8 +17,12 @@ import { copyState, isFiniteState } from './state.js';
 import { findStep } from './step-finder.js';
 import { Trial, type Passage } from './trial.js';
 
-/** Events within one step beyond which they are taken to accumulate: impacts are then plastic. */
-const MOST_EVENTS = 200;
+/**
+ * Events located within one step: at most 40, fewer the more contacts there are, none in a large pile. Touches beyond
+ * that wait for the step's end.
+ */
+const MOST_LOCATED = 40;
+const LOCATED_BY_CONTACTS = 300;
 /** Impacts that one impact may set off at the same instant. */
 const MOST_ROUNDS = 20;
 
@@ -85,7 +89,7 @@ export class Engine {
     manager.refresh();
     for (const touch of manager.touches) manager.settle(touch);
     this.settleStops();
-    this.bookGravity();
+    this.storeHeights();
     this.log.record();
     this.log.reach(this.watch.reach(({ when }) => when.kind === 'start' || isDue(when, 0), 0));
     this.sliding.renew();
@@ -100,14 +104,12 @@ export class Engine {
     let left = whole;
     let events = 0;
     while (left > 1e-12 * whole && this.end === null) {
-      left -= this.substep(Math.min(left, this.untilNextMoment()), events > MOST_EVENTS);
+      const locates = events < this.mostLocated();
+      if (!locates) this.reportCrowd(events);
+      left -= this.substep(Math.min(left, this.untilNextMoment()), locates);
       events += 1;
     }
     this.steps += 1;
-    if (events > MOST_EVENTS) {
-      const text = `More than ${MOST_EVENTS} events fell within one step; impacts there were taken as plastic, and their loss is booked to them.`;
-      this.log.warn('events-accumulate', text, []);
-    }
     if (this.end === null && this.steps % this.options.rowEvery === 0) this.log.record();
   }
 
@@ -119,12 +121,16 @@ export class Engine {
     return Math.max(0, next - now) / this.assembly.scene.scale.time;
   }
 
-  private substep(tau: number, isCrowded: boolean): number {
+  private mostLocated(): number {
+    return Math.min(MOST_LOCATED, Math.floor(LOCATED_BY_CONTACTS / (this.assembly.manager.touches.length + 1)));
+  }
+
+  private substep(tau: number, locates: boolean): number {
     const { scene } = this.assembly;
     this.trial.begin();
-    const { taken, met } = findStep(this.trial, scene.state, tau);
-    this.shock.isPlastic = isCrowded;
-    this.commit(taken, met);
+    const { taken, met } = findStep(this.trial, scene.state, tau, locates);
+    // Where slides were not followed to their end, what has turned round has stopped.
+    this.commit(taken, locates ? met : [...met, ...this.trial.passedSlips()]);
     if (!isFiniteState(scene.state)) this.finish('nonFinite');
     return Math.max(taken, 1e-15 * tau);
   }
@@ -165,6 +171,7 @@ export class Engine {
       c_position.a = middle.a[i];
     });
     this.projection.resetReadings();
+    this.bookWeights(2 * half);
     this.solver.rigid.book();
     this.solver.soft.book();
     for (const rolling of this.solver.rolling) rolling.book();
@@ -190,23 +197,32 @@ export class Engine {
       for (const element of elements) element.project?.();
       this.solver.soft.project();
     }
-    this.bookGravity();
+    this.storeHeights();
+  }
+
+  /** Work of the weights over a step, from the same mean velocities that changed the speeds: no height is rounded. */
+  private bookWeights(tau: number): void {
+    const { gravity, scene } = this.assembly;
+    const { vx, vy } = this.trial.mean;
+    gravity.forEach((booked, i) => {
+      booked.work(0, tau * scene.mass[i] * (scene.gravity.x * vx[i] + scene.gravity.y * vy[i]));
+    });
   }
 
   /** Gravity's account counts every change of height; a projected one did no work on the speed. */
   private bookMove(body: number, dx: number, dy: number): void {
-    const { scene } = this.assembly;
+    const { scene, gravity } = this.assembly;
     const work = scene.mass[body] * (scene.gravity.x * dx + scene.gravity.y * dy);
-    if (work !== 0) scene.numerical.add('position-projection', body, -work);
+    if (work === 0) return;
+    gravity[body].work(0, work);
+    scene.numerical.add('position-projection', body, -work);
   }
 
-  private bookGravity(): void {
+  private storeHeights(): void {
     const { scene, gravity } = this.assembly;
-    const { state, start } = scene;
+    const { x, y } = scene.state;
     gravity.forEach((booked, i) => {
-      const height = (x: number, y: number): number => -scene.mass[i] * (scene.gravity.x * x + scene.gravity.y * y);
-      booked.stored = height(state.x[i], state.y[i]);
-      booked.setWork(0, height(start.x[i], start.y[i]) - booked.stored);
+      booked.stored = -scene.mass[i] * (scene.gravity.x * x[i] + scene.gravity.y * y[i]);
     });
   }
 
@@ -264,7 +280,7 @@ export class Engine {
 
   /** A pair that carried force over the last step and carries none now has parted. */
   private noticePartings(): void {
-    for (const pair of this.assembly.manager.pairs) {
+    for (const pair of this.assembly.manager.met) {
       const carries = pair.reading.normal > 0;
       if (pair.isLasting && !carries) this.log.pair('parts', pair);
       pair.isLasting = carries;
@@ -319,6 +335,14 @@ export class Engine {
       sweeps: this.solver.sweeps,
       unconvergedSolves: this.solver.unconverged,
     });
+  }
+
+  private reportCrowd(events: number): void {
+    const text =
+      events > 0
+        ? `More than ${events} events fell within one step; further touches there were taken at its end, and what their overlap costs is booked as numerical.`
+        : "There are too many contacts to find each touch within a step; touches were taken at the steps' ends, and what their overlap costs is booked as numerical.";
+    this.log.warn('events-accumulate', text, []);
   }
 
   private reportCut(strikes: readonly Strike[]): void {

@@ -94,7 +94,7 @@ export class Projection {
 
   /** Clears what the recorder was shown, before a step is booked. */
   resetReadings(): void {
-    for (const { reading } of this.manager.pairs) {
+    for (const { reading } of this.manager.met) {
       reading.points = 0;
       reading.normal = 0;
       reading.friction = 0;

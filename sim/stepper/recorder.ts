@@ -1,4 +1,4 @@
-import { buildLayout, RecordingWriter } from '../recording/index.js';
+import { buildLayout, extendLayout, RecordingWriter } from '../recording/index.js';
 import type { RecordingLayout } from '../recording/recording.js';
 import type { ContactManager } from './contact/manager.js';
 import type { DamperElement } from './kinds/damper.js';
@@ -19,7 +19,7 @@ interface Recorded {
 /** Writes the engine's state as rows of a recording, in SI. */
 export class Recorder {
   readonly writer: RecordingWriter;
-  private readonly layout: RecordingLayout;
+  private layout: RecordingLayout;
 
   constructor(
     private readonly recorded: Recorded,
@@ -27,10 +27,11 @@ export class Recorder {
   ) {
     const { scene, manager } = recorded;
     const { mechanism } = scene;
+    openAccounts(manager);
     this.layout = buildLayout({
       bodies: mechanism.bodies.map(({ id, mass, inertia }) => ({ id, mass, inertia })),
       accounts: scene.books.accounts,
-      contacts: manager.pairs.map(({ between }) => ({ between })),
+      contacts: manager.met.map(({ between }) => ({ between })),
       joints: recorded.joints.map(({ id }) => ({ id })),
       springs: mechanism.springs.map(({ id, between }) => ({ id, between })),
       dampers: mechanism.dampers.map(({ id, between }) => ({ id, between })),
@@ -41,6 +42,7 @@ export class Recorder {
   /** Adds a row for the state now in the scene (its transforms are in planck). */
   row(): number {
     const { scene } = this.recorded;
+    this.widen();
     const row = this.writer.addRow(scene.time * scene.scale.time);
     const { buffer } = this.writer;
     const offset = this.writer.offset(row);
@@ -52,6 +54,19 @@ export class Recorder {
     this.contacts(put);
     this.links(put);
     return row;
+  }
+
+  /** Columns for the pairs that met since the last row. */
+  private widen(): void {
+    const { scene, manager } = this.recorded;
+    const { accounts, contacts } = this.layout;
+    if (manager.met.length === contacts.length) return;
+    openAccounts(manager);
+    this.layout = extendLayout(this.layout, {
+      accounts: scene.books.accounts.slice(accounts.length),
+      contacts: manager.met.slice(contacts.length).map(({ between }) => ({ between })),
+    });
+    this.writer.widen(this.layout);
   }
 
   private bodies(put: (column: number, value: number) => void): void {
@@ -86,7 +101,7 @@ export class Recorder {
     const { scene, manager } = this.recorded;
     const { force, speed, length } = scene.scale;
     this.layout.contacts.forEach(({ columns }, index) => {
-      const { reading } = manager.pairs[index];
+      const { reading } = manager.met[index];
       put(columns.points, reading.points);
       put(columns.normal, reading.normal * force);
       put(columns.friction, reading.friction * force);
@@ -121,4 +136,8 @@ export class Recorder {
       put(columns.force, force);
     });
   }
+}
+
+function openAccounts({ met }: ContactManager): void {
+  for (const pair of met) pair.openAccounts();
 }

@@ -78,9 +78,9 @@ export class ShockBooks {
       const { nA, nB, tA, tB } = this.solver.rigid.rate(touch, point);
       const onA = -(n * nA + t * tA);
       const onB = n * nB + t * tB;
-      addWork(pair.impact, pair, bodyA, onA, onB);
+      addWork(pair.accounts.impact, pair, bodyA, onA, onB);
       // What a belt puts in through its surface is no loss of the impact.
-      pair.impact.heat(-(onA + onB) + t * contact.m_tangentSpeed);
+      pair.accounts.impact.heat(-(onA + onB) + t * contact.m_tangentSpeed);
       const { c } = this.scene.bodies[bodyB].c_position;
       pair.reading.x = c.x + point.rB.x;
       pair.reading.y = c.y + point.rB.y;

@@ -13,7 +13,9 @@ import { newState, type State } from './state.js';
 const IMPACT = 1e-6;
 /** A closed point or joint whose rate is off by more than this is brought back [engine speed]. */
 const OFF = 1e-8;
-const MOST_SWEEPS = 2000;
+/** Sweeps at the most: small mechanisms are solved out, large piles are not (what is left is booked). */
+const sweepsFor = (constraints: number): number =>
+  Math.max(30, Math.min(2000, Math.round(200000 / (constraints + 1) ** 1.5)));
 const CONVERGED = 1e-14;
 
 /** A pair or a stop that was struck, for the run's events. */
@@ -64,8 +66,6 @@ export class Shock {
   restitutionCut = 1;
   /** The last call of `resolve` changed the velocities. */
   hasChanged = false;
-  /** Takes every impact as plastic. */
-  isPlastic = false;
 
   constructor(
     private readonly scene: Scene,
@@ -230,7 +230,7 @@ export class Shock {
 
   private impact(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): void {
     const kinetic = this.kinetic(state);
-    let cut = this.isPlastic ? 0 : 1;
+    let cut = 1;
     this.solveImpact(struck, stops, cut);
     // A belt may well add energy through its surface.
     const isDriven = this.solver.rigid.live.some(({ contact }) => contact.m_tangentSpeed !== 0);
@@ -248,7 +248,7 @@ export class Shock {
       this.solveImpact(struck, stops, low);
       cut = low;
     }
-    this.restitutionCut = this.isPlastic ? 1 : cut;
+    this.restitutionCut = cut;
     getVelocities(this.scene, state.vx, state.vy, state.w);
     this.books.impact(this.before);
   }
@@ -284,7 +284,8 @@ export class Shock {
   private repeat(sweep: () => void): void {
     const { scene, solver, last } = this;
     getVelocities(scene, last.vx, last.vy, last.w);
-    for (let i = 0; i < MOST_SWEEPS; i += 1) {
+    const most = sweepsFor(2 * (solver.rigid.live.length + solver.joints.length));
+    for (let i = 0; i < most; i += 1) {
       sweep();
       solver.sweeps += 1;
       if (this.change() <= CONVERGED) return;

@@ -1,5 +1,4 @@
 import type { ContactManager } from './contact/manager.js';
-import type { Pair } from './contact/pair.js';
 import type { Touch } from './contact/touch.js';
 import type { RunLog } from './run-log.js';
 import { setVelocities, type Scene } from './scene.js';
@@ -45,18 +44,16 @@ export class SlidingModes {
 
   /** Tells of pairs in lasting contact that began or ceased to slide. */
   notice(log: RunLog): void {
-    for (const pair of this.manager.pairs) {
-      if (pair.friction === null) continue;
-      const slides = this.isSliding(pair);
+    const { rigid, soft } = this.solver;
+    const sliding = new Set<number>();
+    for (const touch of rigid.live) if (touch.sliding !== 0) sliding.add(touch.solvedPair);
+    for (const point of soft.live) if (point.sliding !== 0) sliding.add(point.pair.index);
+    for (const pair of this.manager.met) {
+      if (!pair.rubs) continue;
+      const slides = sliding.has(pair.index);
       if (slides === pair.wasSliding) continue;
       pair.wasSliding = slides;
       if (pair.isLasting) log.pair(slides ? 'slips' : 'sticks', pair);
     }
-  }
-
-  private isSliding({ index }: Pair): boolean {
-    const { rigid, soft } = this.solver;
-    if (soft.live.some((point) => point.pair.index === index && point.sliding !== 0)) return true;
-    return rigid.live.some((touch) => touch.solvedPair === index && touch.sliding !== 0);
   }
 }

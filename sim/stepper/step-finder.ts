@@ -9,11 +9,12 @@ const MOST_TRIALS = 80;
  * secant, halved when that stalls (regula falsi guarded by bisection; Brent, *Algorithms for Minimization without
  * Derivatives*, 1973, ch. 4).
  *
+ * @param locates whether touches and stops are looked for; where they come too thick they wait for the step's end
  * @returns the step taken (the trial stands at its end) and what is met there
  */
-export function findStep(trial: Trial, state: State, tau: number): { taken: number; met: Passage[] } {
+export function findStep(trial: Trial, state: State, tau: number, locates: boolean): { taken: number; met: Passage[] } {
   trial.run(state, tau);
-  let passed = trial.passed();
+  let passed = trial.passed(locates);
   if (passed.length === 0) return { taken: tau, met: [] };
   const known: Passage[] = [];
   const lowValues: number[] = [];
@@ -26,7 +27,7 @@ export function findStep(trial: Trial, state: State, tau: number): { taken: numb
     if (i % 3 === 2) width = high - low;
     const at = slow ? (low + high) / 2 : earliest(passed, known, lowValues, low, high);
     trial.run(state, at);
-    const now = trial.passed();
+    const now = trial.passed(locates);
     if (now.length > 0) {
       high = at;
       passed = now;
@@ -43,7 +44,7 @@ export function findStep(trial: Trial, state: State, tau: number): { taken: numb
   }
   // The event jumps instead of passing through zero: take the step to just after it.
   trial.run(state, high);
-  return { taken: high, met: trial.passed() };
+  return { taken: high, met: trial.passed(locates) };
 }
 
 function track(trial: Trial, passage: Passage, state: State, known: Passage[], lowValues: number[]): void {

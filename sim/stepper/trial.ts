@@ -98,8 +98,30 @@ export class Trial {
     for (const friction of frictions) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
   }
 
-  /** Everything that is past its zero at the trial's end by more than its tolerance. */
-  passed(): Passage[] {
+  /**
+   * Everything that is past its zero at the trial's end by more than its tolerance; `contacts`: what contacts and stops do
+   * too, not stations alone.
+   */
+  passed(contacts: boolean): Passage[] {
+    const found: Passage[] = contacts ? [...this.passedTouches(), ...this.passedSlips()] : [];
+    for (const source of this.watch.smooth()) {
+      const value = this.stationValue(source);
+      if (value < -1) found.push({ kind: 'station', source, value });
+    }
+    return found;
+  }
+
+  /** What slides the other way at the trial's end than at its start. */
+  passedSlips(): Passage[] {
+    const found: Passage[] = [];
+    for (const source of this.startSlip.keys()) {
+      const value = this.slipValue(source);
+      if (value < -1) found.push({ kind: 'slip', source, value });
+    }
+    return found;
+  }
+
+  private passedTouches(): Passage[] {
     const found: Passage[] = [];
     for (const source of this.manager.touches) {
       const value = this.gapValue(source);
@@ -112,14 +134,6 @@ export class Trial {
         const value = stopValue(source, source.gap());
         if (value < -1) found.push({ kind: 'stop', source, value });
       }
-    }
-    for (const source of this.startSlip.keys()) {
-      const value = this.slipValue(source);
-      if (value < -1) found.push({ kind: 'slip', source, value });
-    }
-    for (const source of this.watch.smooth()) {
-      const value = this.stationValue(source);
-      if (value < -1) found.push({ kind: 'station', source, value });
     }
     return found;
   }

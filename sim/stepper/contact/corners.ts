@@ -48,7 +48,7 @@ export function coreAgainstCorners(touch: Touch, pose: Pose, pairOf: PairOf): vo
 function featuresOf(core: CoreShape, chain: Chain, pose: Pose): Feature[] {
   const features: Feature[] = [];
   chain.ends.forEach((end, index) => {
-    if (end.isHidden) return;
+    if (end.isHidden || isFar(core, pose, end)) return;
     const feature = meetPoint(core, pose, end.x, end.y);
     if (!feature) return;
     features.push({ ...feature, ...end, key: 64 + 16 * index + (feature.vertex >= 0 ? 8 : 0), segment: end.segment });
@@ -58,6 +58,12 @@ function featuresOf(core: CoreShape, chain: Chain, pose: Pose): Feature[] {
     core.normals.forEach((_, edge) => features.push(...bulges(core, edge, pose, link, index)));
   });
   return features;
+}
+
+/** Farther than half the body's size again: nothing that a step could reach. */
+function isFar({ reach }: CoreShape, { p }: Pose, { x, y }: { x: number; y: number }): boolean {
+  const far = 1.5 * reach;
+  return (x - p.x) ** 2 + (y - p.y) ** 2 > far * far;
 }
 
 /** Nearest by size of the gap: a point deep in the body is behind another face. */

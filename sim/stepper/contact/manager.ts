@@ -7,7 +7,7 @@ import { buildChains, type Chain } from './chain.js';
 import { coreAgainstCore } from './core-core.js';
 import { coreAgainstCorners } from './corners.js';
 import { coresOf, cornersOf } from './outline.js';
-import { buildPair, type Pair } from './pair.js';
+import { Pair } from './pair.js';
 import { CORE, CoreShape, CornersShape, SURFACE, SurfaceShape } from './shapes.js';
 import { coreAgainstSurface, type PairOf } from './surface.js';
 import { fillManifold, isClosedKey, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
@@ -18,10 +18,14 @@ export const SKIN = 1e-7;
 const DEEPEST = 1e-2;
 /** A body this deep at first sight is behind the surface, not on it. */
 const BEHIND = 1e-5;
+/** So few pairs are all recorded from the start; of more, each from its first touch on. */
+const OPEN_AT_ONCE = 100;
 
 /** Fixtures, contact pairs and the present contact geometry of a scene. */
 export class ContactManager {
   readonly pairs: Pair[];
+  /** Pairs that have met, or may: those that have columns in the recording. */
+  readonly met: Pair[] = [];
   readonly touches: Touch[] = [];
   readonly pairOf: PairOf;
   private readonly tracks: Track[];
@@ -37,7 +41,8 @@ export class ContactManager {
     const { mechanism, scale } = scene;
     this.tracks = mechanism.tracks.map((track) => scaleTrack(track, scale.length));
     this.travel = new Float64Array(scene.ids.length);
-    this.pairs = mechanism.contacts.map((pair, index) => buildPair(scene, pair, index));
+    this.pairs = mechanism.contacts.map((pair, index) => new Pair(scene, pair, index));
+    if (this.pairs.length <= OPEN_AT_ONCE) this.met.push(...this.pairs);
     this.indexPairs();
     this.pairOf = (bodyA, bodyB, track) =>
       bodyB < 0
@@ -225,6 +230,7 @@ export class ContactManager {
         slot = 1;
       }
     }
+    if (this.isActive(touch)) this.meet(this.pairs[touch.pair]);
     touch.openGap = leastOpenGap(touch);
     touch.isFresh = this.isActive(touch) && (!wasActive || touch.pair !== touch.startPair);
     touch.startPair = touch.pair;
@@ -232,6 +238,10 @@ export class ContactManager {
     touch.startSeam = this.seamNow(touch);
     // Trials of the next step all start from here, whatever the ones before them found at their ends.
     fillManifold(touch, ({ key }) => isClosedKey(touch, key));
+  }
+
+  private meet(pair: Pair): void {
+    if (this.pairs.length > OPEN_AT_ONCE && !this.met.includes(pair)) this.met.push(pair);
   }
 
   /** A compliant pair may overlap as far as its force allows. */

@@ -1,4 +1,5 @@
 import type { ContactPair } from '../../mechanism/kinds/contact.js';
+import type { AccountName } from '../../recording/recording.js';
 import { PairAccount } from '../books.js';
 import { partIndex, type Scene } from '../scene.js';
 
@@ -15,77 +16,81 @@ export interface PairReading {
   segment: number;
 }
 
-/** A contact pair in engine units, with its accounts and what was last seen of it. */
-export interface Pair {
-  index: number;
-  between: [string, string];
-  /** Body indices in the document's order; −1 for a track. */
-  first: number;
-  second: number;
-  /** Lower indices: the order of the accounts' slots. */
-  low: number;
-  high: number;
-  staticFriction: number;
-  kineticFriction: number;
-  restitution: number;
-  restSpeed: number;
-  rollingResistance: number;
-  stiffness: number;
-  damping: number;
-  isSoft: boolean;
+/** The accounts of a pair; null where the pair has no such thing. */
+export interface PairAccounts {
   reaction: PairAccount;
   friction: PairAccount | null;
   rolling: PairAccount | null;
   impact: PairAccount;
   spring: PairAccount | null;
   damper: PairAccount | null;
-  reading: PairReading;
-  /** It carried force over the last step. */
-  isLasting: boolean;
-  wasSliding: boolean;
 }
 
-export function buildPair(scene: Scene, pair: ContactPair, index: number): Pair {
-  const { scale, books, ids } = scene;
-  const [first, second] = pair.between.map((id) => partIndex(scene, id)) as [number, number];
-  // The ground, and then the body listed first, is A of the accounts.
-  const [low, high] = second < 0 ? [second, first] : first < 0 ? [first, second] : [first, second];
-  const bodies = PairAccount.bodies(ids, low, high);
-  const open = (account: 'reaction' | 'friction' | 'rolling-resistance' | 'impact' | 'spring' | 'damper') =>
-    new PairAccount(
-      books.open(account, pair.between, bodies, {
-        heat: account !== 'reaction' && account !== 'spring',
-        stored: account === 'spring',
-      }),
-      low,
-      high,
-    );
-  const rubs = pair.staticFriction > 0 || pair.kineticFriction > 0;
-  return {
-    index,
-    between: pair.between,
-    first,
-    second,
-    low,
-    high,
-    staticFriction: pair.staticFriction,
-    kineticFriction: pair.kineticFriction,
-    restitution: pair.restitution,
-    restSpeed: pair.restSpeed / scale.speed,
-    rollingResistance: pair.rollingResistance / scale.length,
-    stiffness: (pair.compliant?.stiffness ?? 0) / scale.rate,
-    damping: (pair.compliant?.damping ?? 0) / scale.damping,
-    isSoft: pair.compliant !== undefined,
-    reaction: open('reaction'),
-    friction: rubs ? open('friction') : null,
-    rolling: pair.rollingResistance > 0 ? open('rolling-resistance') : null,
-    impact: open('impact'),
-    spring: pair.compliant ? open('spring') : null,
-    damper: pair.compliant ? open('damper') : null,
-    reading: { points: 0, normal: 0, friction: 0, slip: 0, x: 0, y: 0, nx: 0, ny: 0, segment: -1 },
-    isLasting: false,
-    wasSliding: false,
-  };
+/** A contact pair in engine units, with its accounts and what was last seen of it. */
+export class Pair {
+  readonly between: [string, string];
+  /** Body indices in the document's order; −1 for a track. */
+  readonly first: number;
+  readonly second: number;
+  /** The ground, or else the body listed first, is the low part: A of the accounts. */
+  readonly low: number;
+  readonly high: number;
+  readonly staticFriction: number;
+  readonly kineticFriction: number;
+  readonly restitution: number;
+  readonly restSpeed: number;
+  readonly rollingResistance: number;
+  readonly stiffness: number;
+  readonly damping: number;
+  readonly isSoft: boolean;
+  readonly rubs: boolean;
+  readonly reading: PairReading = { points: 0, normal: 0, friction: 0, slip: 0, x: 0, y: 0, nx: 0, ny: 0, segment: -1 };
+  /** It carried force over the last step. */
+  isLasting = false;
+  wasSliding = false;
+  private opened: PairAccounts | null = null;
+
+  constructor(
+    private readonly scene: Scene,
+    pair: ContactPair,
+    readonly index: number,
+  ) {
+    const { scale } = scene;
+    this.between = pair.between;
+    [this.first, this.second] = pair.between.map((id) => partIndex(scene, id)) as [number, number];
+    [this.low, this.high] = this.second < 0 ? [this.second, this.first] : [this.first, this.second];
+    this.staticFriction = pair.staticFriction;
+    this.kineticFriction = pair.kineticFriction;
+    this.rubs = pair.staticFriction > 0 || pair.kineticFriction > 0;
+    this.restitution = pair.restitution;
+    this.restSpeed = pair.restSpeed / scale.speed;
+    this.rollingResistance = pair.rollingResistance / scale.length;
+    this.stiffness = (pair.compliant?.stiffness ?? 0) / scale.rate;
+    this.damping = (pair.compliant?.damping ?? 0) / scale.damping;
+    this.isSoft = pair.compliant !== undefined;
+  }
+
+  /** Opened when first asked for: of the many pairs that a wildcard makes, most never meet. */
+  get accounts(): PairAccounts {
+    return this.opened ?? this.openAccounts();
+  }
+
+  openAccounts(): PairAccounts {
+    this.opened ??= {
+      reaction: this.open('reaction', {}),
+      friction: this.rubs ? this.open('friction', { heat: true }) : null,
+      rolling: this.rollingResistance > 0 ? this.open('rolling-resistance', { heat: true }) : null,
+      impact: this.open('impact', { heat: true }),
+      spring: this.isSoft ? this.open('spring', { stored: true }) : null,
+      damper: this.isSoft ? this.open('damper', { heat: true }) : null,
+    };
+    return this.opened;
+  }
+
+  private open(account: AccountName, columns: { heat?: boolean; stored?: boolean }): PairAccount {
+    const bodies = PairAccount.bodies(this.scene.ids, this.low, this.high);
+    return new PairAccount(this.scene.books.open(account, this.between, bodies, columns), this.low, this.high);
+  }
 }
 
 /** Adds work of an account by planck's order of the bodies (A, B), whichever way the pair has them. */

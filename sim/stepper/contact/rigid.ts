@@ -4,6 +4,7 @@ import { MANIFOLD_FACE_A } from '../planck-internals.js';
 import { partInner, type Scene } from '../scene.js';
 import type { State } from '../state.js';
 import type { ContactManager } from './manager.js';
+import type { PairAccount } from '../books.js';
 import { addWork, type Pair } from './pair.js';
 import { CORE } from './shapes.js';
 import { fillManifold, isClosedKey, NO_KEY, type Touch } from './touch.js';
@@ -135,14 +136,15 @@ export class RigidContacts {
       this.rate(touch, point);
       const normal = 2 * point.normalImpulse;
       const tangent = 2 * point.tangentImpulse;
-      this.bookClean(pair.reaction, pair, bodyA, bodyB, -normal * rates.nA, normal * rates.nB, 0);
+      this.bookClean(pair.accounts.reaction, pair, bodyA, bodyB, -normal * rates.nA, normal * rates.nB, 0);
       const slip = rates.tB - rates.tA - contact.m_tangentSpeed;
       const drag = tangent * contact.m_tangentSpeed;
       if (tangent !== 0) {
         if (saturated) {
-          addWork(pair.friction, pair, bodyA, -tangent * rates.tA, tangent * rates.tB);
-          pair.friction?.heat(-tangent * slip);
-        } else this.bookClean(pair.friction, pair, bodyA, bodyB, -tangent * rates.tA, tangent * rates.tB, drag);
+          addWork(pair.accounts.friction, pair, bodyA, -tangent * rates.tA, tangent * rates.tB);
+          pair.accounts.friction?.heat(-tangent * slip);
+        } else
+          this.bookClean(pair.accounts.friction, pair, bodyA, bodyB, -tangent * rates.tA, tangent * rates.tB, drag);
       }
       this.note(touch, pair, point, slip, force);
     }
@@ -150,7 +152,7 @@ export class RigidContacts {
 
   /** Books a pair of works that should sum to `due`; what they miss it by is the solver's. */
   private bookClean(
-    account: Pair['friction'],
+    account: PairAccount | null,
     pair: Pair,
     bodyA: number,
     bodyB: number,

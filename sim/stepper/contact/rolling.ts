@@ -42,14 +42,14 @@ export class RollingResistance implements Friction {
     const onA = -impulse * row.rateA();
     const onB = impulse * row.rateB();
     if (Math.abs(row.impulse) >= this.most * SATURATED) {
-      addWork(pair.rolling, pair, pair.low, onA, onB);
-      pair.rolling?.heat(-(onA + onB));
+      addWork(pair.accounts.rolling, pair, pair.low, onA, onB);
+      pair.accounts.rolling?.heat(-(onA + onB));
       return;
     }
     const left = onA + onB;
     scene.numerical.share('solver-residual', pair.low, pair.high, left);
     const half = pair.low >= 0 && pair.high >= 0 ? left / 2 : left;
-    addWork(pair.rolling, pair, pair.low, pair.low >= 0 ? onA - half : onA, onB - half);
+    addWork(pair.accounts.rolling, pair, pair.low, pair.low >= 0 ? onA - half : onA, onB - half);
   }
 
   isHolding(): boolean {

@@ -66,12 +66,15 @@ export class CoreShape extends OutlineShape {
   isCorner = false;
   /** Outward unit normal of the edge from vertex i to i + 1; for a bar one for each side. */
   readonly normals: XY[];
+  /** Farthest point of the outline from the frame's origin. */
+  readonly reach: number;
 
   constructor(
     readonly vertices: XY[],
     radius: number,
   ) {
     super(CORE, radius);
+    this.reach = radius + Math.max(...vertices.map(({ x, y }) => Math.hypot(x, y)));
     this.normals = vertices.length < 2 ? [] : vertices.map((v, i) => outward(v, vertices[(i + 1) % vertices.length]));
   }
 

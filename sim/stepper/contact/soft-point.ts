@@ -120,9 +120,9 @@ export class SoftPoint implements Friction {
     const springImpulse = normal.impulse > 0 ? -2 * half * this.stiffness * this.gap : 0;
     const rest = 2 * normal.impulse - springImpulse;
     this.springWork = springImpulse * normal.rate();
-    addWork(pair.spring, pair, a, -springImpulse * normal.rateA(), springImpulse * normal.rateB());
-    addWork(pair.damper, pair, a, -rest * normal.rateA(), rest * normal.rateB());
-    pair.damper?.heat(-rest * normal.rate());
+    addWork(pair.accounts.spring, pair, a, -springImpulse * normal.rateA(), springImpulse * normal.rateB());
+    addWork(pair.accounts.damper, pair, a, -rest * normal.rateA(), rest * normal.rateB());
+    pair.accounts.damper?.heat(-rest * normal.rate());
     this.bookFriction();
     this.note(half > 0 ? 1 / half : 0);
   }
@@ -134,7 +134,7 @@ export class SoftPoint implements Friction {
     const slip = this.slip();
     let onA = -impulse * row.rateA();
     let onB = impulse * row.rateB();
-    if (this.isSaturated()) pair.friction?.heat(-impulse * slip);
+    if (this.isSaturated()) pair.accounts.friction?.heat(-impulse * slip);
     else {
       const left = impulse * slip;
       this.scene.numerical.share('solver-residual', a, b, left);
@@ -142,7 +142,7 @@ export class SoftPoint implements Friction {
       onA -= a >= 0 ? half : 0;
       onB -= half;
     }
-    addWork(pair.friction, pair, a, onA, onB);
+    addWork(pair.accounts.friction, pair, a, onA, onB);
   }
 
   private note(force: number): void {

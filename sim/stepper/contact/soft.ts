@@ -106,10 +106,10 @@ export class SoftContacts {
     if (gained === 0) return;
     point.stored += gained;
     share(touch, -gained, (onA, onB) => {
-      addWork(pair.spring, pair, touch.bodyA, onA, onB);
-      addWork(pair.damper, pair, touch.bodyA, -onA, -onB);
+      addWork(pair.accounts.spring, pair, touch.bodyA, onA, onB);
+      addWork(pair.accounts.damper, pair, touch.bodyA, -onA, -onB);
     });
-    pair.damper?.heat(-gained);
+    pair.accounts.damper?.heat(-gained);
   }
 
   private restore(cause: NumericalCause): void {
@@ -123,14 +123,14 @@ export class SoftContacts {
       if (missed !== 0) {
         this.scene.numerical.share(cause, touch.bodyA, touch.bodyB, missed);
         share(touch, -missed, (onA, onB) => {
-          addWork(pair.spring, pair, touch.bodyA, onA, onB);
+          addWork(pair.accounts.spring, pair, touch.bodyA, onA, onB);
         });
       }
       point.stored = now;
       point.springWork = 0;
       stored.set(pair, (stored.get(pair) ?? 0) + now);
     }
-    for (const [pair, energy] of stored) if (pair.spring) pair.spring.booked.stored = energy;
+    for (const [pair, energy] of stored) if (pair.accounts.spring) pair.accounts.spring.booked.stored = energy;
   }
 
   private gapNow({ touch, key }: SoftPoint): number {
