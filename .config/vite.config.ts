@@ -17,6 +17,6 @@ export default defineConfig({
     target: 'chrome150',
     sourcemap: true,
     chunkSizeWarningLimit: 2000,
-    rolldownOptions: { checks: { pluginTimings: false } },
+    rolldownOptions: { checks: { bundlerTimings: false } },
   },
 });
