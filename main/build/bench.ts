@@ -5,7 +5,7 @@ import { bundle } from './build.js';
 import { node, root } from './run.js';
 
 /**
- * Runs `tests/bench/*.bench.ts`, each bundled as the product is and in a process of its own; words on the command line
+ * Runs `tests/bench/*.bench.ts`, each compiled and in a process of its own; words on the command line
  * choose those whose name contains one. Each prints its own table; one that misses its bound ends with a status other than 0.
  */
 const folder = resolve(root, 'tests/bench');
@@ -17,6 +17,7 @@ const chosen = readdirSync(folder)
 await build({
   ...bundle,
   target: 'node20',
+  packages: 'external',
   entryPoints: chosen.map((name) => resolve(folder, name)),
   outdir: 'dist/bench',
 });
