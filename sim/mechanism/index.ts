@@ -7,3 +7,4 @@ export { readQuantity, type Quantity, type QuantityResult } from './units/quanti
 export { displayUnit, formatQuantity, inUnit } from './units/format.js';
 export { quantityKinds, type QuantityName } from './units/dimension.js';
 export { documentSchema, documentSchemaText } from './json-schema.js';
+export { fieldAt } from './fields/lookup.js';

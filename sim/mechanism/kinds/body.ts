@@ -20,6 +20,7 @@ export type Shape =
   | { kind: 'disc'; radius: number }
   | { kind: 'box'; width: number; height: number }
   | { kind: 'bar'; length: number; width: number }
+  /** Counter-clockwise, whichever way it was typed. */
   | { kind: 'polygon'; points: Vec[] }
   | CamShape
   | { kind: 'none' };

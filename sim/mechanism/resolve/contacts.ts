@@ -1,11 +1,10 @@
-import type { Place } from '../../core/problem.js';
 import { inside, type Reading } from '../fields/reading.js';
 import type { Element } from '../fields/spec.js';
 import type { Body } from '../kinds/body.js';
 import type { ContactDocument, ContactPair, MaterialTable } from '../kinds/contact.js';
 import type { Joint } from '../kinds/joint.js';
 import type { Track } from '../kinds/track.js';
-import { formatQuantity } from '../units/format.js';
+import type { RestSpeed } from './rest-speed.js';
 import { Surfaces } from './surface.js';
 
 export interface ContactScene {
@@ -15,8 +14,8 @@ export interface ContactScene {
   materialOf: ReadonlyMap<string, string | undefined>;
   joints: readonly Joint[];
   materials: MaterialTable;
-  /** Default of `restSpeed` [m/s], and why. */
-  restSpeed: { value: number; why: string };
+  /** Default of `restSpeed`. */
+  restSpeed: RestSpeed;
 }
 
 type Entry = Element<ContactDocument> & { value: ContactDocument };
@@ -34,7 +33,7 @@ export function resolveContacts(
   reading: Reading,
 ): ContactPair[] {
   const whole = entries.filter((entry): entry is Entry => entry.value !== undefined);
-  const expander = new Expander(scene, reading);
+  const expander = new Expander(whole, scene, reading);
   for (const rank of [2, 1, 0]) {
     for (const entry of whole.filter((each) => rankOf(each.value) === rank)) expander.take(entry, rank);
   }
@@ -55,6 +54,7 @@ class Expander {
   private readonly jointed: ReadonlySet<string>;
 
   constructor(
+    private readonly entries: readonly Entry[],
     scene: ContactScene,
     private readonly reading: Reading,
   ) {
@@ -65,7 +65,9 @@ class Expander {
 
   /** In the order of the document's entries, then of its bodies and tracks. */
   pairs(): Won[] {
-    return [...this.won.values()].sort((a, b) => order(a.entry.place) - order(b.entry.place));
+    const byEntry = new Map<Entry, Won[]>(this.entries.map((entry) => [entry, []]));
+    for (const won of this.won.values()) byEntry.get(won.entry)?.push(won);
+    return [...byEntry.values()].flat();
   }
 
   take(entry: Entry, rank: number): void {
@@ -145,8 +147,6 @@ const isRigid = (joint: Joint): joint is Extract<Joint, { kind: 'pin' | 'slide' 
 
 const keyOf = ([a, b]: readonly [string, string]): string => (a < b ? `${a} ${b}` : `${b} ${a}`);
 
-const order = (place: Place): number => Number(place.pointer.split('/').at(-1));
-
 function sameValues(a: ContactDocument, b: ContactDocument): boolean {
   const { between: _a, ...rest } = a;
   const { between: _b, ...other } = b;
@@ -165,11 +165,7 @@ function contactPair(
   const [a, b] = between.map((id) => scene.materialOf.get(id));
   const surface = surfaces.of(value, place, a, b);
   if (value.restSpeed === undefined) {
-    reading.appliedOnce(
-      `${place.pointer}/restSpeed`,
-      formatQuantity(scene.restSpeed.value, 'speed'),
-      scene.restSpeed.why,
-    );
+    reading.appliedOnce(`${place.pointer}/restSpeed`, scene.restSpeed.text, scene.restSpeed.why);
   }
   const { stiffness, damping = 0 } = value;
   return {

@@ -5,6 +5,14 @@ import { formatQuantity } from '../units/format.js';
 
 const FRACTION = 1e-3;
 
+export interface RestSpeed {
+  /** [m/s] */
+  value: number;
+  /** As it would be typed. */
+  text: string;
+  why: string;
+}
+
 /**
  * Default of a pair's rest speed [m/s]: 1e-3 of √(g · extent); without gravity, 1e-3 of the greatest speed at the start
  * of any body or belt; where nothing moves either, 1e-3 of the extent in a second.
@@ -14,7 +22,7 @@ export function restSpeedOf(
   extent: number,
   bodies: readonly Body[],
   tracks: readonly Track[],
-): { value: number; why: string } {
+): RestSpeed {
   const speeds = [...bodies.map((body) => norm(body.velocity)), ...tracks.map(beltSpeed)];
   const starting = speeds.reduce((most, speed) => Math.max(most, speed), 0);
   const [speed, of] =
@@ -23,7 +31,8 @@ export function restSpeedOf(
       : starting > 0
         ? [starting, 'the greatest starting speed']
         : [extent, 'the extent in a second'];
-  return { value: FRACTION * speed, why: `1e-3 of ${of}, ${formatQuantity(speed, 'speed')}` };
+  const value = FRACTION * speed;
+  return { value, text: formatQuantity(value, 'speed'), why: `1e-3 of ${of}, ${formatQuantity(speed, 'speed')}` };
 }
 
 const beltSpeed = ({ surfaceSpeed }: Track): number =>
