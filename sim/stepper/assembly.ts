@@ -1,4 +1,3 @@
-import type { Joint } from '../mechanism/kinds/joint.js';
 import type { Moment } from '../mechanism/kinds/load.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { BookedAccount } from './books.js';
@@ -8,10 +7,8 @@ import { DamperElement } from './kinds/damper.js';
 import { DriveElement } from './kinds/drive.js';
 import type { JointElement } from './kinds/joint.js';
 import { LoadElement, type Timetable } from './kinds/load.js';
-import { pinElement } from './kinds/pin.js';
-import { slideElement } from './kinds/slide.js';
-import { springElement, type SpringElement } from './kinds/spring.js';
-import { weldElement } from './kinds/weld.js';
+import { buildJoint, buildSpring } from './kinds/index.js';
+import type { SpringElement } from './kinds/spring.js';
 import { buildScene, poseBodies, type Scene } from './scene.js';
 
 /** The mechanism as the stepper runs it. */
@@ -32,7 +29,7 @@ export function assemble(mechanism: Mechanism, timetable: Timetable): Assembly {
   poseBodies(scene, state.x, state.y, state.a);
   const isHeavy = scene.gravity.x !== 0 || scene.gravity.y !== 0;
   const gravity = isHeavy ? scene.ids.map((id) => scene.books.open('gravity', id, [id], { stored: true })) : [];
-  const springs = mechanism.springs.map((spring) => springElement(scene, spring));
+  const springs = mechanism.springs.map((spring) => buildSpring(scene, spring));
   for (const spring of springs) spring.begin();
   const dampers = mechanism.dampers.map((damper) => new DamperElement(scene, damper));
   const loads = mechanism.loads.map((load) => new LoadElement(scene, load, timetable));
@@ -51,19 +48,6 @@ export function assemble(mechanism: Mechanism, timetable: Timetable): Assembly {
     dampers,
     gravity,
   };
-}
-
-function buildJoint(scene: Scene, joint: Joint): JointElement {
-  switch (joint.kind) {
-    case 'pin':
-      return pinElement(scene, joint);
-    case 'slide':
-      return slideElement(scene, joint);
-    case 'weld':
-      return weldElement(scene, joint);
-    default:
-      throw new RangeError(`${joint.kind} ${joint.id} is not simulated`);
-  }
 }
 
 /** Whether a moment has come, by the time [s] and the stations reached so far. */

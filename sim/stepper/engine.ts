@@ -357,12 +357,16 @@ export class Engine {
 const isDue = (when: { kind: string; time?: number }, time: number): boolean =>
   when.kind === 'time' && when.time !== undefined && time >= when.time * (1 - 1e-13);
 
-function momentsOf({ loads, drives, latches, run }: Mechanism, watch: StationWatch): number[] {
+function momentsOf({ tracks, loads, drives, latches, run }: Mechanism, watch: StationWatch): number[] {
   const of = (moment: Moment | undefined): number[] => (moment && 'time' in moment ? [moment.time] : []);
   return [
     ...watch.times(),
     ...[...loads, ...drives].flatMap(({ from, until }) => [...of(from), ...of(until)]),
     ...latches.flatMap(({ releasesAt }) => ('time' in releasesAt ? [releasesAt.time] : [])),
+    // A belt that starts to brake within a step would drag along what should slip.
+    ...tracks.flatMap(({ surfaceSpeed }) =>
+      typeof surfaceSpeed === 'number' ? [] : surfaceSpeed.map(([time]) => time),
+    ),
     ...('time' in run.until ? [run.until.time] : []),
   ];
 }

@@ -93,8 +93,11 @@ export class Trial {
     const sliding = this.solver.rigid.live.filter((touch) => touch.sliding !== 0);
     const frictions = this.solver.frictions().filter((friction) => friction.sliding !== 0);
     if (sliding.length === 0 && frictions.length === 0) return;
-    setVelocities(this.scene, state.vx, state.vy, state.w);
-    for (const touch of sliding) this.startSlip.set(touch, (touch.sliding * this.solver.rigid.slip(touch)) / STILL);
+    const { scene, solver } = this;
+    setVelocities(scene, state.vx, state.vy, state.w);
+    for (const touch of sliding) {
+      this.startSlip.set(touch, (touch.sliding * solver.rigid.slip(touch, scene.time)) / STILL);
+    }
     for (const friction of frictions) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
   }
 
@@ -167,7 +170,8 @@ export class Trial {
     const start = this.startSlip.get(source) ?? 0;
     // One that has only just broken away starts from rest and has nothing to stop.
     if (start <= 1) return Infinity;
-    const slip = 'contact' in source ? this.solver.rigid.slip(source) : source.slip();
+    const end = this.scene.time + 2 * this.lastHalf;
+    const slip = 'contact' in source ? this.solver.rigid.slip(source, end) : source.slip();
     return (source.sliding * slip) / STILL;
   }
 

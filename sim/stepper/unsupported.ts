@@ -1,5 +1,6 @@
 import type { Mechanism } from '../mechanism/model.js';
 import type { Finding } from '../recording/recording.js';
+import { driveLaws, joints, shapes, springs } from './kinds/index.js';
 
 /** What a document asks of the stepper that it does not simulate: one finding for each element, none when it can run. */
 export function unsupported(mechanism: Mechanism): Finding[] {
@@ -12,14 +13,14 @@ export function unsupported(mechanism: Mechanism): Finding[] {
       of: [id],
     });
   };
-  for (const body of mechanism.bodies) if (body.shape.kind === 'cam') refuse(body.id, 'The cam');
+  for (const { id, shape } of mechanism.bodies) if (!shapes[shape.kind]) refuse(id, `The ${shape.kind}`);
   for (const joint of mechanism.joints) {
-    if (joint.kind !== 'pin' && joint.kind !== 'slide' && joint.kind !== 'weld') refuse(joint.id, `The ${joint.kind}`);
+    if (!joints[joint.kind]) refuse(joint.id, `The ${joint.kind}`);
     if (joint.kind === 'pin') refusePin(joint, mechanism, refuse);
   }
-  for (const spring of mechanism.springs) if (spring.kind === 'gas') refuse(spring.id, 'The gas spring');
+  for (const { id, kind } of mechanism.springs) if (!springs[kind]) refuse(id, `The ${kind} spring`);
   for (const drive of mechanism.drives) {
-    if (drive.law.kind !== 'effort') refuse(drive.id, 'The drive (other than a constant torque or force)');
+    if (!driveLaws[drive.law.kind]) refuse(drive.id, 'The drive (other than a constant torque or force)');
   }
   return findings;
 }

@@ -183,7 +183,8 @@ export class ContactManager {
     const gap = leastOpenGap(touch);
     if (gap >= 0) return gap;
     const travel = 3 * this.travelOf(touch) + 10 * SKIN;
-    const drop = touch.openGap === Infinity ? -gap : touch.openGap - gap;
+    // A corner that comes over the track only now was not the nearest point at the start.
+    const drop = Math.min(touch.openGap - gap, -gap);
     return drop > travel ? Infinity : gap;
   }
 

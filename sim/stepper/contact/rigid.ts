@@ -204,10 +204,13 @@ export class RigidContacts {
     return rates;
   }
 
-  /** Sliding rate of a live touch with the velocities now in planck, at its first point. */
-  slip(touch: Touch): number {
+  /**
+   * Sliding rate of a live touch with the velocities now in planck, at its first point, against the surface as it runs at
+   * `time`; as the solve had it when left out.
+   */
+  slip(touch: Touch, time?: number): number {
     const { tA, tB } = this.rate(touch, touch.contact.v_points[0]);
-    return tB - tA - touch.contact.m_tangentSpeed;
+    return tB - tA - (time === undefined ? touch.contact.m_tangentSpeed : this.beltSpeed(touch, time));
   }
 }
 

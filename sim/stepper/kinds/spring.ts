@@ -1,4 +1,4 @@
-import type { LinearSpring, Spring, TorsionSpring } from '../../mechanism/kinds/spring.js';
+import type { LinearSpring, TorsionSpring } from '../../mechanism/kinds/spring.js';
 import { AxisRow } from '../axis-row.js';
 import { PairAccount } from '../books.js';
 import type { Element } from '../element.js';
@@ -203,8 +203,7 @@ function curveLaw(points: number[][]): Law {
   return { force, energy: (d) => primitive(d) - zero };
 }
 
-/** Builds the element of a spring; gas springs are not simulated yet (see `unsupported`). */
-export function springElement(scene: Scene, spring: Spring): SpringElement {
-  if (spring.kind === 'gas') throw new RangeError(`gas spring ${spring.id} is not simulated`);
-  return spring.kind === 'linear' ? new LinearSpringElement(scene, spring) : new TorsionSpringElement(scene, spring);
-}
+export const linearSpring = (scene: Scene, spring: LinearSpring): SpringElement =>
+  new LinearSpringElement(scene, spring);
+export const torsionSpring = (scene: Scene, spring: TorsionSpring): SpringElement =>
+  new TorsionSpringElement(scene, spring);
