@@ -100,45 +100,51 @@ export class PixiExecutor implements SheetExecutor {
     this.canvas.remove();
   }
 
-  /** Puts operations into a container: shapes in one graphics object that is kept, texts above it. */
+  /** Puts operations into a container: shapes in one graphics object, texts above it; both are kept for the next time. */
   private draw(container: Container, operations: readonly DrawOperation[]): void {
     const { colours } = this;
     if (!colours) return;
     const kept = container.children[0];
     const graphics = kept instanceof Graphics ? kept.clear() : new Graphics();
     if (!kept) container.addChild(graphics);
-    while (container.children.length > 1) container.children[1].destroy();
+    let used = 1;
     for (const each of operations)
-      if (each.kind === 'text') container.addChild(this.write(graphics, each, colours));
+      if (each.kind === 'text') this.write(container, used++, graphics, each, colours);
       else shape(graphics, each, colours);
+    while (container.children.length > used) container.children[used].destroy();
   }
 
-  private write(graphics: Graphics, each: TextOperation, colours: Colours): Text {
-    const style = new TextStyle({
-      fontFamily: families[each.face ?? 'text'],
-      fontSize: each.size,
-      fontStyle: each.face === 'symbol' ? 'italic' : 'normal',
-      fontWeight: `${each.weight ?? 400}`,
-      fill: colours[each.tone],
-    });
-    if (each.ground) ground(graphics, each, style, each.ground === 'marker' ? colours.marked : colours[each.ground]);
-    const text = new Text({
-      text: each.text,
-      style,
-      resolution: this.ratio,
-      anchor: { x: each.anchor[0], y: each.anchor[1] },
-    });
+  /** Puts a text at its place among a container's children; one that says the same there already is only moved. */
+  private write(container: Container, index: number, graphics: Graphics, each: TextOperation, colours: Colours): void {
+    const label = [each.text, each.size, each.weight, each.face, colours[each.tone], this.ratio].join('|');
+    let text = container.children.at(index);
+    if (text?.label !== label) {
+      text?.destroy();
+      text = new Text({ text: each.text, style: styleOf(each, colours), resolution: this.ratio, label });
+      (text as Text).anchor.set(...each.anchor);
+      container.addChildAt(text, index);
+    }
+    if (each.ground) ground(graphics, each, colours);
     // Whole pixels keep upright text crisp; the origin of the paper is at one too.
     const snap = (value: number, size: number, anchor: number) =>
       each.angle ? value : Math.round((value - size * anchor) * this.ratio) / this.ratio + size * anchor;
     text.position.set(snap(each.at[0], text.width, each.anchor[0]), snap(each.at[1], text.height, each.anchor[1]));
     text.rotation = each.angle ?? 0;
-    return text;
   }
 }
 
-function ground(graphics: Graphics, each: TextOperation, style: TextStyle, colour: string): void {
-  const { width } = CanvasTextMetrics.measureText(each.text, style);
+function styleOf(each: TextOperation, colours: Colours): TextStyle {
+  return new TextStyle({
+    fontFamily: families[each.face ?? 'text'],
+    fontSize: each.size,
+    fontStyle: each.face === 'symbol' ? 'italic' : 'normal',
+    fontWeight: `${each.weight ?? 400}`,
+    fill: colours[each.tone],
+  });
+}
+
+function ground(graphics: Graphics, each: TextOperation, colours: Colours): void {
+  const { width } = CanvasTextMetrics.measureText(each.text, styleOf(each, colours));
   const height = each.size * 0.7;
   const [c, s] = [Math.cos(each.angle ?? 0), Math.sin(each.angle ?? 0)];
   const [left, top] = [-width * each.anchor[0] - 3, -height * each.anchor[1] - 3];
@@ -148,7 +154,7 @@ function ground(graphics: Graphics, each: TextOperation, style: TextStyle, colou
     [left + width + 6, top + height + 6],
     [left, top + height + 6],
   ].flatMap(([x, y]) => [each.at[0] + c * x - s * y, each.at[1] + s * x + c * y]);
-  graphics.poly(corners).fill(colour);
+  graphics.poly(corners).fill(each.ground === 'marker' ? colours.marked : colours[each.ground ?? 'paper']);
 }
 
 function shape(graphics: Graphics, each: Exclude<DrawOperation, TextOperation>, colours: Colours): void {

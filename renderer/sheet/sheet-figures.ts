@@ -14,6 +14,8 @@ import { bodyAtRow, bodyOf } from '../../sim/recording/reader.js';
 
 /** More items than this, and joints go without balloons: the parts list has them. */
 const crowded = 10;
+/** More than this, and balloons would hide the drawing. */
+const full = 30;
 
 /** A placed balloon and what it belongs to. */
 export interface ItemBalloon {
@@ -25,6 +27,7 @@ export interface ItemBalloon {
 /** A balloon for each item, placed on the sheet as drawn. */
 export function placeItemBalloons(scene: Scene, items: readonly Item[], ink: readonly Vec[]): ItemBalloon[] {
   const shown = items.filter(({ kind }) => kind !== 'joint' || items.length <= crowded);
+  if (shown.length > full) return [];
   const anchors = shown.flatMap((item) => {
     const { at: anchor, onLine } = anchorOf(item, scene);
     const at = anchor(scene.drawn);
