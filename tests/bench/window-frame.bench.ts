@@ -1,8 +1,7 @@
-import { existsSync } from 'node:fs';
-import { createRequire } from 'node:module';
 import { resolve } from 'node:path';
-import type { CDPSession, Page } from 'playwright-core';
+import { chromium, type CDPSession, type Page } from 'playwright-core';
 import { serveWindow } from '../../main/serve/server.js';
+import { chromiumPath } from '../support/chromium.js';
 
 /**
  * Script time of the window for each frame while a run of 50 bodies is fed, on both renderers, in Chromium without a
@@ -12,11 +11,6 @@ const bodies = 50;
 /** [ms] */
 const bound = 8;
 const root = process.cwd();
-
-// Loaded as it is: the browser's driver is a package of many processes, not to be bundled.
-const { chromium } = createRequire(resolve(root, 'package.json'))(
-  'playwright-core',
-) as typeof import('playwright-core');
 
 /** Pendulums in five rows, each a bar on a pin with a damped spring to its neighbour: live symbols besides rigid ones. */
 function document(): string {
@@ -92,8 +86,7 @@ async function measure(renderer: 'webgl' | 'canvas', address: string, executable
   return (1000 * (after.script - before.script)) / (after.frames - before.frames);
 }
 
-const executablePath = ['/usr/bin/chromium', '/usr/bin/google-chrome'].find((path) => existsSync(path));
-if (executablePath === undefined) throw new Error('This benchmark needs Chromium.');
+const executablePath = chromiumPath();
 const text = document();
 const given = { name: 'pendulums.json', text, size: text.length };
 const { address, close } = await serveWindow({ root: resolve(root, 'dist/renderer'), given });

@@ -1,15 +1,12 @@
-import { existsSync, readFileSync } from 'node:fs';
+import { readFileSync } from 'node:fs';
 import { resolve } from 'node:path';
 import { chromium, type Browser, type Page } from 'playwright-core';
 import { afterAll, afterEach, beforeAll, expect } from 'vitest';
 import { serveWindow, type ServedWindow } from '../../../main/serve/server.js';
+import { chromiumPath } from '../../support/chromium.js';
 
 const root = resolve(import.meta.dirname, '../../..');
 const switches = ['--no-sandbox', '--disable-quic', '--no-first-run', '--disable-background-networking'];
-
-export const executablePath = ['/usr/bin/chromium', '/usr/bin/chromium-browser', '/usr/bin/google-chrome'].find(
-  (path) => existsSync(path),
-);
 
 export const example = (name: string): { name: string; text: string } => ({
   name: `${name}.json`,
@@ -30,9 +27,8 @@ let errors: string[] = [];
 /** A browser and a served window for the tests of a file; any error of a page fails the test it happened in. */
 export function useWindow(): void {
   beforeAll(async () => {
-    expect(executablePath, 'window tests need Chromium').toBeDefined();
     served = await serveWindow({ root: resolve(root, 'dist/renderer') });
-    browser = await chromium.launch({ executablePath, args: switches });
+    browser = await chromium.launch({ executablePath: chromiumPath(), args: switches });
   });
   afterEach(async () => {
     for (const context of browser.contexts()) await context.close();
