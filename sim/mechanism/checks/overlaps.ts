@@ -1,5 +1,5 @@
 import type { Vec } from '../../core/vec.js';
-import { bodyGap, TOUCHING, trackGap, type TrackPath } from '../../geometry/index.js';
+import { bodyGap, pointAt, signedArea, TOUCHING, trackGap, type TrackPath } from '../../geometry/index.js';
 import type { ContactPair } from '../kinds/contact.js';
 import type { PlacedBody } from '../resolve/body.js';
 import { reachOf } from '../resolve/outline.js';
@@ -40,7 +40,8 @@ function checkTrack({ body, reach }: Reached, path: TrackPath, pair: ContactPair
   const { extent } = checked.mechanism;
   const near = Math.max(reach, NEARLY * extent);
   const isOutright = namesBoth(pair, checked);
-  if (!isOutright && !path.closed && isFar(body.at, reach + near, path)) return;
+  const isSolid = path.closed && isSolidInside(path);
+  if (!isOutright && !isSolid && isFar(body.at, reach + near, path)) return;
   const { gap, state, at } = trackGap(body, path);
   if (state === 'clear' || gap >= -TOUCHING * extent) return;
   const where = `[${at.map((part) => formatQuantity(part, 'length')).join(', ')}]`;
@@ -50,9 +51,24 @@ function checkTrack({ body, reach }: Reached, path: TrackPath, pair: ContactPair
     return;
   }
   const isNear = -gap <= near;
-  if (!path.closed && !isNear && !isOutright) return;
-  const isWrong = path.closed || (isNear && isOutright);
+  if (!isSolid && !isNear && !isOutright) return;
+  const isWrong = isSolid || (isNear && isOutright);
   report(pair, `"${body.id}" ${depth} behind "${path.id}" at ${where}`, isWrong ? 'error' : 'warning', checked);
+}
+
+/** Points on each run by which the sense of a closed track is told. */
+const SAMPLES = 64;
+
+/** True where the inside of a closed track is its solid side: there is no doubt that nothing belongs there. */
+function isSolidInside(path: TrackPath): boolean {
+  if (path.side === 'both') return false;
+  const points = path.runs.flatMap((run) =>
+    Array.from({ length: SAMPLES }, (_, k): Vec => {
+      const { x, y } = pointAt(run, (k / SAMPLES) * run.length);
+      return [x, y];
+    }),
+  );
+  return signedArea(points) > 0 === (path.side === 'right');
 }
 
 /** Farther than `margin` from everything of the track [m]. */

@@ -1,7 +1,7 @@
 import type { Place } from '../../core/problem.js';
 import type { Vec } from '../../core/vec.js';
 import { distance } from '../../core/vec.js';
-import { selfCrossings, signedArea } from '../../geometry/index.js';
+import { selfCrossings } from '../../geometry/index.js';
 import { inside, type Reading } from '../fields/reading.js';
 import { list, position, quantity, record, required, tagged } from '../fields/spec.js';
 import { camFields } from './cam.js';
@@ -42,10 +42,7 @@ function checkPolygon(points: Vec[], place: Place, reading: Reading): void {
     return;
   }
   const [crossing] = selfCrossings(points);
-  if (crossing) {
-    const found = `edges ${crossing.edges[0]} and ${crossing.edges[1]} meeting`;
-    reading.report('self-crossing', place, { found, accepted: 'an outline that nowhere meets itself' });
-  } else if (signedArea(points) === 0) {
-    reading.report('self-crossing', place, { found: 'no area', accepted: 'an outline around some area' });
-  }
+  if (!crossing) return;
+  const found = `edges ${crossing.edges[0]} and ${crossing.edges[1]} meeting`;
+  reading.report('self-crossing', place, { found, accepted: 'an outline that nowhere meets itself' });
 }
