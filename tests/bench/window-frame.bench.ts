@@ -89,13 +89,13 @@ async function measure(renderer: 'webgl' | 'canvas', address: string, executable
 const executablePath = chromiumPath();
 const text = document();
 const given = { name: 'pendulums.json', text, size: text.length };
-const { address, close } = await serveWindow({ root: resolve(root, 'dist/renderer'), given });
+const served = await serveWindow({ root: resolve(root, 'dist/renderer'), given });
 console.log(`script time for each frame, ${bodies} bodies, bound ${bound} ms`);
 let missed = false;
 for (const renderer of ['webgl', 'canvas'] as const) {
-  const time = await measure(renderer, address, executablePath);
+  const time = await measure(renderer, served.address, executablePath);
   console.log(`  ${renderer.padEnd(7)} ${time.toFixed(2)} ms`);
   missed ||= !(time <= bound);
 }
-await close();
+await served.close();
 process.exitCode = missed ? 1 : 0;
