@@ -20,7 +20,7 @@ const overflowing = () =>
       const scrolled = element.closest('.rows, .key, .over, .upper, .notes, ol');
       return !hidden && !scrolled && (right > innerWidth + 1 || bottom > innerHeight + 1);
     })
-    .map((element) => `${element.tagName}.${element.className.toString()}`);
+    .map((element) => `${element.tagName}.${element.getAttribute('class') ?? ''}`);
 
 /** Fields of the sheet that must not lie over each other. */
 async function fields(page: Page) {
