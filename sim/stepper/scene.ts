@@ -156,6 +156,16 @@ export function poseBodies(scene: Scene, x: Float64Array, y: Float64Array, a: Fl
   });
 }
 
+/** Poses one body between two states, for a look at its contacts; `share` 0 is the first. */
+export function poseBetween(scene: Scene, index: number, from: State, to: State, share: number): void {
+  if (index < 0) return;
+  const body = scene.bodies[index];
+  body.m_sweep.c.x = from.x[index] + share * (to.x[index] - from.x[index]);
+  body.m_sweep.c.y = from.y[index] + share * (to.y[index] - from.y[index]);
+  body.m_sweep.a = from.a[index] + share * (to.a[index] - from.a[index]);
+  body.synchronizeTransform();
+}
+
 /** Remembers the present positions as the start of a sweep. */
 export function startSweep(scene: Scene, { x, y, a }: State): void {
   scene.bodies.forEach((body, i) => {

@@ -2,7 +2,7 @@ import type { StationWatch } from '../recording/station-watch.js';
 import { SKIN, type ContactManager } from './contact/manager.js';
 import type { Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
-import { getVelocities, poseBodies, setVelocities, startSweep, type Scene } from './scene.js';
+import { getVelocities, poseBetween, poseBodies, setVelocities, startSweep, type Scene } from './scene.js';
 import type { SceneMotion } from './motion.js';
 import type { VelocitySolver } from './solver.js';
 import { newState, type State } from './state.js';
@@ -28,6 +28,8 @@ export class Trial {
   private readonly modes = new Map<Touch | Friction, 1 | -1 | 0>();
   private readonly startSlip = new Map<Touch | Friction, number>();
   private lastHalf = 0;
+  /** The state that the trial started from. */
+  private from: State;
   count = 0;
 
   constructor(
@@ -41,6 +43,7 @@ export class Trial {
     this.mean = newState(n);
     this.middle = newState(n);
     this.next = newState(n);
+    this.from = scene.state;
   }
 
   /** Remembers which contacts stick and slide, so that every trial starts from the same. */
@@ -59,6 +62,7 @@ export class Trial {
     const { scene, mean, middle, next } = this;
     const half = tau / 2;
     this.count += 1;
+    this.from = state;
     this.restoreModes();
     for (let i = 0; i < scene.ids.length; i += 1) {
       middle.x[i] = state.x[i] + half * state.vx[i];
@@ -163,7 +167,26 @@ export class Trial {
   }
 
   private gapValue(touch: Touch): number {
-    return (this.manager.openGapNow(touch) - SKIN / 4) / (SKIN / 4);
+    const gap = this.manager.openGapNow(touch);
+    const least = gap < 0 ? gap : this.gapOnTheWay(touch, gap);
+    return (least - SKIN / 4) / (SKIN / 4);
+  }
+
+  /** The first negative gap between the trial's ends, or the gap at its end. */
+  private gapOnTheWay(touch: Touch, atEnd: number): number {
+    const { scene, manager, from, next } = this;
+    const looks = manager.looksBetween(touch);
+    if (looks === 0) return atEnd;
+    let found = atEnd;
+    for (let i = 1; i <= looks && found >= 0; i += 1) {
+      for (const body of [touch.bodyA, touch.bodyB]) poseBetween(scene, body, from, next, i / (looks + 1));
+      manager.evaluate(touch);
+      const gap = manager.openGapNow(touch);
+      if (gap < 0) found = gap;
+    }
+    for (const body of [touch.bodyA, touch.bodyB]) poseBetween(scene, body, from, next, 1);
+    manager.evaluate(touch);
+    return found;
   }
 
   private slipValue(source: Touch | Friction): number {

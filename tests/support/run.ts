@@ -81,8 +81,8 @@ export class Run {
     return found;
   }
 
-  events<Kind extends RunEvent['kind']>(kind: Kind): Extract<RunEvent, { kind: Kind }>[] {
-    return this.recording.events.filter((event): event is Extract<RunEvent, { kind: Kind }> => event.kind === kind);
+  events<Kind extends RunEvent['kind']>(kind: Kind): (RunEvent & { kind: Kind })[] {
+    return this.recording.events.filter((event): event is RunEvent & { kind: Kind } => event.kind === kind);
   }
 
   /** A column of a contact pair at a row. */

@@ -1,6 +1,6 @@
 import type { Body } from '../../mechanism/kinds/body.js';
 import type { Track } from '../../mechanism/kinds/track.js';
-import type { ContactInternals, FixtureInternals } from '../planck-internals.js';
+import type { BodyInternals, ContactInternals, FixtureInternals } from '../planck-internals.js';
 import { bodyInternals, fixtureInternals } from '../planck-internals.js';
 import type { Scene } from '../scene.js';
 import { buildChains, type Chain } from './chain.js';
@@ -16,6 +16,8 @@ import { fillManifold, isClosedKey, leastOpenGap, newTouch, NO_KEY, type Touch }
 export const SKIN = 1e-7;
 /** A point deeper than this is not a contact but another side of the body. */
 const DEEPEST = 1e-2;
+/** Looks at a touch between a step's ends, at the most. */
+const MOST_LOOKS = 1000;
 /** A body this deep at first sight is behind the surface, not on it. */
 const BEHIND = 1e-5;
 /** So few pairs are all recorded from the start; of more, each from its first touch on. */
@@ -152,7 +154,24 @@ export class ContactManager {
     contact.m_manifold.pointCount = 0;
     this.known.set(contact, touch);
     touch.curved = touch.shapeA.kind !== CORE && !touch.shapeA.chain.straight;
+    this.lookBack(touch);
     return touch;
+  }
+
+  /** Takes the side that a body is on from where the step began: at its end the body may be through already. */
+  private lookBack(touch: Touch): void {
+    const bodies = [touch.bodyA, touch.bodyB].filter((body) => body >= 0).map((body) => this.scene.bodies[body]);
+    const ends = bodies.map(({ m_sweep: { c, a } }) => ({ x: c.x, y: c.y, a }));
+    bodies.forEach((body) => {
+      const { c0, a0 } = body.m_sweep;
+      placeAt(body, c0.x, c0.y, a0);
+    });
+    this.evaluate(touch);
+    touch.armed = lowestGap(touch) >= -BEHIND;
+    bodies.forEach((body, i) => {
+      const { x, y, a } = ends[i];
+      placeAt(body, x, y, a);
+    });
   }
 
   /** Works out the candidate points of a touch at the bodies' present transforms. */
@@ -189,6 +208,17 @@ export class ContactManager {
   }
 
   /**
+   * How often to look at a touch between a step's ends: bodies that travel farther than they are thick could pass through
+   * each other unseen.
+   */
+  looksBetween(touch: Touch): number {
+    if (touch.shapeA.kind !== CORE || this.isActive(touch)) return 0;
+    const thickness = touch.shapeA.thickness + touch.shapeB.thickness;
+    const travel = this.travelOf(touch);
+    return travel <= thickness || thickness === 0 ? 0 : Math.min(MOST_LOOKS, Math.ceil((2 * travel) / thickness));
+  }
+
+  /**
    * How far a closed point is from where another contact pair takes over (the next track of a chain), negative beyond:
    * friction changes there at once, not at the next step.
    */
@@ -214,11 +244,7 @@ export class ContactManager {
 
   /** Takes the present candidates as the state at the start of the next step. */
   settle(touch: Touch): void {
-    let lowest = Infinity;
-    for (let i = 0; i < touch.count; i += 1) lowest = Math.min(lowest, touch.candidates[i as 0 | 1].gap);
-    if (!touch.seen) touch.armed = lowest >= -BEHIND;
-    else if (!touch.armed && lowest >= 0) touch.armed = true;
-    touch.seen = true;
+    if (!touch.armed && lowestGap(touch) >= 0) touch.armed = true;
     const wasActive = this.isActive(touch);
     touch.closed[0] = NO_KEY;
     touch.closed[1] = NO_KEY;
@@ -261,6 +287,20 @@ export class ContactManager {
     if (typeof surfaceSpeed === 'number') return surfaceSpeed / speed;
     return curveAt(surfaceSpeed, time * unit) / speed;
   }
+}
+
+function placeAt(body: BodyInternals, x: number, y: number, angle: number): void {
+  const { m_sweep } = body;
+  m_sweep.c.x = x;
+  m_sweep.c.y = y;
+  m_sweep.a = angle;
+  body.synchronizeTransform();
+}
+
+function lowestGap(touch: Touch): number {
+  let lowest = Infinity;
+  for (let i = 0; i < touch.count; i += 1) lowest = Math.min(lowest, touch.candidates[i as 0 | 1].gap);
+  return lowest;
 }
 
 function curveAt(points: readonly (readonly [number, number])[], x: number): number {

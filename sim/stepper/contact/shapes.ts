@@ -68,6 +68,8 @@ export class CoreShape extends OutlineShape {
   readonly normals: XY[];
   /** Farthest point of the outline from the frame's origin. */
   readonly reach: number;
+  /** Least width. */
+  readonly thickness: number;
 
   constructor(
     readonly vertices: XY[],
@@ -76,6 +78,8 @@ export class CoreShape extends OutlineShape {
     super(CORE, radius);
     this.reach = radius + Math.max(...vertices.map(({ x, y }) => Math.hypot(x, y)));
     this.normals = vertices.length < 2 ? [] : vertices.map((v, i) => outward(v, vertices[(i + 1) % vertices.length]));
+    const widths = this.normals.map((normal, i) => Math.max(...vertices.map((v) => -along(normal, v, vertices[i]))));
+    this.thickness = 2 * radius + (widths.length === 0 ? 0 : Math.min(...widths));
   }
 
   override computeAABB(bounds: Bounds, pose: Pose): void {
@@ -129,6 +133,8 @@ export class CornersShape extends ChainShape {
     super(CORNERS, chain);
   }
 }
+
+const along = (normal: XY, to: XY, from: XY): number => normal.x * (to.x - from.x) + normal.y * (to.y - from.y);
 
 function outward(from: XY, to: XY): XY {
   const length = Math.hypot(to.x - from.x, to.y - from.y);

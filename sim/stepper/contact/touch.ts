@@ -55,8 +55,6 @@ export interface Touch {
   side: 1 | -1 | 0;
   /** False while the body is behind the surface, where nothing is solid. */
   armed: boolean;
-  /** It has been looked at before: `armed` and `side` are known. */
-  seen: boolean;
 
   /** Keys of the points that carried force over the last step (−1: none). */
   pressed: [number, number];
@@ -96,7 +94,6 @@ export function newTouch(id: number, contact: ContactInternals, bodyA: number, b
     openGap: Infinity,
     side: 0,
     armed: true,
-    seen: false,
     pressed: [NO_KEY, NO_KEY],
     sliding: 0,
     foot: { foot: newFoot(), link: 0, held: false },
