@@ -42,15 +42,21 @@ export function labelLayers(
   const isOnPaper = ({ left, right, top, bottom }: Box) =>
     left >= layout.left && right <= layout.right && top >= layout.energy.top - 2 && bottom <= layout.energy.bottom + 2;
 
+  const middle = (layout.left + layout.right) / 2;
+  /** Room counts, up to what a name can use; of places with as much, one near the middle is better. */
+  const worth = (x: number, room: number) =>
+    Math.min(room, 44) - (6 * Math.abs(x - middle)) / (layout.right - layout.left);
+
   const inside = (text: string, band: Band): LayerLabel | null => {
     const width = widthOf(text);
-    let best: { x: number; y: number; room: number } | null = null;
+    let best: { x: number; y: number; worth: number } | null = null;
     const stride = Math.max(1, Math.floor(xs.length / 160));
     for (let i = 0; i < xs.length; i += stride) {
       const { top, bottom } = clearance(xs, band, xs[i] - width / 2, xs[i] + width / 2);
       const [x, y, room] = [xs[i], (top + bottom) / 2, bottom - top];
-      const box = around(x, y, width);
-      if (room > (best?.room ?? height + 3) && isOnPaper(box) && isFree(box)) best = { x, y, room };
+      const isBetter = room > height + 3 && worth(x, room) > (best?.worth ?? -Infinity);
+      if (isBetter && isOnPaper(around(x, y, width)) && isFree(around(x, y, width)))
+        best = { x, y, worth: worth(x, room) };
     }
     if (!best) return null;
     taken.push(around(best.x, best.y, width));
@@ -58,20 +64,17 @@ export function labelLayers(
   };
 
   const beside = (text: string, band: Band): LayerLabel | null => {
-    const i = thickest(band);
-    if (band.lower[i] - band.upper[i] < least) return null;
-    const from: [number, number] = [xs[i], (band.lower[i] + band.upper[i]) / 2];
     const width = widthOf(text);
     const offsets = [22, -22, 40, -40].flatMap((dy) => [1, -1].map((side) => [side * (width / 2 + 26), -dy]));
-    const spot = offsets
-      .map(([dx, dy]) => [from[0] + dx, from[1] + dy])
-      .find(([x, y]) => {
-        const box = around(x, y, width);
-        return isOnPaper(box) && isFree(box);
-      });
-    if (!spot) return null;
-    taken.push(around(spot[0], spot[1], width));
-    return { text, at: [spot[0], spot[1]], from };
+    for (const i of thickPlaces(band)) {
+      const from: [number, number] = [xs[i], (band.lower[i] + band.upper[i]) / 2];
+      const spots = offsets.map(([dx, dy]): [number, number] => [from[0] + dx, from[1] + dy]);
+      const spot = spots.find(([x, y]) => isOnPaper(around(x, y, width)) && isFree(around(x, y, width)));
+      if (!spot) continue;
+      taken.push(around(...spot, width));
+      return { text, at: spot, from };
+    }
+    return null;
   };
 
   const placed = bands.map((band, i) => ({ band, text: names[i], label: inside(names[i], band) }));
@@ -103,8 +106,12 @@ function firstAt(xs: Float64Array, x: number): number {
   return low;
 }
 
-function thickest({ lower, upper }: Band): number {
+/** Samples to lead from: where the layer is thickest, then others spread along it that are nearly as thick. */
+function thickPlaces({ lower, upper }: Band): number[] {
+  const thickness = (i: number) => lower[i] - upper[i];
   let best = 0;
-  for (let i = 1; i < lower.length; i++) if (lower[i] - upper[i] > lower[best] - upper[best]) best = i;
-  return best;
+  for (let i = 1; i < lower.length; i++) if (thickness(i) > thickness(best)) best = i;
+  if (thickness(best) < least) return [];
+  const spread = [0.5, 0.75, 0.25, 0.9, 0.1].map((share) => Math.floor(share * (lower.length - 1)));
+  return [best, ...spread.filter((i) => thickness(i) > 0.6 * thickness(best))];
 }

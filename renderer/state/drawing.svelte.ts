@@ -1,11 +1,11 @@
 import type { Problem } from '../../sim/core/problem.js';
 import { numberItems, type Item } from '../../sim/drawing/items.js';
 import type { ReadResult } from '../../sim/mechanism/index.js';
+import type { Sheet } from '../../sim/mechanism/kinds/sheet.js';
 import type { Mechanism } from '../../sim/mechanism/model.js';
 
 /** The fields of a title block, as the document's `sheet` has them. */
-export type SheetField =
-  'drawingNumber' | 'revision' | 'owner' | 'date' | 'drawnBy' | 'checkedBy' | 'approvedBy' | 'scale';
+export type SheetField = keyof Sheet;
 
 /** The document on the sheet: what was read, and what was found about it. */
 export class Drawing {

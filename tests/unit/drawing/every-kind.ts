@@ -20,6 +20,8 @@ const ground = (at: Vec) => ({ of: 'ground', at });
 /** A sheet with an element of every kind that has a symbol. It is not meant to run. */
 export const everyKind: Mechanism = {
   title: 'Every kind',
+  sheet: {},
+  notes: '',
   gravity: [0, -9.80665],
   bodies: [
     body('box', { kind: 'box', width: 0.24, height: 0.16 }, [0, 0.5]),
@@ -75,6 +77,8 @@ export const everyKind: Mechanism = {
   latches: [{ id: 'latch', joint: 'slide', releasesAt: { time: 1 } }],
   system: ['box'],
   stations: [],
+  criteria: [],
+  demonstration: [],
   run: { until: { time: 1 }, atMost: 1 },
   extent: 4.2,
 };
