@@ -26,6 +26,8 @@ export class Trial {
   readonly middle: State;
   readonly next: State;
   private readonly modes = new Map<Touch | Friction, 1 | -1 | 0>();
+  /** Sliding rates where the step starts. */
+  private readonly slipNow = new Map<Touch, number>();
   private readonly startSlip = new Map<Touch | Friction, number>();
   private lastHalf = 0;
   /** The state that the trial started from. */
@@ -48,6 +50,12 @@ export class Trial {
 
   /** Remembers which contacts stick and slide, so that every trial starts from the same. */
   begin(): void {
+    const { scene, manager, solver } = this;
+    setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
+    this.slipNow.clear();
+    for (const touch of manager.touches) {
+      if (touch.sliding !== 0) this.slipNow.set(touch, solver.rigid.slipNow(touch, scene.time));
+    }
     this.modes.clear();
     for (const touch of this.manager.touches) this.modes.set(touch, touch.sliding);
     for (const friction of this.solver.frictions()) this.modes.set(friction, friction.sliding);
@@ -91,17 +99,14 @@ export class Trial {
     this.motion.state = next;
   }
 
-  /** Sliding rates at the step's start, along the frames of its middle. */
+  /** Sliding rates at the step's start; what has only just broken away had none. */
   private noteSlips(state: State): void {
     this.startSlip.clear();
     const sliding = this.solver.rigid.live.filter((touch) => touch.sliding !== 0);
     const frictions = this.solver.frictions().filter((friction) => friction.sliding !== 0);
     if (sliding.length === 0 && frictions.length === 0) return;
-    const { scene, solver } = this;
-    setVelocities(scene, state.vx, state.vy, state.w);
-    for (const touch of sliding) {
-      this.startSlip.set(touch, (touch.sliding * solver.rigid.slip(touch, scene.time)) / STILL);
-    }
+    setVelocities(this.scene, state.vx, state.vy, state.w);
+    for (const touch of sliding) this.startSlip.set(touch, (touch.sliding * (this.slipNow.get(touch) ?? 0)) / STILL);
     for (const friction of frictions) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
   }
 
@@ -194,7 +199,7 @@ export class Trial {
     // One that has only just broken away starts from rest and has nothing to stop.
     if (start <= 1) return Infinity;
     const end = this.scene.time + 2 * this.lastHalf;
-    const slip = 'contact' in source ? this.solver.rigid.slip(source, end) : source.slip();
+    const slip = 'contact' in source ? this.solver.rigid.slipNow(source, end) : source.slip();
     return (source.sliding * slip) / STILL;
   }
 

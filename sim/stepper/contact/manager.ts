@@ -199,12 +199,7 @@ export class ContactManager {
    * goes through the surface within the step, and stays infinite where the body merely came round an end.
    */
   openGapNow(touch: Touch): number {
-    const gap = leastOpenGap(touch);
-    if (gap >= 0) return gap;
-    const travel = 3 * this.travelOf(touch) + 10 * SKIN;
-    // A corner that comes over the track only now was not the nearest point at the start.
-    const drop = Math.min(touch.openGap - gap, -gap);
-    return drop > travel ? Infinity : gap;
+    return leastOpenGap(touch, 3 * this.travelOf(touch) + 10 * SKIN);
   }
 
   /**
@@ -258,7 +253,7 @@ export class ContactManager {
       }
     }
     if (this.isActive(touch)) this.meet(this.pairs[touch.pair]);
-    touch.openGap = leastOpenGap(touch);
+    touch.openGap = leastOpenGap(touch, DEEPEST);
     touch.isFresh = this.isActive(touch) && (!wasActive || touch.pair !== touch.startPair);
     touch.startPair = touch.pair;
     touch.startLink = touch.foot.link;

@@ -1,5 +1,5 @@
 import { TimeStep } from 'planck';
-import type { ConstraintPoint } from '../planck-internals.js';
+import type { BodyInternals, ConstraintPoint } from '../planck-internals.js';
 import { MANIFOLD_FACE_A } from '../planck-internals.js';
 import { partInner, type Scene } from '../scene.js';
 import type { State } from '../state.js';
@@ -7,6 +7,7 @@ import type { ContactManager } from './manager.js';
 import type { PairAccount } from '../books.js';
 import { addWork, type Pair } from './pair.js';
 import { CORE } from './shapes.js';
+import { frameOf } from './soft-point.js';
 import { fillManifold, isClosedKey, NO_KEY, type Touch } from './touch.js';
 
 const SATURATED = 1 - 1e-9;
@@ -204,13 +205,24 @@ export class RigidContacts {
     return rates;
   }
 
-  /**
-   * Sliding rate of a live touch with the velocities now in planck, at its first point, against the surface as it runs at
-   * `time`; as the solve had it when left out.
-   */
-  slip(touch: Touch, time?: number): number {
+  /** Sliding rate of a live touch with the velocities now in planck, at its first point as the solve had it. */
+  slip(touch: Touch): number {
     const { tA, tB } = this.rate(touch, touch.contact.v_points[0]);
-    return tB - tA - (time === undefined ? touch.contact.m_tangentSpeed : this.beltSpeed(touch, time));
+    return tB - tA - touch.contact.m_tangentSpeed;
+  }
+
+  /**
+   * Sliding rate of a touch where its bodies stand now, against the surface as it runs at `time`. At a step's ends a turning
+   * body's point has another velocity than the one it had at mid-step.
+   */
+  slipNow(touch: Touch, time: number): number {
+    const index = isClosedKey(touch, touch.candidates[0].key) ? 0 : 1;
+    if (index >= touch.count) return this.slip(touch);
+    const { nx, ny, x, y } = frameOf(touch, index);
+    const along = ({ c_position: { c }, c_velocity: { v, w } }: BodyInternals): number =>
+      ny * (v.x - w * (y - c.y)) - nx * (v.y + w * (x - c.x));
+    const { m_fixtureA, m_fixtureB } = touch.contact;
+    return along(m_fixtureB.m_body) - along(m_fixtureA.m_body) - this.beltSpeed(touch, time);
   }
 }
 

@@ -6,10 +6,6 @@ import { setCandidate, type Touch } from './touch.js';
 /** Looks up the contact pair of a body and a track; −1 where the document lists none. */
 export type PairOf = (bodyA: number, bodyB: number, track: number) => number;
 
-/** The end of a chain as a contact point. */
-const KEY_START = 1;
-const KEY_END = 2;
-
 /**
  * Contact of a body's point or round (disc, particle, corner, bar end) with a chain: exact foot, normal and gap on lines,
  * arcs and splines; no chords. Bodies with faces meet a straight line with two corners at once.
@@ -66,7 +62,8 @@ function heldAtEnd(touch: Touch, radius: number, x: number, y: number): void {
   touch.point.y = foot.y;
   const centre = touch.shapeB.vertices[0];
   const gap = Math.hypot(x - foot.x, y - foot.y) - radius;
-  setCandidate(touch, 0, foot.atStart ? KEY_START : KEY_END, gap, centre.x, centre.y);
+  // The same point as on the way: nothing parts or touches where a round goes on about the end.
+  setCandidate(touch, 0, 0, gap, centre.x, centre.y);
   touch.count = 1;
 }
 

@@ -115,13 +115,16 @@ export function setCandidate(touch: Touch, index: 0 | 1, key: number, gap: numbe
 
 export const isClosedKey = (touch: Touch, key: number): boolean => touch.closed[0] === key || touch.closed[1] === key;
 
-/** Least gap among the candidates that were not closed at the start of the step. */
-export function leastOpenGap(touch: Touch): number {
+/**
+ * Least gap among the candidates that were not closed at the start of the step. One that overlaps by more than `deepest`
+ * did not come through the surface but round an end of it.
+ */
+export function leastOpenGap(touch: Touch, deepest: number): number {
   if (!touch.armed || touch.pair < 0) return Infinity;
   let least = Infinity;
   for (let i = 0; i < touch.count; i += 1) {
-    const candidate = touch.candidates[i as 0 | 1];
-    if (!isClosedKey(touch, candidate.key) && candidate.gap < least) least = candidate.gap;
+    const { key, gap } = touch.candidates[i as 0 | 1];
+    if (gap < least && gap >= -deepest && !isClosedKey(touch, key)) least = gap;
   }
   return least;
 }
