@@ -24,12 +24,11 @@ export function accountWord(account: AccountName): string {
 
 type Named = Pick<PageLine, 'account' | 'of'> & Partial<Pick<PageLine, 'on' | 'segment' | 'role'>>;
 
-/** An account by its cause and item numbers, "Friction 1/2 chute"; one body needs no number for its gravity. */
+/** An account by its cause and item numbers, "Friction 1/2 chute". */
 export function lineName(line: Named, items: readonly Item[], mechanism: Mechanism, compact = false): string {
   const { role = 'entry', account, of } = line;
   if (account === null) return frameWords[role]?.[compact ? 1 : 0] ?? role;
-  const single = account === 'gravity' && mechanism.bodies.length === 1;
-  const numbers = single ? '' : itemNumbers(items, of);
+  const numbers = itemNumbers(items, of);
   const segment = segmentName(line, mechanism);
   const store = role === 'brought' ? ' b/f' : role === 'carried' ? ' c/f' : '';
   const word = compact && account === 'friction' && segment !== '' ? '' : accountWords[account];

@@ -3,16 +3,18 @@ import type { Recording } from '../../sim/recording/recording.js';
 import { contactOf, timeOfRow, valueAt } from '../../sim/recording/reader.js';
 import type { Page } from '../state/account.svelte.js';
 
-const same = (a: PageLine['of'], b: PageLine['of']) => [a].flat().join() === [b].flat().join();
+/** A line of nobody's is one for all accounts of its name. */
+const same = (a: PageLine['of'], b: PageLine['of']) => b === null || [a].flat().join() === [b].flat().join();
 
 /** When an entry's work was done on a page: from the first to the last row at which its account changed [s]. */
 export function pickedSpan(recording: Recording, { from, to }: Page, line: PageLine): [number, number] | null {
-  const spec = recording.layout.accounts.find(({ account, of, cause }) => {
+  const specs = recording.layout.accounts.filter(({ account, of, cause }) => {
     return account === line.account && same(of, line.of) && (line.cause === undefined || cause === line.cause);
   });
-  if (!spec || line.role !== 'entry') return null;
+  if (specs.length === 0 || line.role !== 'entry') return null;
   const contact = Array.isArray(line.of) && line.segment !== undefined ? contactOf(recording, line.of) : undefined;
-  const work = (row: number) => spec.columns.work.reduce((sum, column) => sum + valueAt(recording, row, column), 0);
+  const columns = specs.flatMap((spec) => spec.columns.work);
+  const work = (row: number) => columns.reduce((sum, column) => sum + valueAt(recording, row, column), 0);
   const least = 1e-6 * Math.abs(line.amount);
   let span: [number, number] | null = null;
   for (let row = from.row + 1; row <= to.row; row++) {

@@ -31,7 +31,7 @@ export function itemFields(item: Item, mechanism: Mechanism, items: readonly Ite
     return element ? say(element) : [];
   };
   const fields: Record<Item['kind'], () => CardField[]> = {
-    body: () => of(mechanism.bodies, bodyFields),
+    body: () => of(mechanism.bodies, (body) => bodyFields(body, nameOf)),
     track: () => of(mechanism.tracks, trackFields),
     spring: () => of(mechanism.springs, (spring) => springFields(spring, nameOf)),
     damper: () => of(mechanism.dampers, (damper) => damperFields(damper, nameOf)),
@@ -54,7 +54,7 @@ const number = (name: string, value: number, unit: string, symbol?: string) =>
 const tidy = (millimetres: number) => fixed(millimetres, 1).replace(/\.0$/, '');
 const place = ([x, y]: Vec): Shown => ({ value: `${tidy(x * 1e3)}, ${tidy(y * 1e3)}`, unit: 'mm' });
 
-function bodyFields({ mass, inertia, at, angle, velocity, spin, rest }: Body): CardField[] {
+function bodyFields({ mass, inertia, at, angle, velocity, spin, rest }: Body, nameOf: NameOf): CardField[] {
   return [
     number('Mass', mass, 'kg', 'm'),
     ...(inertia === 0 ? [] : [number('Inertia', inertia, 'kg m²', 'J')]),
@@ -62,7 +62,7 @@ function bodyFields({ mass, inertia, at, angle, velocity, spin, rest }: Body): C
     field('Angle', degrees(angle), 'φ'),
     number('Speed at start', Math.hypot(...velocity), 'm/s', 'v₀'),
     ...(spin === 0 ? [] : [number('Spin at start', spin, 'rad/s', 'ω₀')]),
-    ...(rest ? [plain('Laid on', rest.on)] : []),
+    ...(rest ? [plain('Laid on', nameOf(rest.on))] : []),
   ];
 }
 

@@ -130,7 +130,14 @@ function drawEnergy(context: Context, chart: Chart, top: number, colours: Colour
   context.lineWidth = 0.95;
   strokeLine(context, [xs[0], yOf(0)], [xs[xs.length - 1], yOf(0)]);
   context.font = font(13);
-  return labelLayers(xs, bands, names, (text) => context.measureText(text).width, layout);
+  return labelLayers(
+    xs,
+    bands,
+    names,
+    (text) => context.measureText(text).width,
+    layout,
+    chart.stations.map((time) => xOf(layout, axis, time)),
+  );
 }
 
 function traceBand(

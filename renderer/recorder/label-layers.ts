@@ -22,15 +22,20 @@ const height = 14;
 /** A layer thinner than this [px] all along has no name on the chart; the Key has its look. */
 const least = 2.5;
 
-/** Puts each layer's name where the layer is thickest, else beside it with a leader, and no two on top of each other. */
+/**
+ * Puts each layer's name where the layer is thickest, else beside it with a leader, and no two on top of each other.
+ *
+ * @param lines x of upright lines that no name may cross [px]
+ */
 export function labelLayers(
   xs: Float64Array,
   bands: readonly Band[],
   names: readonly string[],
   widthOf: (text: string) => number,
   layout: ChartLayout,
+  lines: readonly number[] = [],
 ): LayerLabel[] {
-  const taken: Box[] = [];
+  const taken: Box[] = lines.map((x) => ({ left: x - 1, right: x + 1, top: -Infinity, bottom: Infinity }));
   const isFree = (box: Box) =>
     taken.every((other) => box.right < other.left || box.left > other.right || box.bottom < other.top || box.top > other.bottom); // prettier-ignore
   const around = (x: number, y: number, width: number): Box => ({

@@ -8,7 +8,7 @@ import {
   type PageLine,
   type StationRow,
 } from '../../sim/ledger/index.js';
-import { mergeNumerical } from '../account/merge-numerical.js';
+import { mergeEntries } from '../account/merge-entries.js';
 import { nameStations, type StationName } from '../../sim/drawing/stations.js';
 import type { Mechanism } from '../../sim/mechanism/model.js';
 import type { Recording } from '../../sim/recording/recording.js';
@@ -101,7 +101,7 @@ export class Account {
   private print(): AccountPage | null {
     if (!this.ledger) return null;
     const ledgers = this.pages.map((page) => this.book(page)).filter((ledger) => ledger !== null);
-    return accountPage(mergeNumerical(this.ledger), { scale: scaleOf([...ledgers, this.ledger]), split: true });
+    return accountPage(mergeEntries(this.ledger), { scale: scaleOf([...ledgers, this.ledger]), split: true });
   }
 }
 

@@ -1,6 +1,13 @@
 import type { Mechanism } from '../../sim/mechanism/model.js';
 import type { Recording } from '../../sim/recording/recording.js';
-import { CancelledError, FrameJoiner, type Client, type SolverMethods } from '../../sim/protocol/index.js';
+import {
+  CancelledError,
+  FrameJoiner,
+  type Client,
+  type RunClosing,
+  type RunFrame,
+  type SolverMethods,
+} from '../../sim/protocol/index.js';
 
 export type RunStatus = 'none' | 'running' | 'ended' | 'halted' | 'failed';
 
@@ -17,6 +24,8 @@ export class Run {
   startedAt = $state('');
   failure = $state('');
   private halting: (() => void) | null = null;
+  /** Changes with the document: what a run of an earlier one still sends is not shown. */
+  private ticket = 0;
 
   /** Runs a mechanism; resolves when the run has ended in whichever way. */
   async start(client: Client<SolverMethods>, mechanism: Mechanism): Promise<void> {
@@ -25,26 +34,40 @@ export class Run {
     this.number += 1;
     this.status = 'running';
     this.startedAt = clock.format(Date.now());
+    const ticket = this.ticket;
+    const isStale = () => ticket !== this.ticket;
     const joiner = new FrameJoiner();
     const task = client.request('run', { mechanism }, (frame) => {
       joiner.add(frame);
-      this.duration = joiner.duration;
-      if (frame.part === 'rows') this.time = frame.time;
-      this.recording = joiner.recording();
+      if (!isStale()) this.follow(joiner, frame);
     });
     this.halting = () => task.cancel();
     try {
       const closing = await task.result;
       joiner.close(closing);
-      this.recording = joiner.recording();
-      this.failure = closing.end === 'notSimulated' ? (closing.findings[0]?.text ?? 'It cannot be simulated yet.') : '';
-      this.status = closing.end === 'notSimulated' ? 'failed' : 'ended';
+      if (!isStale()) this.finish(joiner, closing);
     } catch (error) {
-      this.status = error instanceof CancelledError ? 'halted' : 'failed';
-      this.failure = error instanceof Error && !(error instanceof CancelledError) ? error.message : '';
-    } finally {
-      this.halting = null;
+      if (!isStale()) this.fail(error);
     }
+  }
+
+  private follow(joiner: FrameJoiner, frame: RunFrame): void {
+    this.duration = joiner.duration;
+    if (frame.part === 'rows') this.time = frame.time;
+    this.recording = joiner.recording();
+  }
+
+  private finish(joiner: FrameJoiner, { end, findings }: RunClosing): void {
+    this.halting = null;
+    this.recording = joiner.recording();
+    this.failure = end === 'notSimulated' ? findings.map(({ text }) => text).join(' ') : '';
+    this.status = end === 'notSimulated' ? 'failed' : 'ended';
+  }
+
+  private fail(error: unknown): void {
+    this.halting = null;
+    this.status = error instanceof CancelledError ? 'halted' : 'failed';
+    this.failure = error instanceof Error && !(error instanceof CancelledError) ? error.message : '';
   }
 
   halt(): void {
@@ -62,6 +85,8 @@ export class Run {
   /** Forgets the runs of another document. */
   reset(): void {
     this.halt();
+    this.halting = null;
+    this.ticket += 1;
     this.clear();
     this.number = 0;
   }

@@ -1,4 +1,5 @@
 import type { Vec } from '../../sim/core/vec.js';
+import type { StationRow } from '../../sim/ledger/index.js';
 import { zoneAt } from '../frame/geometry.js';
 import { bodyOf, valueAt } from '../../sim/recording/reader.js';
 import type { Recording } from '../../sim/recording/recording.js';
@@ -9,6 +10,9 @@ import { Playback } from './playback.svelte.js';
 import { Run } from './run.svelte.js';
 import type { Solver } from './solver.js';
 import { View } from './view.svelte.js';
+
+/** A time [s] too short for anything to happen in. */
+const instant = 1e-9;
 
 /** A file's name and text, from wherever it was opened. */
 export interface OpenedFile {
@@ -54,6 +58,8 @@ export class Workbench {
   /** Something that went wrong outside the document: one sentence. */
   trouble = $state('');
   private solver: Solver;
+  /** How many files were opened. */
+  private opened = 0;
 
   /** How the drawing lies in the window, once it does: set by the sheet's field. */
   laid = $state.raw<LaidDrawing | null>(null);
@@ -77,41 +83,51 @@ export class Workbench {
 
   /** Reads a file and puts it on the sheet; errors of the file are shown with their places. */
   async open({ name, text, size }: OpenedFile): Promise<void> {
+    const ticket = ++this.opened;
     this.run.reset();
     this.playback.feeding = false;
     this.playback.time = 0;
     this.account.reset();
     this.trouble = '';
     this.drawing.reading = true;
-    try {
-      this.drawing.show(name, await this.solver.client.request('read', { text, fileSize: size }).result);
-      this.view.sheet = 1;
-    } catch (error) {
+    const result = await this.solver.client.request('read', { text, fileSize: size }).result.catch((error: unknown) => {
       this.troubled(error);
-    } finally {
-      this.drawing.reading = false;
-    }
+      return null;
+    });
+    // Another file was opened meanwhile: it is that one that is wanted.
+    if (ticket !== this.opened) return;
+    this.drawing.reading = false;
+    if (!result) return;
+    this.drawing.show(name, result);
+    this.view.sheet = 1;
   }
 
   /** Runs what is on the sheet, and turns to the run's sheet. */
   async start(): Promise<void> {
     const { mechanism } = this.drawing;
-    if (!mechanism) return;
+    if (!mechanism || this.run.status === 'running') return;
+    const ticket = this.opened;
+    this.trouble = '';
     this.view.sheet = 2;
     this.playback.feeding = false;
     this.playback.time = 0;
     this.account.pickedKey = null;
     await this.run.start(this.solver.client, mechanism);
+    if (ticket !== this.opened) return;
     if (this.run.status === 'failed') this.troubled(new Error(this.run.failure));
     this.playback.fitRate();
-    this.playback.moveTo(this.account.page?.to.time ?? 0);
+    this.showStation(this.account.page?.to ?? null);
   }
 
   goToStation(mark: string): void {
     const station = this.account.stationMarked(mark);
-    if (!station) return;
     this.playback.feeding = false;
-    this.playback.moveTo(station.time);
+    this.showStation(station);
+  }
+
+  /** A station on an impact is the instant just before it; the row after it has the same time. */
+  private showStation(station: StationRow | null): void {
+    if (station) this.playback.moveTo(station.time - (station.touch ? instant : 0));
   }
 
   /** Zone of the sheet that a point [m] lies in, such as "C5". */

@@ -6,7 +6,8 @@ import { patternOf, type PatternName } from './patterns.js';
 export interface StripLayer {
   key: string;
   kind: 'loss' | 'stored' | 'motion' | 'height';
-  account: AccountSpec | null;
+  /** What it is the account of; nobody's where it stands for many of one name. */
+  account: Pick<AccountSpec, 'account' | 'of'> | null;
   pattern: PatternName;
   /** Thickness at each sample [J], not below zero. */
   values: Float64Array;
@@ -55,8 +56,8 @@ export function energyStrip(recording: Recording, system: readonly string[], sam
       values: over((row) => Math.max(0, valueAt(recording, row, column))),
     }));
   const layers = [
-    ...losses,
-    ...stored,
+    ...fewLayers(losses),
+    ...fewLayers(stored),
     {
       key: 'motion',
       kind: 'motion',
@@ -68,6 +69,21 @@ export function energyStrip(recording: Recording, system: readonly string[], sam
   ] satisfies StripLayer[];
   const times = over((row) => valueAt(recording, row, 0));
   return { rows, times, layers: layers.filter(isSeen), top: topOf(layers, rows.length) };
+}
+
+/** Accounts of one name beyond this many are one layer: their edges would hide what they hold. */
+const most = 4;
+
+function fewLayers(layers: readonly StripLayer[]): StripLayer[] {
+  const seen = layers.filter(isSeen);
+  return seen.flatMap((layer, i): StripLayer[] => {
+    const name = layer.account?.account;
+    const alike = seen.filter(({ account }) => account?.account === name);
+    if (name === undefined || alike.length <= most) return [layer];
+    if (seen.findIndex(({ account }) => account?.account === name) < i) return [];
+    const values = layer.values.map((_, k) => alike.reduce((sum, each) => sum + each.values[k], 0));
+    return [{ ...layer, key: name, account: { account: name, of: null }, values }];
+  });
 }
 
 const isFriction = (account: string) => ['friction', 'joint-friction', 'rolling-resistance'].includes(account);

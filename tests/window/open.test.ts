@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { dropFile, example, inkShare, openWindow, useWindow } from './support/window.js';
+import { dropFile, example, inkShare, openWindow, openWithoutWebGl, useWindow } from './support/window.js';
 
 useWindow();
 
@@ -92,6 +92,22 @@ describe('opening a file', () => {
     await dropFile(page, example('belt-feed'));
     await page.getByRole('img', { name: /Drawing of Belt feed/ }).waitFor();
     expect(await page.getByRole('button', { name: 'Run F5' }).isEnabled()).toBe(true);
+  });
+
+  it('shows the last of several files dropped in quick succession', async () => {
+    const page = await openWindow();
+    for (const name of ['hammer-latch', 'belt-feed', 'gravity-feed']) void dropFile(page, example(name));
+    await page.getByRole('img', { name: /Drawing of Gravity crate feed/ }).waitFor();
+    await page.waitForTimeout(300);
+    expect(await page.title()).toContain('Gravity crate feed');
+  });
+
+  it('draws on the 2D canvas of its own accord where there is no WebGL', async () => {
+    const page = await openWithoutWebGl();
+    await dropFile(page, example('hammer-latch'));
+    await page.getByRole('img', { name: /Drawing of Date-stamp hammer/ }).waitFor();
+    expect(await page.locator('.field .paper').getAttribute('data-renderer')).toBe('canvas');
+    expect(await inkShare(page, '.field .paper')).toBeGreaterThan(0.003);
   });
 
   it('picks an item on the drawing and shows its card', async () => {

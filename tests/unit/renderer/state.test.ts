@@ -168,6 +168,14 @@ describe('a run in the window', () => {
     expect(run.recording?.rowCount).toBeGreaterThan(0);
   });
 
+  it('of a document that is no longer on the sheet leaves no trace', async () => {
+    const run = new Run();
+    const ended = run.start(client(), mechanism);
+    run.reset();
+    await ended;
+    expect([run.status, run.number, run.recording]).toEqual(['none', 0, null]);
+  });
+
   it('says why, when the solver fails', async () => {
     const run = new Run();
     const failing: Handlers<SolverMethods> = {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { accountLook } from '../../../renderer/account/look.js';
-import { mergeNumerical } from '../../../renderer/account/merge-numerical.js';
+import { mergeEntries } from '../../../renderer/account/merge-entries.js';
 import { lineName } from '../../../renderer/account/names.js';
 import { shownLines } from '../../../renderer/account/account-rows.js';
 import { energy, figures, fixed } from '../../../renderer/format/quantity.js';
@@ -9,6 +9,7 @@ import { itemData } from '../../../renderer/parts-list/item-data.js';
 import { symbolsOf } from '../../../renderer/key/symbols.js';
 import { numberItems } from '../../../sim/drawing/items.js';
 import type { Ledger, PageLine } from '../../../sim/ledger/index.js';
+import type { AccountName } from '../../../sim/recording/recording.js';
 import { everyKind } from '../drawing/every-kind.js';
 
 const items = numberItems(everyKind);
@@ -50,13 +51,13 @@ describe('the lines of the account', () => {
     expect(shownLines(lines, 3)).toEqual(lines.filter((each) => each !== nil));
   });
 
-  it('show the causes of numerical as one, without losing a joule', () => {
-    const entry = (account: 'numerical' | 'gravity', cause: string | undefined, work: number) => ({ account, of: null, ...(cause === undefined ? {} : { cause }), kind: 'numerical' as const, work, byBody: { box: work }, heat: 0, places: [] }); // prettier-ignore
-    const ledger = { entries: [entry('numerical', 'clamp', 0.25), entry('gravity', undefined, 3), entry('numerical', 'solver-residual', -0.5)] } as unknown as Ledger; // prettier-ignore
-    const merged = mergeNumerical(ledger).entries;
-    expect(merged.map(({ account, work }) => [account, work])).toEqual([['gravity', 3], ['numerical', -0.25]]); // prettier-ignore
-    expect(merged[1].byBody).toEqual({ box: -0.25 });
-    expect(merged[1]).not.toHaveProperty('cause');
+  it('show gravity and the causes of numerical as one each, without losing a joule or a body', () => {
+    const entry = (account: AccountName, of: string | null, body: string, work: number) => ({ account, of, kind: 'stored' as const, work, byBody: { [body]: work }, heat: 0, places: [] }); // prettier-ignore
+    const ledger = { entries: [entry('numerical', null, 'box', 0.25), entry('gravity', 'box', 'box', 3), entry('spring', 'coil', 'box', 1), entry('gravity', 'disc', 'disc', 2), entry('numerical', null, 'box', -0.5)] } as unknown as Ledger; // prettier-ignore
+    const merged = mergeEntries(ledger).entries;
+    expect(merged.map(({ account, of, work }) => [account, of, work])).toEqual([['gravity', null, 5], ['spring', 'coil', 1], ['numerical', null, -0.25]]); // prettier-ignore
+    expect(merged[0].byBody).toEqual({ box: 3, disc: 2 });
+    expect(lineName(line({ account: 'gravity', of: null }), items, everyKind)).toBe('Gravity');
   });
 
   it('have a look without a run, too', () => {

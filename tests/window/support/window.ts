@@ -21,6 +21,8 @@ export interface WindowOptions {
 }
 
 let browser: Browser;
+/** A browser without WebGL, while a test has one. */
+let blind: Browser | null = null;
 let served: ServedWindow;
 let errors: string[] = [];
 
@@ -32,6 +34,8 @@ export function useWindow(): void {
   });
   afterEach(async () => {
     for (const context of browser.contexts()) await context.close();
+    await blind?.close();
+    blind = null;
     const seen = errors;
     errors = [];
     expect(seen).toEqual([]);
@@ -52,6 +56,16 @@ export async function openWindow(options: WindowOptions = {}): Promise<Page> {
   });
   await page.goto(`${served.address}?renderer=${renderer}`);
   await page.locator(`[data-renderer="${renderer}"]`).waitFor();
+  return page;
+}
+
+/** Opens the window in a browser without WebGL, as on a machine without a graphics driver. */
+export async function openWithoutWebGl(): Promise<Page> {
+  blind = await chromium.launch({ executablePath: chromiumPath(), args: [...switches, '--disable-3d-apis'] });
+  const page = await blind.newPage({ viewport: { width: 1440, height: 900 } });
+  page.on('pageerror', ({ message }) => errors.push(message));
+  await page.goto(served.address);
+  await page.locator('[data-renderer]').waitFor();
   return page;
 }
 
