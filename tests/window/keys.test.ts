@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { moment, openWindow, useWindow } from './support/window.js';
+import { moment, openWindow, runExample, useWindow } from './support/window.js';
 
 useWindow();
 
@@ -62,9 +62,7 @@ describe('the keyboard', () => {
 
   it('reaches every control by Tab, each with a visible focus', async () => {
     const page = await openWindow();
-    await page.getByRole('button', { name: /Gravity crate feed/ }).click();
-    await page.keyboard.press('F5');
-    await page.getByRole('region', { name: 'Paid out' }).waitFor({ timeout: 50_000 });
+    await runExample(page, 'gravity-feed');
     const reached = new Set<string>();
     for (let i = 0; i < 120; i++) {
       await page.keyboard.press('Tab');
