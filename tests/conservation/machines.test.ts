@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { bookLedger } from '../../sim/ledger/index.js';
 import { machines } from '../support/machines.js';
-import { expectSound, run, type Run } from '../support/run.js';
+import { expectSound } from '../support/expect.js';
+import { run, type Run } from '../support/run.js';
 
 describe.each(Object.entries(machines))('the account of %s', (_, parts) => {
   let known: Run | undefined;

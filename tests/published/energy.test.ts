@@ -11,7 +11,8 @@ import {
   sliderCrankMotion,
   track,
 } from '../support/parts.js';
-import { expectSound, expectWithin, run } from '../support/run.js';
+import { expectSound, expectWithin } from '../support/expect.js';
+import { run } from '../support/run.js';
 
 const earth = { gravity: [0, -9.81] };
 const spring = (rate: number, from: object, to: object, more: object = {}): object => ({

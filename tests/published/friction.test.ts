@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { box, degrees, disc, floor, onRamp, ramp, track } from '../support/parts.js';
-import { expectSound, expectWithin, G, run } from '../support/run.js';
+import { expectSound, expectWithin } from '../support/expect.js';
+import { G, run } from '../support/run.js';
 
 describe('a disc that is set down sliding', () => {
   it('rolls at v₀/(3 μ g) = 0.509684 s with ⅔ v₀, after 3 J of heat (Coulomb friction on a solid disc)', () => {

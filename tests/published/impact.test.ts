@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { box, degrees, disc, floor, particle, track } from '../support/parts.js';
-import { expectSound, expectWithin, G, run } from '../support/run.js';
+import { expectSound, expectWithin } from '../support/expect.js';
+import { G, run } from '../support/run.js';
 
 /** Nothing but the impact counts here. */
 const free = { gravity: [0, 0] };

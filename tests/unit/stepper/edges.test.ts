@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { box, disc, floor, track } from '../../support/parts.js';
-import { expectSound, expectWithin, G, run, type Run } from '../../support/run.js';
+import { expectSound, expectWithin } from '../../support/expect.js';
+import { G, run, type Run } from '../../support/run.js';
 
 /** Each event costs a handful of trials; a run that looks for the same event again and again takes many more. */
 const expectCalm = (ran: Run): void => {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { box, disc, particle } from '../../support/parts.js';
-import { expectSound, run, type Parts } from '../../support/run.js';
+import { expectSound } from '../../support/expect.js';
+import { run, type Parts } from '../../support/run.js';
 
 const free = { gravity: [0, 0] };
 
