@@ -28,7 +28,8 @@ type Named = Pick<PageLine, 'account' | 'of'> & Partial<Pick<PageLine, 'on' | 's
 export function lineName(line: Named, items: readonly Item[], mechanism: Mechanism, compact = false): string {
   const { role = 'entry', account, of } = line;
   if (account === null) return frameWords[role]?.[compact ? 1 : 0] ?? role;
-  const numbers = itemNumbers(items, of);
+  // There is one gravity, whichever bodies it works on.
+  const numbers = account === 'gravity' ? '' : itemNumbers(items, of);
   const segment = segmentName(line, mechanism);
   const store = role === 'brought' ? ' b/f' : role === 'carried' ? ' c/f' : '';
   const word = compact && account === 'friction' && segment !== '' ? '' : accountWords[account];

@@ -1,7 +1,7 @@
 import type { Item } from '../../sim/drawing/items.js';
 import type { Body } from '../../sim/mechanism/kinds/body.js';
 import type { Damper } from '../../sim/mechanism/kinds/damper.js';
-import type { DriveLaw } from '../../sim/mechanism/kinds/drive.js';
+import type { Drive } from '../../sim/mechanism/kinds/drive.js';
 import type { Joint } from '../../sim/mechanism/kinds/joint.js';
 import type { Spring } from '../../sim/mechanism/kinds/spring.js';
 import type { Track } from '../../sim/mechanism/kinds/track.js';
@@ -21,7 +21,7 @@ export function itemData(item: Item, mechanism: Mechanism): string {
     track: () => of(mechanism.tracks, trackData),
     spring: () => of(mechanism.springs, springData),
     damper: () => of(mechanism.dampers, damperData),
-    drive: () => of(mechanism.drives, ({ law }) => driveData(law)),
+    drive: () => of(mechanism.drives, (drive) => driveData(drive, mechanism)),
     joint: () => of(mechanism.joints, jointData),
   };
   return data[item.kind]();
@@ -50,7 +50,7 @@ function trackData({ segments, closed, surfaceSpeed }: Track): string {
   const names = segments.flatMap(({ name }) => (name === undefined ? [] : [name]));
   const parts = names.length > 0 ? names.join(', ') : segments.length === 1 ? 'one part' : `${segments.length} parts`;
   const belt =
-    surfaceSpeed === 0 ? '' : typeof surfaceSpeed === 'number' ? `, belt ${figures(surfaceSpeed)} m/s` : ', belt';
+    surfaceSpeed === 0 ? '' : typeof surfaceSpeed === 'number' ? `, moves at ${figures(surfaceSpeed)} m/s` : ', moves';
   return `${parts}${closed ? ', closed' : ''}${belt}`;
 }
 
@@ -65,16 +65,18 @@ function damperData({ kind, coefficient, exponent }: Damper): string {
   return exponent === 1 ? `${figures(coefficient)} ${unit}` : `${figures(coefficient)}, exponent ${figures(exponent)}`;
 }
 
-function driveData(law: DriveLaw): string {
+function driveData({ on, law }: Drive, { joints }: Mechanism): string {
+  const turns = joints.find(({ id }) => id === on)?.kind === 'pin';
+  const [effort, speed] = turns ? ['N m', 'rad/s'] : ['N', 'm/s'];
   switch (law.kind) {
     case 'effort':
-      return `${figures(law.value)} held`;
+      return `${figures(law.value)} ${effort}`;
     case 'effortCurve':
       return `by ${law.over}`;
     case 'speed':
-      return typeof law.value === 'number' ? `speed ${figures(law.value)}` : 'speed over time';
+      return typeof law.value === 'number' ? `held at ${figures(law.value)} ${speed}` : 'speed over time';
     case 'motor':
-      return `motor ${figures(law.stallTorque)} N m`;
+      return `motor, stalls at ${figures(law.stallTorque)} ${effort}`;
   }
 }
 

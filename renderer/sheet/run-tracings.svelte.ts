@@ -3,6 +3,7 @@ import { toPaper } from '../../sim/drawing/paper.js';
 import { lossScale } from '../../sim/drawing/tracings/loss-band.js';
 import { lossMap, type LossBand } from '../../sim/drawing/tracings/loss-map.js';
 import { trail, trailInterval } from '../../sim/drawing/tracings/trail.js';
+import type { PageLine } from '../../sim/ledger/index.js';
 import { bodyOf } from '../../sim/recording/reader.js';
 import { accountLook } from '../account/look.js';
 import { lineName } from '../account/names.js';
@@ -45,23 +46,23 @@ export class RunTracings {
       .map((band) => this.labelled(band));
   }
 
-  /** A band with the name and the figure that the account has for it. */
+  /** A band with the name and, where it is the same, the figure that the account has for it. */
   private labelled(band: LossBand): LabelledBand {
     const { drawing, account } = this.bench;
     const { printed, picked } = account;
+    const { account: cause, pair, joules } = band;
     const part = band.name === undefined ? {} : { on: band.track, segment: band.segment };
-    const name = drawing.mechanism ? lineName({ account: 'friction', of: band.pair, ...part }, drawing.items, drawing.mechanism) : ''; // prettier-ignore
-    const lines =
-      printed?.paidOut.filter(
-        ({ account: cause, of }) => cause === 'friction' && [of].flat().join() === band.pair.join(),
-      ) ?? [];
+    const name = drawing.mechanism ? lineName({ account: cause, of: pair, ...part }, drawing.items, drawing.mechanism) : ''; // prettier-ignore
+    const isOurs = (line: PageLine) => line.account === cause && [line.of].flat().join() === pair.join();
+    const lines = [...(printed?.paidOut ?? []), ...(printed?.received ?? [])].filter(isOurs);
     const line = lines.find(({ segment }) => segment === band.segment) ?? (lines.length === 1 ? lines[0] : undefined);
-    const isWhole = line !== undefined && printed !== null;
+    // What a belt gives a body is not what is lost between them, and a line may hold more segments than this one.
+    const isSame = line !== undefined && Math.abs(line.amount - joules) <= 0.005 * joules;
     return {
       band,
-      pattern: accountLook(this.sheet.ended, 'friction', band.pair),
+      pattern: accountLook(this.sheet.ended, cause, pair),
       label: name.replace(/^Friction /, ''),
-      figure: isWhole ? `${line.printed} ${printed.scale.unit}` : energyText(band.joules, printed?.scale),
+      figure: isSame && printed ? `${line.printed} ${printed.scale.unit}` : energyText(joules, printed?.scale),
       picked: picked !== null && line === picked,
     };
   }

@@ -8,12 +8,14 @@ import {
   type SmoothRun,
   type TrackPath,
 } from '../../geometry/index.js';
+import type { Track } from '../../mechanism/kinds/track.js';
 import type { Mechanism } from '../../mechanism/model.js';
-import type { AccountSpec, ContactSpec, Recording } from '../../recording/recording.js';
+import type { AccountName, AccountSpec, ContactSpec, Recording } from '../../recording/recording.js';
 import { contactOf, valueAt } from '../../recording/reader.js';
 
 /** Joules lost along one segment of a track by one pair, between two rows of a run. */
 export interface LossBand {
+  account: AccountName;
   pair: [string, string];
   track: string;
   segment: number;
@@ -43,7 +45,8 @@ export function lossMap(mechanism: Mechanism, recording: Recording, [from, to]: 
     const path = buildTrack(track);
     const tally = new Tally(path, mechanism.extent * cell);
     for (let row = from + 1; row <= to; row++) addLoss(tally, recording, account, contact, row);
-    return tally.bands(account.of, track.segments.map(({ name }) => name)); // prettier-ignore
+    const { of: pair, account: cause } = account;
+    return tally.bands(track).map((band) => ({ ...band, pair, account: cause }));
   });
 }
 
@@ -114,8 +117,8 @@ class Tally {
   }
 
   /** Neighbouring cells of a segment make one band. */
-  bands(pair: [string, string], names: readonly (string | undefined)[]): LossBand[] {
-    const bands: LossBand[] = [];
+  bands({ segments }: Track): Omit<LossBand, 'pair' | 'account'>[] {
+    const bands: Omit<LossBand, 'pair' | 'account'>[] = [];
     this.path.runs.forEach((run, index) => {
       let before: Cell | null = null;
       for (const cell of this.cells[index]) {
@@ -128,7 +131,7 @@ class Tally {
         } else if (isPassed) {
           const { segment, joules } = cell;
           const places = cellPlaces(run, this.path.side, cell);
-          bands.push({ pair, track: this.path.id, segment, name: names[segment], joules, places });
+          bands.push({ track: this.path.id, segment, name: segments[segment].name, joules, places });
         }
         before = isPassed ? cell : null;
       }

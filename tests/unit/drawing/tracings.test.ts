@@ -7,7 +7,7 @@ import { lossMap } from '../../../sim/drawing/tracings/loss-map.js';
 import { trail, trailInterval } from '../../../sim/drawing/tracings/trail.js';
 import { bodyAtRow, bodyOf, timeOfRow } from '../../../sim/recording/index.js';
 import { runStepper } from '../../../sim/stepper/index.js';
-import { box, degrees, onRamp, ramp } from '../../support/parts.js';
+import { box, degrees, disc, onRamp, ramp } from '../../support/parts.js';
 import { G, mechanismOf } from '../../support/run.js';
 
 const friction = 0.2;
@@ -56,6 +56,21 @@ describe('the loss map', () => {
     expect(bands).toHaveLength(1);
     expect(bands[0].joules).toBeCloseTo(friction * normal * path, 2);
     expect(bands[0]).toMatchObject({ track: 'ramp', segment: 0 });
+  });
+
+  it('keeps rolling resistance apart from friction', () => {
+    const rolling = mechanismOf({
+      bodies: [disc('wheel', onRamp(angle, 0.5, 0.1), 0.1, 4)],
+      tracks: [ramp(angle, 6)],
+      contacts: [{ between: ['wheel', 'ramp'], friction: 0.8, rollingResistance: 0.005 }],
+      run: { until: 0.8 },
+    });
+    const rolled = runStepper(rolling);
+    const found = lossMap(rolling, rolled, [0, rolled.rowCount - 1]);
+    expect(found.map(({ account }) => account)).toEqual(['rolling-resistance']);
+    const wheel = bodyOf(rolled, 'wheel')!;
+    const [a, b] = [bodyAtRow(rolled, wheel, 0), bodyAtRow(rolled, wheel, rolled.rowCount - 1)];
+    expect(found[0].joules).toBeCloseTo((normal * 0.005 * Math.hypot(b.x - a.x, b.y - a.y)) / 0.1, 1);
   });
 
   it('is as deep as the friction force: joules for each metre are newtons', () => {

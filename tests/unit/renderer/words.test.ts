@@ -41,7 +41,7 @@ describe('the lines of the account', () => {
     expect(lineName(line({ on: 'chute', segment: 1 }), items, everyKind, true)).toBe('1/8 part 2');
     expect(lineName(line({ role: 'brought', account: null, of: null }), items, everyKind)).toBe('Brought forward');
     expect(lineName(line({ role: 'carried', account: null, of: null }), items, everyKind, true)).toBe('Balance c/f');
-    expect(lineName(line({ account: 'gravity', of: 'box' }), items, everyKind)).toBe('Gravity 1');
+    expect(lineName(line({ account: 'gravity', of: 'box' }), items, everyKind)).toBe('Gravity');
   });
 
   it('that are nil go first when there is no room, but never what opens, closes, or is the method’s', () => {
