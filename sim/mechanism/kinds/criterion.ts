@@ -90,7 +90,10 @@ export const criterionFields = tagged('a criterion', 'measure', {
     at,
   }),
   effectiveMass: measured('an effective mass', 'mass', 'kg', { of: pairOf, at }),
-  peakForce: measured('a peak force', 'force', 'N', { of: pairOr('a spring or a joint', 'spring', 'joint'), ...span }),
+  peakForce: measured('a peak force', 'force', 'N', {
+    of: pairOr('a spring, a joint or a damper', 'spring', 'joint', 'damper'),
+    ...span,
+  }),
   travel: measured('a travel', 'length', 'mm', { of: required(ref('body'), 'The body.'), ...span }),
   angle: measured('an angle', 'angle', 'deg', { of: required(ref('body'), 'The body.'), at }),
   slipSpeed: measured('a slip speed', 'speed', 'm/s', { of: pairOf, at }),

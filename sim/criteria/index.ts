@@ -1,0 +1,2 @@
+export { evaluateCriteria } from './evaluate.js';
+export type * from './result.js';
