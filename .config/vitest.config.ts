@@ -18,6 +18,7 @@ export default defineConfig({
     coverage: {
       provider: 'v8',
       include: ['sim/**/*.ts', 'main/**/*.ts', 'renderer/**/*.ts'],
+      exclude: ['tests/**', '.config/**'],
       reportsDirectory: 'coverage',
     },
     projects: [
