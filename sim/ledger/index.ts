@@ -9,3 +9,16 @@ export { bookLedger, kineticEnergy } from './book.js';
 export { consecutiveLedgers, stationRows, stationSpans } from './stations.js';
 export { entryKind } from './kind.js';
 export { ACCOUNT_NAMES, CAUSE_NAMES, lineLabel, ofLabel } from './names.js';
+export { AGREEMENT, compareRuns } from './comparison.js';
+export type { Comparison, ComparisonOptions, Verdict } from './comparison.js';
+export type {
+  AccountFigure,
+  Figure,
+  Quantity,
+  SpanComparison,
+  StationComparison,
+  StationFigure,
+} from './comparison/figures.js';
+export { nudge, sensitivityOf } from './comparison/sensitivity.js';
+export type { Sensitivity } from './comparison/sensitivity.js';
+export { QUANTITIES } from './comparison/words.js';

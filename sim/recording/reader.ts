@@ -1,4 +1,4 @@
-import type { AccountSpec, BodySpec, ContactSpec, LinkSpec, Recording } from './recording.js';
+import type { AccountSpec, BodySpec, ContactSpec, LinkEnd, LinkSpec, Recording } from './recording.js';
 import type { Vec } from '../core/vec.js';
 
 /** Motion of a body at one instant: centre of mass [m], angle [rad], velocity [m/s], spin [rad/s]. */
@@ -142,7 +142,11 @@ export function middleOfLink(recording: Recording, link: LinkSpec, row: number):
   return [sum(0) / places.length, sum(1) / places.length];
 }
 
-function endAtRow(recording: Recording, end: LinkSpec['ends'][0], row: number): Vec | undefined {
+/**
+ * Where an end of a spring or damper is at a row [m]: a point of a body or of the ground, given as drawn. One given by
+ * its part alone is at that body's centre of mass, and on the ground nowhere.
+ */
+export function endAtRow(recording: Recording, end: LinkEnd, row: number): Vec | undefined {
   const body = bodyOf(recording, end.of);
   if (!body) return end.at;
   const now = bodyAtRow(recording, body, row);
