@@ -44,13 +44,17 @@ export class RunView {
 
   /** A measure between two stations, if both were reached, in this order. */
   over({ from, to }: Ends, take: (rows: Rows) => Measurement): Measurement {
-    const first = from === undefined ? { row: 0 } : this.station(from);
-    const last = to === undefined ? { row: this.recording.rowCount - 1 } : this.station(to);
-    if (!first) return { reason: this.missed(from!) };
-    if (!last) return { reason: this.missed(to!) };
     if (to === undefined && !this.isWhole) return { reason: 'the run stopped before its end' };
-    if (first.row <= last.row) return take({ fromRow: first.row, toRow: last.row });
+    const missing = [from, to].find((id) => id !== undefined && !this.stations.has(id));
+    if (missing !== undefined) return { reason: this.missed(missing) };
+    const fromRow = this.rowOf(from, 0);
+    const toRow = this.rowOf(to, this.recording.rowCount - 1);
+    if (fromRow <= toRow) return take({ fromRow, toRow });
     return { reason: `station ${to} was reached before station ${from}` };
+  }
+
+  private rowOf(id: string | undefined, otherwise: number): number {
+    return (id === undefined ? undefined : this.stations.get(id)?.row) ?? otherwise;
   }
 
   private missed(id: string): string {

@@ -1,11 +1,11 @@
 import type { Problem } from '../core/problem.js';
+import { evaluateCriteria } from '../criteria/index.js';
 import { consecutiveLedgers, ledgerFindings } from '../ledger/index.js';
 import type { Ledger } from '../ledger/index.js';
-import type { Bounds, Criterion } from '../mechanism/kinds/criterion.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { Finding, Recording, RunEnd } from '../recording/index.js';
 import { onlyFinite } from './finite.js';
-import type { CheckResult, ResultCriterion, ResultFinding } from './result.js';
+import type { CheckResult, ResultFinding } from './result.js';
 import { runResult } from './run-result.js';
 
 /** All that a check found out about one file. */
@@ -25,12 +25,12 @@ export interface CheckInput {
 
 /**
  * The result of a check, `joulewright-result/1`. Every number in it is finite: one that is not becomes 0 and a finding of
- * code `non-finite`. While no auditor runs, the verdict is `unaudited`, with a finding that says so, and no criterion is
- * evaluated, each with its finding.
+ * code `non-finite`. While no auditor runs, the verdict is `unaudited`, with a finding that says so, and the criteria are
+ * judged on the stepper's run.
  */
 export function checkResult(input: CheckInput): CheckResult {
   const { mechanism, stepper } = input;
-  const criteria = mechanism?.criteria ?? [];
+  const judged = mechanism ? evaluateCriteria(mechanism, stepper) : { criteria: [], findings: [] };
   const ledgers = mechanism && stepper ? consecutiveLedgers(stepper, mechanism.system) : [];
   return onlyFinite({
     format: 'joulewright-result/1',
@@ -41,12 +41,13 @@ export function checkResult(input: CheckInput): CheckResult {
       ...(input.problems ?? []).map(problemFinding),
       ...(input.findings ?? []),
       ...(mechanism && stepper ? runFindings(mechanism, stepper, ledgers) : []),
-      ...(mechanism ? [...criteriaFinding(criteria), UNAUDITED] : []),
+      ...judged.findings,
+      ...(mechanism ? [UNAUDITED] : []),
     ],
     stepper: mechanism && stepper ? runResult(mechanism, stepper, ledgers) : null,
     auditor: null,
     handCheck: [],
-    criteria: criteria.map(notEvaluated),
+    criteria: judged.criteria,
   });
 }
 
@@ -104,25 +105,4 @@ function missedStations({ stations }: Mechanism, { events }: Recording): Finding
       const text = `Station ${id} was not reached before the end of the run.`;
       return { severity: 'warning', code: 'station-not-reached', text, of: [id] };
     });
-}
-
-function notEvaluated(criterion: Criterion): ResultCriterion {
-  const { id, atMost, atLeast, between }: { id: string } & Bounds = criterion;
-  return {
-    id,
-    value: null,
-    ...(atMost === undefined ? {} : { atMost }),
-    ...(atLeast === undefined ? {} : { atLeast }),
-    ...(between === undefined ? {} : { between: [between[0], between[1]] }),
-    passes: null,
-    by: null,
-  };
-}
-
-function criteriaFinding(criteria: readonly Criterion[]): Finding[] {
-  if (criteria.length === 0) return [];
-  const of = criteria.map(({ id }) => id);
-  const [noun, were, count] = of.length === 1 ? ['Criterion', 'was', 'counts'] : ['Criteria', 'were', 'count'];
-  const text = `${noun} ${of.join(', ')} ${were} not evaluated, and ${count} as failed: this version evaluates none.`;
-  return [{ severity: 'warning', code: 'criterion-not-evaluated', text, of }];
 }

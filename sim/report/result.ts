@@ -100,14 +100,30 @@ const solverRun = v.strictObject({
   step: v.optional(si('[s]')),
 });
 
+const part = v.strictObject({
+  side: v.pipe(v.picklist(['gives', 'takes']), v.description('What is there, or what is wanted from it')),
+  label: v.string(),
+  amount: joules('Below nil where it works the other way round'),
+});
+
 const criterion = v.strictObject({
   id,
-  value: v.nullable(si('Measured, SI')),
+  name: v.optional(v.string()),
+  measure: v.string(),
+  unit: v.pipe(v.string(), v.description('SI unit of the value, its limits and its margin')),
+  value: v.nullable(si('Measured, SI; for a station to be reached, when it was')),
+  claimed: v.optional(si('What somebody claims the value to be')),
+  margin: v.optional(si('How far the value is within its limit, SI; below nil outside')),
+  marginShare: v.optional(si('The margin as a share of that limit')),
+  at: v.optional(si('When the greatest value was [s]')),
+  resolution: v.optional(si('How far the recorded rows leave the value open, SI')),
   atMost: v.optional(si('Limit, SI')),
   atLeast: v.optional(si('Limit, SI')),
   between: v.optional(v.strictTuple([si('Limit, SI'), si('Limit, SI')])),
-  passes: v.nullable(v.boolean()),
+  passes: v.pipe(v.nullable(v.boolean()), v.description('null: not evaluated, which counts as failed')),
   by: v.nullable(v.picklist(['stepper', 'auditor'])),
+  parts: v.optional(v.pipe(v.array(part), v.description('What a ratio is made of'))),
+  note: v.optional(v.string()),
 });
 
 const handCheck = v.strictObject({

@@ -54,5 +54,10 @@ export function time(seconds: number): string {
 
 /** Three significant digits, without trailing zeros. */
 export function short(value: number): string {
-  return String(Number(value.toPrecision(3))).replace('-', '−');
+  return digits(value, 3);
+}
+
+/** So many significant digits, without trailing zeros. */
+export function digits(value: number, count: number): string {
+  return String(Number(value.toPrecision(count))).replace('-', '−');
 }

@@ -43,10 +43,23 @@ describe('joulewright check', () => {
     expect((await check(fallingDocument, ['--stepper-only'])).status).toBe(0);
   });
 
-  it('answers 1 with --stepper-only where a criterion could not be evaluated, and 2 without', async () => {
-    const result = await check(asked, ['--stepper-only', '--json']);
-    expect((JSON.parse(result.out) as CheckResult).criteria).toMatchObject([{ id: 'fast', value: null, passes: null }]);
-    expect([result.status, (await check(asked, [])).status]).toEqual([1, 2]);
+  it('answers 0 with --stepper-only where every criterion passes', async () => {
+    const { status, out } = await check(asked, ['--stepper-only', '--json']);
+    expect((JSON.parse(out) as CheckResult).criteria).toMatchObject([
+      { id: 'fast', value: 9.80665, atLeast: 5, passes: true, by: 'stepper' },
+    ]);
+    expect(status).toBe(0);
+  });
+
+  it.each([
+    ['fails', { at: '2', atLeast: '10 m/s' }, false],
+    ['could not be evaluated', { at: '3', atLeast: '5 m/s' }, null],
+  ])('answers 1 with --stepper-only where a criterion %s, and 2 without', async (_, changes, passes) => {
+    const stations = [...fallingDocument.stations, { id: '3', when: { time: '0.5 s' } }];
+    const document = { ...asked, stations, criteria: [{ ...asked.criteria[0], ...changes }] };
+    const result = await check(document, ['--stepper-only', '--json']);
+    expect((JSON.parse(result.out) as CheckResult).criteria).toMatchObject([{ id: 'fast', passes }]);
+    expect([result.status, (await check(document, [])).status]).toEqual([1, 2]);
   });
 
   it('answers 2 where the ledger does not close, also with --stepper-only', async () => {

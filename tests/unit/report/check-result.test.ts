@@ -65,25 +65,59 @@ describe('checkResult', () => {
     expect(result.findings.at(-1)).toMatchObject({ code: 'unaudited' });
   });
 
-  it('lists every criterion as not evaluated, with a finding that names them', () => {
+  it('judges every criterion on the run, in the order of the document', () => {
     const mechanism = cratesMechanism();
     mechanism.criteria = [
       { id: 'q1', measure: 'speed', of: 'upper', at: '2', atMost: 2 },
       { id: 'q2', measure: 'angle', of: 'upper', at: '2', between: [0, 1] },
       { id: 'q3', measure: 'reached', at: '2' },
-      { id: 'q4', measure: 'angle', of: 'upper', at: '2', atLeast: 0 },
     ];
     const { criteria, findings } = checkResult(input({ mechanism }));
-    expect(criteria).toEqual([
-      { id: 'q1', atMost: 2, value: null, passes: null, by: null },
-      { id: 'q2', between: [0, 1], value: null, passes: null, by: null },
-      { id: 'q3', value: null, passes: null, by: null },
-      { id: 'q4', atLeast: 0, value: null, passes: null, by: null },
+    expect(criteria).toMatchObject([
+      { id: 'q1', measure: 'speed', unit: 'm/s', atMost: 2, value: Math.sqrt(18), passes: false, by: 'stepper' },
+      { id: 'q2', between: [0, 1], value: 0, margin: 0, passes: true, by: 'stepper' },
+      { id: 'q3', value: 2, passes: true, by: 'stepper' },
     ]);
-    const [found, ...others] = findings.filter(({ code }) => code === 'criterion-not-evaluated');
-    expect(found).toMatchObject({ severity: 'warning', of: ['q1', 'q2', 'q3', 'q4'] });
-    expect(found.text).toMatch(/^Criteria q1, q2, q3, q4 were not evaluated, and count as failed/);
-    expect(others).toEqual([]);
+    expect(findings.map(({ code }) => code)).not.toContain('criterion-not-evaluated');
+  });
+
+  it('has a finding for a criterion that could not be evaluated, and for all of them where nothing ran', () => {
+    const mechanism = cratesMechanism();
+    mechanism.criteria = [{ id: 'q1', measure: 'speed', of: 'upper', at: '3', atMost: 2 }];
+    const { criteria, findings } = checkResult(input({ mechanism }));
+    expect(criteria).toEqual([
+      { id: 'q1', measure: 'speed', unit: 'm/s', atMost: 2, value: null, passes: null, by: 'stepper' },
+    ]);
+    expect(findings).toContainEqual({
+      severity: 'warning',
+      code: 'criterion-not-evaluated',
+      text: 'Criterion q1 was not evaluated, and counts as failed: station 3 was not reached.',
+      of: ['q1'],
+    });
+    const idle = checkResult(input({ mechanism, stepper: null }));
+    expect(idle.criteria).toMatchObject([{ passes: null, by: null }]);
+    expect(idle.findings.map(({ text }) => text).join()).toContain('the mechanism was not run');
+  });
+
+  it('keeps to its schema with all that a criterion may carry', () => {
+    const mechanism = cratesMechanism();
+    const spanned = { from: '1', to: '2' };
+    mechanism.criteria = [
+      {
+        id: 'q1',
+        name: 'Brake',
+        measure: 'efficiency',
+        useful: ['friction'],
+        input: ['gravity'],
+        ...spanned,
+        atLeast: 0,
+      },
+      { id: 'q2', measure: 'heat', of: ['upper', 'wall'], atMost: 1 },
+      { id: 'q3', measure: 'claimedEfficiency', of: 'motor', value: 1.1 },
+    ];
+    const { criteria, ...rest } = checkResult(input({ mechanism }));
+    expect(criteria[0].parts).toHaveLength(3 + 1);
+    expect(v.safeParse(resultSchema, { criteria, ...rest }).issues).toBeUndefined();
   });
 
   it('says where a run stopped before its end', () => {

@@ -6,7 +6,10 @@ function result(changes: Partial<CheckResult>): CheckResult {
   const empty = { findings: [], stepper: null, auditor: null, handCheck: [], criteria: [] };
   return { format: 'joulewright-result/1', file: '', title: '', verdict: 'agrees', ...empty, ...changes };
 }
-const criterion = (passes: boolean | null): CheckResult['criteria'][0] => ({ id: 'q', value: 1, passes, by: null });
+const criterion = (passes: boolean | null): CheckResult['criteria'][0] => ({
+  ...{ id: 'q', measure: 'speed', unit: 'm/s', value: 1, by: null },
+  passes,
+});
 const error = { severity: 'error' as const, code: 'ledger-open', text: '', of: [] };
 
 describe('exitStatus', () => {
