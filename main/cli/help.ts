@@ -2,7 +2,7 @@ import type { Command } from './command.js';
 
 const statuses = `Exit status
   0  all criteria pass and the runs agree
-  1  a criterion fails
+  1  a criterion fails, or could not be evaluated
   2  the runs differ, a ledger does not close, or the run is unaudited
      (0 or 1 with --stepper-only)
   3  the file cannot be read or is wrong, or the command line is
