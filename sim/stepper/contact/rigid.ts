@@ -10,7 +10,8 @@ import { CORE } from './shapes.js';
 import { frameOf } from './soft-point.js';
 import { fillManifold, isClosedKey, NO_KEY, type Touch } from './touch.js';
 
-const SATURATED = 1 - 1e-9;
+/** Share of its bound at which friction has reached it: impulses of short steps are no more exact than this. */
+const SATURATED = 1 - 1e-6;
 const step = new TimeStep();
 
 /** Rates of a contact point on both bodies, along the normal and the tangent, with the velocities now in planck. */

@@ -3,7 +3,8 @@ import type { Friction } from '../element.js';
 import { partInner, type Scene } from '../scene.js';
 import { addWork, type Pair } from './pair.js';
 
-const SATURATED = 1 - 1e-9;
+/** Share of its bound at which friction has reached it: impulses of short steps are no more exact than this. */
+const SATURATED = 1 - 1e-6;
 
 /** Rolling resistance of a pair: a torque against the relative turn, at most lever arm × normal force. */
 export class RollingResistance implements Friction {

@@ -5,7 +5,8 @@ import { partInner, type Scene } from '../scene.js';
 import { addWork, type Pair } from './pair.js';
 import type { Touch } from './touch.js';
 
-const SATURATED = 1 - 1e-9;
+/** Share of its bound at which friction has reached it: impulses of short steps are no more exact than this. */
+const SATURATED = 1 - 1e-6;
 
 /**
  * A compliant contact point: along the normal a one-sided spring (explicit, at mid-step) and damper (implicit) that never

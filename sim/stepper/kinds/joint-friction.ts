@@ -7,7 +7,8 @@ import type { JointElement, JointImpulse } from './joint.js';
 /** Greatest friction impulse in half a step, by its length and the joint's own reaction impulse. */
 export type FrictionBound = (half: number, reaction: number) => number;
 
-const SATURATED = 1 - 1e-9;
+/** Share of its bound at which friction has reached it: impulses of short steps are no more exact than this. */
+const SATURATED = 1 - 1e-6;
 const reaction: JointImpulse = { px: 0, py: 0, momentA: 0, momentB: 0 };
 
 /** Coulomb friction of a pin (on its turn) or a slide (on its travel), bounded by a constant or by the reaction. */
