@@ -90,3 +90,9 @@ export function requireFree(scene: Scene, body: string, struckBy: string, normal
 /** Restitution of a pair at an approach speed: none below its rest speed. */
 export const restitutionAt = ({ restitution, restSpeed }: ContactPair, approach: number): number =>
   approach < restSpeed ? 0 : restitution;
+
+/** Whether two bodies have one speed after a blow. */
+export function staysWith(scene: Scene, a: string, b: string, row: number): boolean {
+  const [p, q] = [scene.heading(a, row), scene.heading(b, row)];
+  return Math.hypot(p.vx - q.vx, p.vy - q.vy) <= 1e-3 * Math.max(Math.hypot(p.vx, p.vy), Math.hypot(q.vx, q.vy));
+}

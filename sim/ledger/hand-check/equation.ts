@@ -4,7 +4,7 @@ import { endRate, kinetic, leftOf, type Mover, type Stage } from './stage.js';
 import { fraction, number, operator, root, sum, symbol, words, type Expression, type Token } from './tokens.js';
 
 /** Amounts below this share of the greatest are not written down. */
-const NIL = 1e-6;
+const NIL = 1e-5;
 
 /** How the letters of a stage are numbered. */
 interface Letters {

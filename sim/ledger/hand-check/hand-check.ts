@@ -12,7 +12,7 @@ import { Walk, type Route, type Speeds } from './walk.js';
 
 /**
  * The work–energy equation T₁ + V₁ + U = T₂ + V₂ of each body between each two consecutive stations, and from the first
- * to the last where each of those could be made: in symbols, in numbers, solved for the speed at the second.
+ * to the last where one equation goes through: in symbols, in numbers, solved for the speed at the second.
  *
  * It takes masses, geometry, springs, coefficients and restitutions from the document alone. The recording tells it where
  * a body was at the stations and at what happened between, what it touched, and whether it slid or rolled; no force,
@@ -29,7 +29,7 @@ export function handCheck(mechanism: Mechanism, recording: Recording): HandCheck
   const whole = mechanism.bodies
     .filter(({ id }) => checks.every(({ of, speed }) => of !== id || speed !== null))
     .map(({ id }) => hand.check(id, 0, stations.length - 1))
-    .filter(({ speed }) => speed !== null);
+    .filter(({ speed, equation }) => speed !== null && !equation.includes(';'));
   return [...checks, ...whole];
 }
 

@@ -27,7 +27,7 @@ export function goesStraight(scene: Scene, body: string, { from, to, rows }: Leg
 /** The course of bodies that move as one in a straight line, without turning. */
 export function lineCourse(scene: Scene, members: string[], leg: Leg, joints: (Pin | Slide)[]): Course {
   const starts = new Map(members.map((id) => [id, scene.pose(id, leg.from)]));
-  const [start, end] = [starts.get(members[0])!, scene.pose(members[0], leg.to)];
+  const [start, end] = [scene.pose(members[0], leg.from), scene.pose(members[0], leg.to)];
   const along = unit([end.x - start.x, end.y - start.y]);
   const length = Math.hypot(end.x - start.x, end.y - start.y);
   const mass = members.reduce((sum, id) => sum + scene.body(id).mass, 0);

@@ -62,7 +62,7 @@ function groundJoints(scene: Scene, members: readonly string[], leg: Leg): (Pin 
       if (!isGround || scene.tiesOf(joint.id).length > 0) {
         return refuse(`${member} is a link of a mechanism of several links (${joint.id}).`);
       }
-      return joint as Pin | Slide;
+      return joint;
     });
     if (joints.length > 1) refuse(`${joints.map(({ id }) => id).join(' and ')} share the load of ${member}.`);
     return joints;
@@ -75,7 +75,7 @@ function runsOnTrack(scene: Scene, body: string, { rows }: Leg): boolean {
   if (kind !== 'particle' && kind !== 'disc') return false;
   return scene.pairsOf(body).some((pair) => {
     const track = scene.mechanism.tracks.find(({ id }) => pair.between.includes(id));
-    return track !== undefined && track.surfaceSpeed === 0 && rows.some((row) => scene.touches(pair, row));
+    return track?.surfaceSpeed === 0 && rows.some((row) => scene.touches(pair, row));
   });
 }
 

@@ -80,7 +80,7 @@ function fractionText(over: Token[], under: Token[]): string {
 }
 
 const SUBSCRIPTS: Readonly<Record<string, string>> = {
-  ...Object.fromEntries([...'0123456789'].map((digit, i) => [digit, '₀₁₂₃₄₅₆₇₈₉'[i]])),
+  ...Object.fromEntries(Array.from('0123456789', (digit, i) => [digit, '₀₁₂₃₄₅₆₇₈₉'[i]])),
   '′': '′',
   '″': '″',
   '‴': '‴',
@@ -89,7 +89,7 @@ const SUBSCRIPTS: Readonly<Record<string, string>> = {
 
 function subscript(sub: string | undefined): string {
   if (sub === undefined) return '';
-  const characters = [...sub];
+  const characters = Array.from(sub);
   if (characters.every((character) => character in SUBSCRIPTS)) {
     return characters.map((character) => SUBSCRIPTS[character]).join('');
   }
@@ -97,5 +97,5 @@ function subscript(sub: string | undefined): string {
 }
 
 function superscript(power: number): string {
-  return [...String(power)].map((digit) => '⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(digit)]).join('');
+  return Array.from(String(power), (digit) => '⁰¹²³⁴⁵⁶⁷⁸⁹'[Number(digit)]).join('');
 }

@@ -1,8 +1,8 @@
 import { aboutPin, pinArm } from './pin-course.js';
-import { restitutionAt, requireFree, squareShare, strikeOn, type Strike } from './blow.js';
-import type { Term } from './cause.js';
+import { jointLossTerm, lossTerm, reboundLine } from './blow-terms.js';
+import { restitutionAt, requireFree, squareShare, staysWith, strikeOn, type Strike } from './blow.js';
 import { causesOf } from './causes/index.js';
-import { gravityTerm, gravityWork, massFactors, massShape } from './causes/gravity.js';
+import { gravityTerm, gravityWork } from './causes/gravity.js';
 import type { Course, Passage } from './course.js';
 import { quantity } from './figures.js';
 import { groupOf } from './group.js';
@@ -12,8 +12,8 @@ import { isHeld, passageOf } from './passage.js';
 import { refuse } from './refusal.js';
 import type { Scene } from './scene.js';
 import { leverAbout, placesOf } from './strike-normal.js';
-import { endRate, kinetic, leftOf, sameMover, type Mover, type Stage } from './stage.js';
-import { fraction, joined, number, operator, symbol, words, type Expression, type Token } from './tokens.js';
+import { endRate, leftOf, sameMover, type Mover, type Stage } from './stage.js';
+import { operator, symbol, words, type Expression } from './tokens.js';
 
 /** Marks of the speeds within a span. */
 const PRIMES = ['′', '″', '‴', '⁗'];
@@ -136,7 +136,7 @@ export class Walk {
     const causes = causesOf({ scene: this.scene, course, leg });
     const works = worksOver(course, causes, leftOf(stage));
     stage.terms.push(...causes.map((cause, i) => cause.term(works[i])));
-    this.tangent = course.rate(course.length).tangent as [number, number];
+    this.tangent = course.rate(course.length).tangent;
   }
 
   private moverOf({ kind, members, measure, rollingMass, joints }: Course): Mover {
@@ -313,100 +313,4 @@ const turnsIn = (list: readonly Happening[]): number =>
 function nextLeg(list: readonly Happening[], i: number): Leg | undefined {
   const next = list.slice(i + 1).find((happening) => happening.kind === 'leg');
   return next?.kind === 'leg' ? next.leg : undefined;
-}
-
-const half = (): Token => fraction([number('1')], [number('2')]);
-
-/** Whether two bodies have one speed after a blow. */
-function staysWith(scene: Scene, a: string, b: string, row: number): boolean {
-  const [p, q] = [scene.heading(a, row), scene.heading(b, row)];
-  return Math.hypot(p.vx - q.vx, p.vy - q.vy) <= 1e-3 * Math.max(Math.hypot(p.vx, p.vy), Math.hypot(q.vx, q.vy));
-}
-
-/** ½ m u² (1 − e²), or ½ I_O u² (1 − e²) about a pin: what a blow on something fixed takes. */
-function lossTerm(scene: Scene, of: string[], mover: Mover, u: number, e: number, { row }: Blow): Term {
-  const isPin = mover.kind === 'pin';
-  const name = isPin ? 'ω.u' : 'u';
-  const measure = isPin
-    ? [{ name: 'I_O', value: mover.measure, kind: 'inertia' as const, joins: 'last' as const, of: mover.members }]
-    : massFactors(scene, mover.members);
-  return {
-    key: `blow ${row}`,
-    family: 'blow',
-    value: -kinetic(mover, u) * (1 - e * e),
-    factors: [
-      ...measure,
-      { name, value: u, kind: isPin ? 'spin' : 'speed', joins: 'last' },
-      ...(e === 0 ? [] : [{ name: 'e', value: e, kind: 'ratio' as const, joins: 'last' as const, of }]),
-    ],
-    shape: (factor) => [
-      half(),
-      ...(isPin ? [factor('I_O')] : massShape(mover.members, factor)),
-      squared(factor(name)),
-      ...(e === 0 ? [] : [operator('('), number('1'), operator('−'), squared(factor('e')), operator(')')]),
-    ],
-  };
-}
-
-/** ½ m₁ m₂ / (m₁ + m₂) u²: what two bodies lose that go on as one. */
-function jointLossTerm(
-  scene: Scene,
-  bodies: [string, string],
-  of: string[],
-  u: number,
-  loss: number,
-  { row }: Blow,
-): Term {
-  return {
-    key: `blow ${row}`,
-    family: 'blow',
-    value: -loss,
-    factors: [...massFactors(scene, bodies), { name: 'u', value: u, kind: 'speed', joins: 'last', of }],
-    shape: (factor) => [
-      half(),
-      fraction(
-        bodies.flatMap((id) => [factor(`m:${id}`)]),
-        massShape(bodies, factor).slice(1, -1),
-      ),
-      squared(factor('u')),
-    ],
-  };
-}
-
-const squared = (token: Token): Token => (token.kind === 'symbol' ? { ...token, power: 2 } : token);
-
-/** v′ = (m₁ u₁ + m₂ u₂ − m₂ e (u₁ − u₂)) / (m₁ + m₂), of two bodies that strike each other square. */
-function reboundLine(
-  mark: string,
-  m: number,
-  n: number,
-  mine: number,
-  yours: number,
-  e: number,
-  rebound: number,
-): Expression {
-  const sign = Math.sign(mine || yours) || 1;
-  const [u1, u2] = [symbol('u', { sub: '1' }), symbol('u', { sub: '2' })];
-  const [m1, m2] = [symbol('m', { sub: '1' }), symbol('m', { sub: '2' })];
-  const bounce = [operator('−'), m2, symbol('e'), operator('('), u1, operator('−'), u2, operator(')')];
-  const over = [m1, u1, operator('+'), m2, u2, ...(e > 0 ? bounce : [])];
-  const values: [Token, Token][] = [
-    [m1, quantity(m, 'mass')],
-    [m2, quantity(n, 'mass')],
-    [u1, quantity(sign * mine, 'speed')],
-    [u2, quantity(sign * yours, 'speed')],
-    ...(e > 0 ? [[symbol('e'), quantity(e, 'ratio')] as [Token, Token]] : []),
-  ];
-  return [
-    symbol('v', { sub: mark }),
-    operator('='),
-    fraction(over, [m1, operator('+'), m2]),
-    operator('='),
-    quantity(sign * rebound, 'speed'),
-    words('with'),
-    ...joined(
-      values.map(([name, value]) => [name, operator('='), value]),
-      operator(','),
-    ),
-  ];
 }
