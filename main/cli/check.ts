@@ -24,7 +24,7 @@ export function checkCommand(engine: Engine): Command {
   return {
     name: 'check',
     usage: `  joulewright check FILE [--json] [--step S] [--stepper-only] [--out DIR]
-      runs the mechanism and prints its stations, the account between them, its criteria
+      runs the mechanism and prints its stations, the account between them, the same by hand, its criteria
       with their margins, and what was found
       --json          one JSON object on standard output instead, numbers in SI
       --step S        the stepper's step: "0.25 ms", or seconds; default: chosen from the file

@@ -22,3 +22,12 @@ export type {
 export { nudge, sensitivityOf } from './comparison/sensitivity.js';
 export type { Sensitivity } from './comparison/sensitivity.js';
 export { QUANTITIES } from './comparison/words.js';
+export {
+  handCheck,
+  plainText,
+  speedByHand,
+  type Expression,
+  type HandCheck,
+  type Operator,
+  type Token,
+} from './hand-check/index.js';

@@ -1,6 +1,6 @@
 import type { Problem } from '../core/problem.js';
 import { evaluateCriteria } from '../criteria/index.js';
-import { consecutiveLedgers, ledgerFindings } from '../ledger/index.js';
+import { consecutiveLedgers, handCheck, ledgerFindings } from '../ledger/index.js';
 import type { Ledger } from '../ledger/index.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { Finding, Recording, RunEnd } from '../recording/index.js';
@@ -46,7 +46,7 @@ export function checkResult(input: CheckInput): CheckResult {
     ],
     stepper: mechanism && stepper ? runResult(mechanism, stepper, ledgers) : null,
     auditor: null,
-    handCheck: [],
+    handCheck: mechanism && stepper ? handCheck(mechanism, stepper) : [],
     criteria: judged.criteria,
   });
 }

@@ -3,6 +3,7 @@ import type { CheckResult } from './result.js';
 import { accountsText } from './text/account-text.js';
 import { criteriaText } from './text/criteria-text.js';
 import { findingsText } from './text/findings-text.js';
+import { handText } from './text/hand-text.js';
 import { fit, spread } from './text/layout.js';
 import { lossesText } from './text/losses-text.js';
 import { time } from './text/quantities.js';
@@ -29,6 +30,7 @@ export function checkText(result: CheckResult, { width = 88, view = 'work' }: Te
     ...headText(result, columns),
     ...stationsText(result, columns),
     ...accountsText(result, view, columns),
+    ...handText(result, columns),
     ...lossesText(result, columns),
     ...criteriaText(result, columns),
     ...findingsText(result, columns),

@@ -1,4 +1,5 @@
 import * as v from 'valibot';
+import { handCheckSchema } from './hand-schema.js';
 
 const joules = (what: string) => v.pipe(v.number(), v.finite(), v.description(`${what} [J]`));
 const si = (what: string) => v.pipe(v.number(), v.finite(), v.description(what));
@@ -126,14 +127,6 @@ const criterion = v.strictObject({
   note: v.optional(v.string()),
 });
 
-const handCheck = v.strictObject({
-  from: id,
-  to: id,
-  of: id,
-  equation: v.string(),
-  speed: v.optional(si('[m/s]')),
-});
-
 /**
  * The result of a check, version 1, as one JSON object. All numbers are SI and finite. This schema is the source of the
  * types below and of the JSON Schema beside the examples.
@@ -147,7 +140,7 @@ export const resultSchema = v.pipe(
     findings: v.array(finding),
     stepper: v.nullable(solverRun),
     auditor: v.nullable(solverRun),
-    handCheck: v.array(handCheck),
+    handCheck: v.array(handCheckSchema),
     criteria: v.array(criterion),
   }),
   v.title('Joulewright result, version 1'),

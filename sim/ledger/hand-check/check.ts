@@ -29,6 +29,10 @@ export interface HandCheck {
 }
 
 /** The speed [m/s] that the hand checks give a body at a station; nothing where none does. */
-export function speedByHand(checks: readonly HandCheck[], body: string, station: string): number | null {
+export function speedByHand(
+  checks: readonly Pick<HandCheck, 'of' | 'to' | 'speed'>[],
+  body: string,
+  station: string,
+): number | null {
   return checks.find(({ of, to, speed }) => of === body && to === station && speed !== null)?.speed ?? null;
 }
