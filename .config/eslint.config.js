@@ -41,6 +41,7 @@ const houseTyped = {
     'error',
     { ignoreArrowShorthand: true, ignoreVoidReturningFunctions: true },
   ],
+  '@typescript-eslint/no-misused-spread': ['error', { allow: ['string'] }],
   '@typescript-eslint/unified-signatures': 'off',
   // Takes a class of a declaration file, such as Electron's, for another one of the same name.
   '@typescript-eslint/no-unsafe-class-instance-assignment': 'off',
