@@ -21,10 +21,8 @@ function longestApart({ of }: CriterionOf<'liftOff'>, view: RunView, { fromRow, 
   let longest = 0;
   for (let row = 0; row <= toRow; row++) {
     const time = view.time(row);
-    // The row after an impact is at the time of the one before, which said how the pair came there.
-    const isLater = row > 0 && time > view.time(row - 1);
     const cameTogether = isClosed(row) || partings.has(row);
-    if (isLater && since !== null && !cameTogether) longest = Math.max(longest, time - Math.max(since, start));
+    if (since !== null && !cameTogether) longest = Math.max(longest, time - Math.max(since, start));
     if (cameTogether || touches.has(row)) since = time;
   }
   if (since === null) return { reason: `${of.join(' and ')} never touched` };
