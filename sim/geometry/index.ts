@@ -11,3 +11,4 @@ export { bodyGap, freeDistance, partGap, placedParts, pointToPart, trackGap, typ
 export { motionLaw, type Motion } from './cam-laws.js';
 export { camMotion, type CamMotion } from './cam-motion.js';
 export { camOutline, camPoint, type CamPoint } from './cam-profile.js';
+export { footOnPiece } from './piece-foot.js';

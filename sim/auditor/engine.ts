@@ -1,0 +1,472 @@
+import type { Moment } from '../mechanism/kinds/load.js';
+import type { Mechanism } from '../mechanism/model.js';
+import type { RunEnd } from '../recording/recording.js';
+import { StationWatch } from '../recording/station-watch.js';
+import { assemble, type Assembly } from './assembly.js';
+import { findEvent } from './event-finder.js';
+import { Impacts } from './impacts.js';
+import { RunLog } from './run-log.js';
+import { Dop853 } from './method/dop853.js';
+import { Modes, STILL, type Decided } from './modes.js';
+import { StateMotion } from './motion.js';
+import { Projection } from './projection.js';
+import { Recorder } from './recorder.js';
+import { connectStores } from './stores.js';
+import type { ContactPoint } from './unilateral.js';
+import { watchList, type Watch } from './watch-list.js';
+
+export interface EngineOptions {
+  /** Relative tolerance of the integration. */
+  tolerance: number;
+  /** About how many rows over the whole run. */
+  rows: number;
+}
+
+/** Steps are held so short that nothing crosses more than this part of the mechanism, or turns more than this [rad]. */
+const TRAVEL = 0.2;
+const TURN = 0.5;
+const LEAST_STEP = 1e-14;
+const MOST_EVENTS = 200_000;
+/** A point this far on the wrong side is behind the surface, where nothing is solid. */
+const BEHIND = 1e-6;
+
+/** Integrates a mechanism event by event and records it. */
+export class Engine {
+  readonly recorder: Recorder;
+  end: RunEnd | null = null;
+  t = 0;
+  drift = 0;
+  private readonly assembly: Assembly;
+  private readonly y: Float64Array;
+  private readonly q: Float64Array;
+  private readonly v: Float64Array;
+  private readonly works: Float64Array;
+  private readonly scale: Float64Array;
+  private readonly method: Dop853;
+  private readonly modes: Modes;
+  private readonly impacts: Impacts;
+  private readonly projection: Projection;
+  private readonly motion: StateMotion;
+  private readonly stations: StationWatch;
+  private readonly log: RunLog;
+  private readonly moments: number[];
+  private readonly released = new Set<string>();
+  private h: number;
+  private nextRow = 0;
+  private events = 0;
+  private steps = 0;
+  private greatest = { speed: 1e-2, spin: 1, energy: 1e-3 };
+
+  constructor(
+    private readonly mechanism: Mechanism,
+    private readonly options: EngineOptions,
+  ) {
+    this.assembly = assemble(mechanism, (from, until) => this.isOn(from, until));
+    connectStores(this.assembly);
+    const { system, dynamics, numerical } = this.assembly;
+    const n = 3 * system.count;
+    this.y = new Float64Array(2 * n + system.ledgers.slots);
+    this.q = this.y.subarray(0, n);
+    this.v = this.y.subarray(n, 2 * n);
+    this.works = this.y.subarray(2 * n);
+    this.q.set(system.startPositions);
+    this.v.set(system.startVelocities);
+    this.scale = new Float64Array(this.y.length);
+    this.method = new Dop853((t, y, dy) => this.derivative(t, y, dy), this.y.length);
+    this.modes = new Modes(dynamics);
+    this.impacts = new Impacts(dynamics);
+    this.projection = new Projection(dynamics, numerical);
+    this.motion = new StateMotion(system.units, this.q, this.v);
+    this.stations = new StationWatch(mechanism, this.motion);
+    this.recorder = new Recorder(this.assembly);
+    this.log = new RunLog(this.assembly, this.recorder, this.stations);
+    this.moments = this.allMoments();
+    this.h = 1e-4 * this.duration();
+    this.begin();
+  }
+
+  private duration(): number {
+    return this.mechanism.run.atMost / this.assembly.system.units.time;
+  }
+
+  private seconds(): number {
+    return this.t * this.assembly.system.units.time;
+  }
+
+  private isOn(from: Moment | undefined, until: Moment | undefined): boolean {
+    return (!from || this.hasCome(from)) && !(until && this.hasCome(until));
+  }
+
+  private hasCome(moment: Moment): boolean {
+    if ('time' in moment) return this.seconds() >= moment.time * (1 - 1e-12) - 1e-15;
+    return this.stations.isReached(moment.station);
+  }
+
+  private allMoments(): number[] {
+    const { loads, drives, latches, run, tracks } = this.mechanism;
+    const { time } = this.assembly.system.units;
+    const of = (moment: Moment | undefined): number[] => (moment && 'time' in moment ? [moment.time] : []);
+    const seconds = [
+      ...this.stations.times(),
+      ...[...loads, ...drives].flatMap(({ from, until }) => [...of(from), ...of(until)]),
+      ...drives.flatMap(({ law }) =>
+        law.kind === 'effortCurve' && law.over === 'time' ? law.curve.map(([x]) => x) : [],
+      ),
+      ...drives.flatMap(({ law }) =>
+        law.kind === 'speed' && typeof law.value !== 'number' ? law.value.map(([x]) => x) : [],
+      ),
+      ...tracks.flatMap(({ surfaceSpeed }) => (typeof surfaceSpeed === 'number' ? [] : surfaceSpeed.map(([x]) => x))),
+      ...latches.flatMap(({ releasesAt }) => ('time' in releasesAt ? [releasesAt.time] : [])),
+      ...('time' in run.until ? [run.until.time] : []),
+      run.atMost,
+    ];
+    return seconds.map((moment) => moment / time).sort((a, b) => a - b);
+  }
+
+  private derivative(t: number, y: Float64Array, dy: Float64Array): void {
+    const n = this.q.length;
+    const q = y.subarray(0, n);
+    const v = y.subarray(n, 2 * n);
+    const { dynamics } = this.assembly;
+    dynamics.accelerate(t, q, v);
+    dy.set(v, 0);
+    dy.set(dynamics.acceleration, n);
+    dynamics.powers(dy.subarray(2 * n), v);
+  }
+
+  private begin(): void {
+    const { dynamics, points, soft } = this.assembly;
+    for (const point of points) {
+      point.locate(this.q);
+      point.isArmed = point.gap >= -BEHIND;
+      point.mark(this.q, this.v);
+    }
+    for (const point of soft) if (point.point.isValid && point.point.gap < 0) point.isPressed = true;
+    // What slides at the start must not be taken to stick while velocities are made to fit the joints.
+    for (const friction of dynamics.parts.frictions) friction.sliding = 1;
+    this.projection.apply(0, this.q, this.v, this.works);
+    this.works.fill(0);
+    this.settle({});
+    dynamics.accelerate(0, this.q, this.v);
+    this.record();
+    this.log.reach(
+      this.stations.reach(({ when }) => when.kind === 'start' || (when.kind === 'time' && when.time <= 0), 0),
+      this.seconds(),
+      () => this.record(),
+    );
+    this.strike(false);
+    this.settle({});
+    this.log.modes(this.seconds(), () => this.record());
+    this.noticeRest();
+    this.checkEnd();
+  }
+
+  /** One step of the integration, up to the first event in it. */
+  step(): void {
+    this.steps += 1;
+    this.measure();
+    const watches = this.watches();
+    const next = this.moments.find((moment) => moment > this.t * (1 + 1e-14) + 1e-300) ?? Infinity;
+    this.method.restart(this.t, this.y);
+    const taken = this.tryStep(Math.min(this.h, this.longest(), next - this.t));
+    if (taken === null) return;
+    const event = findEvent(
+      this.method,
+      watches,
+      this.y.length / 1,
+      taken,
+      this.scale,
+      (t, y) => this.look(t, y),
+      this.t,
+    );
+    const length = event ? event.taken : taken;
+    this.recordBetween(length);
+    const isExact = !event && Math.abs(this.t + taken - next) <= 1e-12 * Math.max(1, next);
+    if (length > 0) this.y.set(this.method.end);
+    this.t = isExact ? next : this.t + length;
+    this.log.moved();
+    if (this.y.some((value) => !Number.isFinite(value))) {
+      this.finish('nonFinite');
+      return;
+    }
+    const { drift } = this.projection.apply(this.t, this.q, this.v, this.works);
+    this.drift = Math.max(this.drift, drift);
+    for (const point of this.assembly.points) this.arm(point);
+    this.assembly.dynamics.accelerate(this.t, this.q, this.v);
+    this.handle(event?.watches ?? [], isExact);
+    this.stations.settle(this.motion.at(this.q, this.v));
+    this.checkEnd();
+  }
+
+  /** Brings a copy of a state through the dynamics, for watches to read. */
+  private look(t: number, y: Float64Array): { q: Float64Array; v: Float64Array } {
+    const n = this.q.length;
+    const q = y.subarray(0, n);
+    const v = y.subarray(n, 2 * n);
+    this.assembly.dynamics.accelerate(t, q, v);
+    return { q, v };
+  }
+
+  private tryStep(first: number): number | null {
+    let h = first;
+    for (;;) {
+      const error = this.method.try(h, this.scale);
+      if (error <= 1) {
+        this.method.finish();
+        this.h = h * Math.min(4, error > 0 ? 0.9 * error ** (-1 / 8) : 4);
+        return h;
+      }
+      h *= Number.isFinite(error) ? Math.max(0.2, 0.9 * error ** (-1 / 8)) : 0.2;
+      if (h < LEAST_STEP * Math.max(1, this.t)) {
+        this.finish('stepTooSmall');
+        return null;
+      }
+    }
+  }
+
+  private longest(): number {
+    let speed = 0;
+    let spin = 0;
+    const { count } = this.assembly.system;
+    const { acceleration } = this.assembly.dynamics;
+    let push = 0;
+    for (let i = 0; i < count; i += 1) {
+      speed = Math.max(speed, Math.hypot(this.v[3 * i], this.v[3 * i + 1]));
+      spin = Math.max(spin, Math.abs(this.v[3 * i + 2]));
+      push = Math.max(push, Math.hypot(acceleration[3 * i], acceleration[3 * i + 1]));
+    }
+    // Travel s = v h + a h²/2, solved for h.
+    const travel = (2 * TRAVEL) / (speed + Math.sqrt(speed * speed + 2 * push * TRAVEL) + 1e-300);
+    return Math.min(travel, TURN / (spin + 1e-300), this.duration() / 20);
+  }
+
+  /** Error scales by the greatest speed, spin and energy so far, so that they suit every size. */
+  private measure(): void {
+    const { mass, count } = this.assembly.system;
+    let kinetic = 0;
+    for (let i = 0; i < count; i += 1) {
+      this.greatest.speed = Math.max(this.greatest.speed, Math.hypot(this.v[3 * i], this.v[3 * i + 1]));
+      this.greatest.spin = Math.max(this.greatest.spin, Math.abs(this.v[3 * i + 2]));
+      for (let k = 3 * i; k < 3 * i + 3; k += 1) kinetic += 0.5 * mass[k] * this.v[k] ** 2;
+    }
+    this.greatest.energy = Math.max(this.greatest.energy, kinetic);
+    const n = this.q.length;
+    const { tolerance } = this.options;
+    for (let i = 0; i < n; i += 1) {
+      this.scale[i] = tolerance;
+      this.scale[n + i] = tolerance * (i % 3 === 2 ? this.greatest.spin : this.greatest.speed);
+    }
+    this.scale.fill(tolerance * this.greatest.energy, 2 * n);
+  }
+
+  private watches(): Watch[] {
+    const reach = this.mechanism.bodies.map((_, i) => this.speedBound(i));
+    const h = Math.min(this.h, this.longest());
+    const latches = this.mechanism.latches.flatMap(({ id, joint: of, releasesAt }) => {
+      const joint = this.assembly.joints.find((candidate) => candidate.id === of);
+      if (this.released.has(id) || !joint || !('force' in releasesAt)) return [];
+      const limit = releasesAt.force / this.log.forceUnit;
+      return [{ id, left: () => limit - joint.reactionSize() }];
+    });
+    const isNear = (point: ContactPoint): boolean => {
+      point.locate(this.q);
+      const travel = 2 * h * ((reach[point.bodyA] ?? 0) + (reach[point.bodyB] ?? 0)) + 2 * h * h * 2 + 1e-3;
+      return !(Math.abs(point.gap) > Math.max(travel, 0.05));
+    };
+    return watchList(this.assembly, this.stations, this.motion.at(this.q, this.v), latches, isNear);
+  }
+
+  private speedBound(i: number): number {
+    return Math.hypot(this.v[3 * i], this.v[3 * i + 1]) + Math.abs(this.v[3 * i + 2]) * 0.5;
+  }
+
+  private arm(point: ContactPoint): void {
+    point.locate(this.q);
+    if (point.isClosed) return;
+    if (!point.isValid) point.isArmed = true;
+    else if (!point.isArmed) point.isArmed = point.gap >= 0;
+    else if (point.gap < -BEHIND && !point.pair.compliant) point.isArmed = false;
+    point.mark(this.q, this.v);
+  }
+
+  private handle(met: readonly Watch[], isExact: boolean): void {
+    let decided: Decided | null = null;
+    for (const { happening } of met) {
+      this.events += 1;
+      const next = this.happen(happening);
+      if (next) decided = { ...(decided ?? {}), ...next };
+    }
+    if (this.events > MOST_EVENTS) {
+      this.finish('eventsAccumulate');
+      return;
+    }
+    if (isExact) {
+      this.log.reach(
+        this.stations.reach(
+          ({ when }) => when.kind === 'time' && this.seconds() >= when.time * (1 - 1e-12),
+          this.seconds(),
+        ),
+        this.seconds(),
+        () => this.record(),
+      );
+      this.releaseDue();
+      decided ??= {};
+    }
+    if (!decided) return;
+    const struck = this.strike(true);
+    this.settle(struck ? {} : decided);
+    this.log.modes(this.seconds(), () => this.record());
+    this.releaseDue();
+    this.noticeRest();
+    this.h = Math.max(this.h, 1e-6 * this.duration());
+  }
+
+  /** Does what an event says; returns what it has decided for the modes, or null where they stay. */
+  private happen(happening: Watch['happening']): Decided | null {
+    switch (happening.kind) {
+      case 'closes':
+        return {};
+      case 'opens':
+        return { opened: happening.what };
+      case 'breaksLoose':
+        return { loose: { what: happening.what, sliding: happening.sliding() } };
+      case 'stops':
+      case 'restart':
+        return {};
+      case 'presses':
+        this.log.press(happening.what, this.q, this.v, this.works, this.seconds(), () => this.record());
+        return {};
+      case 'letsGo':
+        this.log.letGo(happening.what, this.works);
+        return {};
+      case 'clears':
+        happening.what.hasLetGo = false;
+        return null;
+      case 'releases':
+        this.release(happening.latch);
+        return {};
+      case 'station': {
+        const id = this.stations.passed(happening.index, this.motion.at(this.q, this.v), this.seconds());
+        if (id !== null) this.log.reach([id], this.seconds(), () => this.record());
+        return id === null ? null : {};
+      }
+    }
+  }
+
+  /** Impacts due now; returns whether there were any. */
+  private strike(counts: boolean): boolean {
+    let any = false;
+    for (let round = 0; round < 20; round += 1) {
+      const before = this.stationValues();
+      let row = -1;
+      const outcome = this.impacts.resolve(this.t, this.q, this.v, this.works, (strikes) => {
+        row = this.record();
+        if (counts) this.log.struck(strikes, row, this.seconds());
+      });
+      if (outcome === 'noSolution') {
+        this.log.noSolution(this.seconds());
+        this.finish('noSolution');
+        return true;
+      }
+      if (!outcome) return any;
+      any = true;
+      if (outcome.cut < 1) this.log.restitutionCut(outcome, this.seconds());
+      this.log.moved();
+      this.turned(before, row);
+      this.settle({});
+      this.assembly.dynamics.accelerate(this.t, this.q, this.v);
+      this.record();
+    }
+    return any;
+  }
+
+  private stationValues(): Map<number, number> {
+    const motion = this.motion.at(this.q, this.v);
+    return new Map(this.stations.smooth().map((index) => [index, this.stations.signedValue(index, motion)]));
+  }
+
+  private turned(before: ReadonlyMap<number, number>, row: number): void {
+    const motion = this.motion.at(this.q, this.v);
+    for (const [index, value] of before) {
+      if (!(value > 0) || this.stations.signedValue(index, motion) > -this.stations.blurOf(index)) continue;
+      const id = this.stations.passed(index, motion, this.seconds());
+      if (id !== null) this.log.station(id, row, this.seconds());
+    }
+  }
+
+  private settle(decided: Decided): void {
+    if (this.end !== null) return;
+    if (this.modes.settle(this.t, this.q, this.v, decided)) return;
+    this.log.noSolution(this.seconds());
+    this.finish('noSolution');
+  }
+
+  private release(id: string): void {
+    const latch = this.mechanism.latches.find((candidate) => candidate.id === id);
+    const joint = this.assembly.joints.find((candidate) => candidate.id === latch?.joint);
+    if (!joint || this.released.has(id)) return;
+    this.released.add(id);
+    this.log.release(id, this.seconds(), this.record());
+    joint.isReleased = true;
+  }
+
+  private releaseDue(): void {
+    for (const { id, releasesAt } of this.mechanism.latches) {
+      if (this.released.has(id) || 'force' in releasesAt || !this.hasCome(releasesAt)) continue;
+      this.release(id);
+      this.settle({});
+    }
+  }
+
+  private noticeRest(): void {
+    if (this.stations.resting().length === 0) return;
+    const { acceleration } = this.assembly.dynamics;
+    const rests = (i: number): boolean =>
+      [0, 1, 2].every((k) => Math.abs(this.v[3 * i + k]) <= 10 * STILL && Math.abs(acceleration[3 * i + k]) <= 1e-8);
+    const { ids } = this.assembly.system;
+    const isResting = (of: string): boolean => (of === 'all' ? ids.every((_, i) => rests(i)) : rests(ids.indexOf(of)));
+    const reached = this.stations.reach(({ when }) => when.kind === 'rests' && isResting(when.of), this.seconds());
+    this.log.reach(reached, this.seconds(), () => this.record());
+  }
+
+  private recordBetween(length: number): void {
+    const interval = this.duration() / this.options.rows;
+    while (this.nextRow <= this.t) this.nextRow += interval;
+    const state = new Float64Array(this.y.length);
+    while (this.nextRow < this.t + length * (1 - 1e-9)) {
+      this.method.interpolate((this.nextRow - this.t) / length, state);
+      const { q, v } = this.look(this.nextRow, state);
+      this.recorder.row(this.nextRow, q, v, state.subarray(2 * this.q.length));
+      this.nextRow += interval;
+    }
+  }
+
+  private record(): number {
+    return this.log.record(() => this.recorder.row(this.t, this.q, this.v, this.works));
+  }
+
+  private checkEnd(): void {
+    const { until, atMost } = this.mechanism.run;
+    const time = this.seconds() * (1 + 1e-12);
+    const isDone = 'station' in until ? this.stations.isReached(until.station) : time >= until.time;
+    if (isDone || time >= atMost) this.finish('reachedEnd');
+  }
+
+  /** Ends the run and records its last state. */
+  finish(end: RunEnd): void {
+    if (this.end !== null) return;
+    this.end = end;
+    this.log.reach(
+      this.stations.reach(({ when }) => when.kind === 'end', this.seconds()),
+      this.seconds(),
+      () => this.record(),
+    );
+    this.record();
+    this.recorder.writer.finish(end, {
+      steps: this.steps,
+      evaluations: this.method.evaluations,
+      events: this.events,
+      drift: this.drift,
+    });
+  }
+}

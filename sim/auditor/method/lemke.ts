@@ -1,0 +1,86 @@
+/**
+ * Linear complementarity problem w = M z + q, w ≥ 0, z ≥ 0, w·z = 0, by Lemke's method of complementary pivoting
+ * (Cottle, Pang & Stone, *The Linear Complementarity Problem*, 1992, algorithm 4.4.5), with ties broken by the largest
+ * pivot.
+ *
+ * @param m n × n, row by row
+ * @returns z, or null where the method ends on a secondary ray (no solution found)
+ */
+export function lemke(m: Float64Array, q: Float64Array, n: number): Float64Array | null {
+  const z = new Float64Array(n);
+  let least = 0;
+  for (let i = 1; i < n; i += 1) if (q[i] < q[least]) least = i;
+  if (n === 0 || q[least] >= 0) return z;
+  const width = 2 * n + 2;
+  const table = tableau(m, q, n, width);
+  const basis = Int32Array.from({ length: n }, (_, i) => i);
+  const artificial = 2 * n;
+  pivotOn(table, n, width, least, artificial);
+  let leaving = basis[least];
+  basis[least] = artificial;
+  for (let step = 0; step < 60 * (n + 1); step += 1) {
+    const entering = leaving < n ? leaving + n : leaving - n;
+    const row = ratioTest(table, n, width, entering, basis, artificial);
+    if (row < 0) return null;
+    pivotOn(table, n, width, row, entering);
+    leaving = basis[row];
+    basis[row] = entering;
+    if (leaving === artificial) return readOut(table, n, width, basis, z);
+  }
+  return null;
+}
+
+/** Columns: w, z, the artificial variable, the right-hand side. */
+function tableau(m: Float64Array, q: Float64Array, n: number, width: number): Float64Array {
+  const table = new Float64Array(n * width);
+  for (let i = 0; i < n; i += 1) {
+    table[i * width + i] = 1;
+    for (let j = 0; j < n; j += 1) table[i * width + n + j] = -m[i * n + j];
+    table[i * width + 2 * n] = -1;
+    table[i * width + 2 * n + 1] = q[i];
+  }
+  return table;
+}
+
+function pivotOn(table: Float64Array, n: number, width: number, row: number, column: number): void {
+  const pivot = table[row * width + column];
+  for (let j = 0; j < width; j += 1) table[row * width + j] /= pivot;
+  for (let i = 0; i < n; i += 1) {
+    const multiplier = table[i * width + column];
+    if (i === row || multiplier === 0) continue;
+    for (let j = 0; j < width; j += 1) table[i * width + j] -= multiplier * table[row * width + j];
+  }
+}
+
+const NIL = 1e-12;
+
+function ratioTest(
+  table: Float64Array,
+  n: number,
+  width: number,
+  column: number,
+  basis: Int32Array,
+  artificial: number,
+): number {
+  let best = Infinity;
+  let row = -1;
+  for (let i = 0; i < n; i += 1) {
+    const pivot = table[i * width + column];
+    if (pivot <= NIL) continue;
+    const ratio = table[i * width + width - 1] / pivot;
+    const tie = Math.abs(ratio - best) <= 1e-12 * (1 + Math.abs(best));
+    if (!tie && ratio > best) continue;
+    if (tie && basis[row] === artificial) continue;
+    if (tie && basis[i] !== artificial && pivot <= table[row * width + column]) continue;
+    best = tie ? Math.min(best, ratio) : ratio;
+    row = i;
+  }
+  return row;
+}
+
+function readOut(table: Float64Array, n: number, width: number, basis: Int32Array, z: Float64Array): Float64Array {
+  for (let i = 0; i < n; i += 1) {
+    if (basis[i] >= n && basis[i] < 2 * n) z[basis[i] - n] = Math.max(0, table[i * width + width - 1]);
+  }
+  return z;
+}
