@@ -38,8 +38,10 @@ export class ContactProblem {
   constructor(
     private readonly system: System,
     joints: readonly Bilateral[],
+    /** Rows held besides the joints' own. */
+    held: readonly Row[] = [],
   ) {
-    this.jointRows = joints.filter(({ isReleased }) => !isReleased).flatMap(({ rows }) => rows);
+    this.jointRows = [...joints.filter(({ isReleased }) => !isReleased).flatMap(({ rows }) => rows), ...held];
     const n = this.jointRows.length;
     const matrix = new Float64Array(n * n);
     for (let i = 0; i < n; i += 1) {

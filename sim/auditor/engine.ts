@@ -1,13 +1,13 @@
 import type { Moment } from '../mechanism/kinds/load.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { RunEnd } from '../recording/recording.js';
-import { StationWatch } from '../recording/station-watch.js';
+import { AT_REST, restScales, StationWatch } from '../recording/station-watch.js';
 import { assemble, type Assembly } from './assembly.js';
 import { findEvent } from './event-finder.js';
 import { Impacts } from './impacts.js';
 import { RunLog } from './run-log.js';
 import { Dop853 } from './method/dop853.js';
-import { Modes, STILL, type Decided } from './modes.js';
+import { Modes, type Decided } from './modes.js';
 import { StateMotion } from './motion.js';
 import { Projection } from './projection.js';
 import { Recorder } from './recorder.js';
@@ -25,6 +25,8 @@ export interface EngineOptions {
 /** Steps are held so short that nothing crosses more than this part of the mechanism, or turns more than this [rad]. */
 const TRAVEL = 0.2;
 const TURN = 0.5;
+/** A turning body counts by a point this far out. */
+const REACH = 0.1;
 const LEAST_STEP = 1e-14;
 const MOST_EVENTS = 200_000;
 /** A point this far on the wrong side is behind the surface, where nothing is solid. */
@@ -273,7 +275,12 @@ export class Engine {
       const travel = 2 * h * ((reach[point.bodyA] ?? 0) + (reach[point.bodyB] ?? 0)) + 2 * h * h * 2 + 1e-3;
       return !(Math.abs(point.gap) > Math.max(travel, 0.05));
     };
-    return watchList(this.assembly, this.stations, this.motion.at(this.q, this.v), latches, isNear);
+    const list = watchList(this.assembly, this.stations, this.motion.at(this.q, this.v), latches, isNear);
+    for (const of of this.stations.resting()) {
+      const value = (_q: Float64Array, v: Float64Array): number => this.unrest(of, v) - AT_REST;
+      list.push({ value, tolerance: 0, happening: { kind: 'rests' } });
+    }
+    return list;
   }
 
   private speedBound(i: number): number {
@@ -332,6 +339,7 @@ export class Engine {
         return { loose: { what: happening.what, sliding: happening.sliding() } };
       case 'stops':
       case 'restart':
+      case 'rests':
         return {};
       case 'presses':
         this.log.press(happening.what, this.q, this.v, this.works, this.seconds(), () => this.record());
@@ -420,13 +428,23 @@ export class Engine {
 
   private noticeRest(): void {
     if (this.stations.resting().length === 0) return;
-    const { acceleration } = this.assembly.dynamics;
-    const rests = (i: number): boolean =>
-      [0, 1, 2].every((k) => Math.abs(this.v[3 * i + k]) <= 10 * STILL && Math.abs(acceleration[3 * i + k]) <= 1e-8);
-    const { ids } = this.assembly.system;
-    const isResting = (of: string): boolean => (of === 'all' ? ids.every((_, i) => rests(i)) : rests(ids.indexOf(of)));
-    const reached = this.stations.reach(({ when }) => when.kind === 'rests' && isResting(when.of), this.seconds());
+    const reached = this.stations.reach(
+      ({ when }) => when.kind === 'rests' && this.unrest(when.of, this.v) <= AT_REST,
+      this.seconds(),
+    );
     this.log.reach(reached, this.seconds(), () => this.record());
+  }
+
+  /** How far a body (or 'all') is from rest: speed and acceleration on the scales of the mechanism. */
+  private unrest(of: string, v: Float64Array): number {
+    const { ids, units } = this.assembly.system;
+    const { acceleration } = this.assembly.dynamics;
+    const scales = restScales(this.mechanism);
+    const bodies = of === 'all' ? ids.map((_, i) => i) : [ids.indexOf(of)];
+    const size = (x: Float64Array, i: number): number => Math.hypot(x[3 * i], x[3 * i + 1], x[3 * i + 2] * REACH);
+    const speed = Math.max(...bodies.map((i) => size(v, i))) * (units.length / units.time);
+    const change = Math.max(...bodies.map((i) => size(acceleration, i))) * (units.length / units.time ** 2);
+    return speed / scales.speed + change / scales.acceleration;
   }
 
   private recordBetween(length: number): void {

@@ -37,8 +37,13 @@ export class Modes {
       const outcome = this.round(t, q, v, closed);
       if (outcome === 'noSolution') return false;
       if (outcome === 'settled') break;
+      if (outcome === 'rebound') {
+        // What a joint's or a roller's friction could not hold may have made a contact slip that need not.
+        for (const unilateral of closed) unilateral.isClosed = true;
+        dynamics.groups = groupsOf(closed);
+        this.classifyGroups(v, decided);
+      }
     }
-    for (const unilateral of closed) if (unilateral instanceof ContactPoint) unilateral.mark(q, v);
     return true;
   }
 
@@ -46,14 +51,17 @@ export class Modes {
   private candidates(t: number, q: Float64Array, v: Float64Array, opened: Unilateral | undefined): Unilateral[] {
     const closed: Unilateral[] = [];
     for (const unilateral of this.dynamics.parts.unilaterals) {
-      unilateral.locate(q);
       const wasClosed = unilateral.isClosed;
+      // One that was closed goes on by the law of where it is now: the next piece of track, the next face.
+      if (wasClosed && unilateral instanceof ContactPoint) unilateral.mark(q, v);
+      else unilateral.locate(q);
       unilateral.isClosed = false;
       const isNear = unilateral.isValid && Math.abs(unilateral.gap) <= TOUCHING;
       const isArmed = !(unilateral instanceof ContactPoint) || unilateral.isArmed;
       if (unilateral !== opened && isNear && isArmed) {
         unilateral.aim(q, v, t);
         unilateral.isClosed = unilateral.rate(v) <= STILL;
+        if (unilateral.isClosed && !wasClosed && unilateral instanceof ContactPoint) unilateral.mark(q, v);
       }
       if (unilateral.isClosed) closed.push(unilateral);
       else if (wasClosed || isNear) unilateral.slack = Math.max(0, -unilateral.gap) + 1e-13;
@@ -62,14 +70,18 @@ export class Modes {
     return closed;
   }
 
-  private classify(t: number, q: Float64Array, v: Float64Array, { loose }: Decided): void {
-    const { dynamics } = this;
-    dynamics.update(t, q, v);
-    for (const group of dynamics.groups) {
+  private classifyGroups(v: Float64Array, { loose }: Decided): void {
+    for (const group of this.dynamics.groups) {
       const known =
         loose && 'members' in loose.what && loose.what.members.some((member) => group.members.includes(member));
       group.sliding = known ? loose.sliding : signOf(group.members[0].slip(v));
     }
+  }
+
+  private classify(t: number, q: Float64Array, v: Float64Array, { loose }: Decided): void {
+    const { dynamics } = this;
+    dynamics.update(t, q, v);
+    this.classifyGroups(v, { loose });
     for (const friction of dynamics.parts.frictions) {
       friction.sliding = loose?.what === friction ? loose.sliding : signOf(friction.row.rate(v));
       if (friction.sliding !== 0) friction.lambda = -friction.sliding * friction.bound();
@@ -86,18 +98,21 @@ export class Modes {
     q: Float64Array,
     v: Float64Array,
     closed: readonly Unilateral[],
-  ): 'settled' | 'again' | 'noSolution' {
+  ): 'settled' | 'again' | 'rebound' | 'noSolution' {
     const { dynamics } = this;
     const { system, parts } = dynamics;
     for (const unilateral of closed) unilateral.isClosed = true;
     dynamics.groups = dynamics.groups.map((group) => ({ ...group, members: group.members }));
     const sticking = this.tangentials(closed);
     const free = dynamics.applied(t, q, v);
-    const problem = new ContactProblem(system, parts.joints);
+    // Friction that rides on a reaction not known yet is taken to hold, and checked afterwards.
+    const held = parts.frictions.filter((friction) => holdsUnknown(friction)).map(({ row }) => row);
+    const problem = new ContactProblem(system, parts.joints, held);
     const joints = parts.joints.filter(({ isReleased }) => !isReleased);
-    const targets = Float64Array.from(
-      joints.flatMap(({ rows, changes }) => rows.map(({ gamma }, k) => changes[k] - gamma)),
-    );
+    const targets = Float64Array.from([
+      ...joints.flatMap(({ rows, changes }) => rows.map(({ gamma }, k) => changes[k] - gamma)),
+      ...held.map(({ gamma }) => -gamma),
+    ]);
     problem.holdJoints(free, targets);
     const groupOf = (unilateral: Unilateral): FrictionGroup | undefined =>
       dynamics.groups.find(({ members }) => members.includes(unilateral as ContactPoint));
@@ -127,7 +142,7 @@ export class Modes {
   }
 
   /** Friction that rides on a joint's reaction has its bound only now: once more where it changed the verdict. */
-  private checkBounds(t: number, q: Float64Array, v: Float64Array): 'settled' | 'again' {
+  private checkBounds(t: number, q: Float64Array, v: Float64Array): 'settled' | 'rebound' {
     const { dynamics } = this;
     dynamics.accelerate(t, q, v);
     let again = false;
@@ -138,7 +153,7 @@ export class Modes {
       friction.lambda = -friction.sliding * friction.bound();
       again = true;
     }
-    return again ? 'again' : 'settled';
+    return again ? 'rebound' : 'settled';
   }
 
   private tangentials(closed: readonly Unilateral[]): Sticking[] {
@@ -157,9 +172,8 @@ export class Modes {
       });
     }
     for (const friction of dynamics.parts.frictions) {
-      if (!friction.isActive || friction.sliding !== 0) continue;
-      // Its bound may be unknown yet (it rides on a reaction); then it is taken to hold, and checked afterwards.
-      const constant = friction.bound() || 1e6;
+      if (!friction.isActive || friction.sliding !== 0 || holdsUnknown(friction)) continue;
+      const constant = friction.bound();
       list.push({
         what: friction,
         drops: false,
@@ -188,6 +202,9 @@ interface Sticking {
   drops: boolean;
   change: number;
 }
+
+const holdsUnknown = (friction: DryFriction): boolean =>
+  friction.isActive && friction.sliding === 0 && friction.bound() === 0;
 
 const signOf = (slip: number): 1 | -1 | 0 => (Math.abs(slip) <= STILL ? 0 : slip > 0 ? 1 : -1);
 

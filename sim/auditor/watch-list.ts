@@ -17,6 +17,7 @@ export type Happening =
   | { kind: 'letsGo'; what: SoftPoint }
   | { kind: 'clears'; what: SoftPoint }
   | { kind: 'restart' }
+  | { kind: 'rests' }
   | { kind: 'releases'; latch: string }
   | { kind: 'station'; index: number };
 

@@ -36,7 +36,7 @@ export class StationWatch {
   private readonly reachedTimes = new Map<string, number>();
 
   constructor(mechanism: Mechanism, start: Motion) {
-    const speed = Math.sqrt(Math.hypot(...mechanism.gravity) * mechanism.extent) || greatestSpeed(mechanism) || 1;
+    const { speed } = restScales(mechanism);
     this.watched = mechanism.stations.map((station) => watch(station, mechanism, start, speed));
     this.settle(start);
   }
@@ -132,6 +132,16 @@ export class StationWatch {
 
 export const isSamePair = (a: readonly [string, string], b: readonly [string, string]): boolean =>
   (a[0] === b[0] && a[1] === b[1]) || (a[0] === b[1] && a[1] === b[0]);
+
+/** Share of the scales below which something is at rest. */
+export const AT_REST = 1e-6;
+
+/** Speed [m/s] and acceleration [m/s²] that coming to rest is measured by: a fall through the mechanism's extent. */
+export function restScales(mechanism: Mechanism): { speed: number; acceleration: number } {
+  const g = Math.hypot(...mechanism.gravity);
+  const speed = Math.sqrt(g * mechanism.extent) || greatestSpeed(mechanism) || 1;
+  return { speed, acceleration: g || speed ** 2 / (mechanism.extent || 1) };
+}
 
 function greatestSpeed({ bodies }: Mechanism): number {
   return Math.max(0, ...bodies.map(({ velocity }) => Math.hypot(...velocity)));

@@ -1,8 +1,7 @@
+import { AT_REST, restScales } from '../recording/station-watch.js';
 import type { Scene } from './scene.js';
 import type { State } from './state.js';
 
-/** Slower than this is at rest [engine speed], if it also stays so. */
-const STILL = 1e-6;
 /** Steps over which a body must keep still: one at a turning point does not. */
 const STEPS = 4;
 
@@ -15,21 +14,44 @@ export interface Resting {
 /** Tells when bodies are at rest: velocity and acceleration nil over a few steps, counted from the first still one. */
 export class RestWatch {
   private readonly since: (Resting | null)[];
+  private readonly speed: number;
+  private readonly acceleration: number;
+  private readonly before: { vx: Float64Array; vy: Float64Array; w: Float64Array };
+  private lastTime = 0;
 
   constructor(
     private readonly scene: Scene,
     private readonly step: number,
   ) {
-    this.since = scene.ids.map(() => null);
+    const { mechanism, scale, ids } = scene;
+    const scales = restScales(mechanism);
+    this.since = ids.map(() => null);
+    this.speed = scales.speed / scale.speed;
+    this.acceleration = scales.acceleration / scale.acceleration;
+    const column = (): Float64Array => new Float64Array(ids.length);
+    this.before = { vx: column(), vy: column(), w: column() };
   }
 
   /** Takes the state at a time [engine time]; `record` gives the row of it, which may turn out to be where rest began. */
   look(state: State, time: number, record: () => number): void {
+    const { before, scene } = this;
+    const elapsed = time - this.lastTime;
     for (let i = 0; i < this.since.length; i += 1) {
-      const speed = Math.hypot(state.vx[i], state.vy[i]) + Math.abs(state.w[i]) * this.scene.reach[i];
-      if (speed > STILL) this.since[i] = null;
+      const reach = scene.reach[i];
+      const speed = Math.hypot(state.vx[i], state.vy[i], state.w[i] * reach);
+      const change = Math.hypot(
+        state.vx[i] - before.vx[i],
+        state.vy[i] - before.vy[i],
+        (state.w[i] - before.w[i]) * reach,
+      );
+      const acceleration = elapsed > 0 ? change / elapsed : Infinity;
+      if (speed / this.speed + acceleration / this.acceleration > AT_REST) this.since[i] = null;
       else this.since[i] ??= { time, row: record() };
     }
+    before.vx.set(state.vx);
+    before.vy.set(state.vy);
+    before.w.set(state.w);
+    this.lastTime = time;
   }
 
   /** Since when a body (or 'all') has been at rest, if it has been long enough to tell. */
