@@ -10,8 +10,6 @@ export interface Factor {
   joins: 'sum' | 'first' | 'last';
   /** The element it belongs to. */
   of?: string[];
-  /** Subscript of its own, in place of the term's number. */
-  sub?: string;
 }
 
 /** One amount of the work–energy equation [J], positive where it adds to the motion. */

@@ -4,6 +4,7 @@ import { bodyAtRow, bodyOf, type Recording } from '../../recording/index.js';
 import { stationRows, stationSpans, type StationRow } from '../stations.js';
 import type { HandCheck } from './check.js';
 import { writeStage } from './equation.js';
+import { pinArm } from './pin-course.js';
 import { NoHandSum, refuse } from './refusal.js';
 import { Scene } from './scene.js';
 import { leftOf, type Mover, type Stage } from './stage.js';
@@ -29,7 +30,7 @@ export function handCheck(mechanism: Mechanism, recording: Recording): HandCheck
   const whole = mechanism.bodies
     .filter(({ id }) => checks.every(({ of, speed }) => of !== id || speed !== null))
     .map(({ id }) => hand.check(id, 0, stations.length - 1))
-    .filter(({ speed, equation }) => speed !== null && !equation.includes(';'));
+    .filter(({ speed, equation }) => speed !== null && equation.includes('½') && !equation.includes(';'));
   return [...checks, ...whole];
 }
 
@@ -98,8 +99,11 @@ class Hand {
   }
 
   private asDrawn(body: string): Speeds {
-    const { velocity, spin } = this.scene.body(body);
-    return { speed: Math.hypot(...velocity), spin: Math.abs(spin) };
+    const { velocity, spin, inertia } = this.scene.body(body);
+    const speed = Math.hypot(...velocity);
+    const pin = this.scene.jointsOf(body, 0).find((joint) => joint.kind === 'pin');
+    const swings = inertia === 0 && pin?.kind === 'pin';
+    return { speed, spin: swings ? speed / pinArm(this.scene, body, pin) : Math.abs(spin) };
   }
 
   /** Speed of another body at a row within a route, followed from the same station. */
@@ -161,18 +165,23 @@ function written(
 function answer(
   { recording }: Scene,
   body: string,
-  { row }: StationRow,
+  { id, row }: StationRow,
   { speed, spin }: Speeds,
   stages: readonly Stage[],
 ): Pick<HandCheck, 'speed' | 'spin' | 'left' | 'difference' | 'spinDifference'> {
+  if (!Number.isFinite(speed + spin))
+    refuse(`Where ${body} is before station ${id} is not a finite place in this run.`);
   const last = stages.at(-1);
+  const isPin = last?.end.kind === 'pin';
   const spec = bodyOf(recording, body);
   const state = spec && bodyAtRow(recording, spec, row);
+  const difference = state && speed - Math.hypot(state.vx, state.vy);
+  const spinDifference = state && isPin && spec.inertia > 0 ? spin - Math.abs(state.spin) : undefined;
   return {
     speed,
-    ...(last?.end.kind === 'pin' ? { spin } : {}),
+    ...(isPin ? { spin } : {}),
     ...(last?.rests === undefined ? {} : { left: leftOf(last) }),
-    ...(state ? { difference: speed - Math.hypot(state.vx, state.vy) } : {}),
-    ...(state && last?.end.kind === 'pin' ? { spinDifference: spin - Math.abs(state.spin) } : {}),
+    ...(Number.isFinite(difference) ? { difference } : {}),
+    ...(Number.isFinite(spinDifference) ? { spinDifference } : {}),
   };
 }

@@ -33,6 +33,8 @@ interface Cut {
 
 /** Below this share of the greatest speed a body counts as standing, for telling where it turns back. */
 const STANDING = 1e-4;
+/** A body that could not have gone further than this share of the extent has not moved. */
+const NOWHERE = 1e-6;
 
 /** Legs and blows of a span of rows; cut at every event of the run, and where the body turns back. */
 export function happenings(scene: Scene, body: string, fromRow: number, toRow: number): Happening[] {
@@ -85,7 +87,10 @@ function turningPoints(scene: Scene, body: string, fromRow: number, toRow: numbe
     return p.vx * q.vx + p.vy * q.vy + (inertia / mass) * p.spin * q.spin;
   };
   const speeds = headings.map((_, i) => Math.sqrt(product(i, i)));
-  const least = STANDING * speeds.reduce((most, speed) => Math.max(most, speed), 0);
+  const time = scene.time(toRow) - scene.time(fromRow);
+  const greatest = speeds.reduce((most, speed) => Math.max(most, speed), 0);
+  if (greatest * time <= NOWHERE * scene.mechanism.extent) return [];
+  const least = STANDING * greatest;
   const cuts: Cut[] = [];
   let last = -1;
   for (let i = 0; i < headings.length; i += 1) {

@@ -79,8 +79,17 @@ function rubsOf(scene: Scene, members: string[], leg: Leg, along: Vec, joints: (
     if (!isStill(scene, other, leg)) refuse(`${body} rubs on ${other}, which moves too.`);
   }
   const carriers = new Set([...rough.map(({ body }) => body), ...joints.flatMap(({ between }) => between)]);
-  if (new Set(rough.map(({ body }) => body)).size < rough.length) {
-    refuse(`${list(rough.map(({ body, pair }) => otherOf(pair, body)))} share the load of ${rough[0].body}.`);
+  for (const body of members) {
+    const supports = [
+      ...outer
+        .filter((each) => each.body === body && carries(scene, each.pair, leg, along))
+        .map(({ pair }) => otherOf(pair, body)),
+      ...joints.filter(({ between }) => between.includes(body)).map(({ id }) => id),
+    ];
+    const rubs =
+      rough.some((each) => each.body === body) ||
+      joints.some((joint) => joint.between.includes(body) && joint.friction?.kind === 'coefficient');
+    if (supports.length > 1 && rubs) refuse(`${list(supports)} share the load of ${body}.`);
   }
   const fixed = new Set([...carriers].filter((id) => members.includes(id)));
   const guides = joints.flatMap((joint): { id: string; body: string; coefficient: number }[] => {
@@ -105,6 +114,12 @@ function rubsOf(scene: Scene, members: string[], leg: Leg, along: Vec, joints: (
     normal: () => left(along),
   }));
   return [...guideRubs, ...pairRubs];
+}
+
+/** Whether a contact bears a load across the way, rather than against it. */
+function carries(scene: Scene, pair: ContactPair, leg: Leg, along: Vec): boolean {
+  const row = leg.rows.find((each) => scene.touches(pair, each)) ?? leg.rows[0];
+  return Math.abs(dot(scene.normal(pair, row), along)) < 0.5;
 }
 
 export const list = (ids: string[]): string => [...new Set(ids)].join(' and ');

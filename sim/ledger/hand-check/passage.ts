@@ -1,3 +1,4 @@
+import type { ContactPair } from '../../mechanism/kinds/contact.js';
 import type { Pin, Slide } from '../../mechanism/kinds/joint.js';
 import type { Passage } from './course.js';
 import { groupOf, isStill } from './group.js';
@@ -46,7 +47,12 @@ export function isHeld(scene: Scene, body: string, leg: Leg): boolean {
 }
 
 function isTouching(scene: Scene, body: string, { rows }: Leg): boolean {
-  return scene.pairsOf(body).some((pair) => rows.some((row) => scene.touches(pair, row)));
+  return scene.pairsOf(body).some((pair) => isLasting(scene, pair, rows));
+}
+
+/** A pair that touches in more than the rows beside a blow. */
+function isLasting(scene: Scene, pair: ContactPair, rows: readonly number[]): boolean {
+  return rows.filter((row) => scene.touches(pair, row)).length > Math.min(2, rows.length / 2);
 }
 
 function refuseTouching(scene: Scene, body: string, { rows }: Leg): void {
@@ -75,7 +81,7 @@ function runsOnTrack(scene: Scene, body: string, { rows }: Leg): boolean {
   if (kind !== 'particle' && kind !== 'disc') return false;
   return scene.pairsOf(body).some((pair) => {
     const track = scene.mechanism.tracks.find(({ id }) => pair.between.includes(id));
-    return track?.surfaceSpeed === 0 && rows.some((row) => scene.touches(pair, row));
+    return track?.surfaceSpeed === 0 && isLasting(scene, pair, rows);
   });
 }
 

@@ -1,4 +1,4 @@
-import { add, norm, rotate, scale, subtract, type Vec } from '../../core/vec.js';
+import { add, cross, dot, norm, rotate, scale, subtract, type Vec } from '../../core/vec.js';
 import type { Pin } from '../../mechanism/kinds/joint.js';
 import type { Course } from './course.js';
 import type { Leg } from './happenings.js';
@@ -7,7 +7,7 @@ import type { Scene } from './scene.js';
 /** The course of a body about a fixed pin: q is the angle turned, M = I + m r² about the pin. */
 export function pinCourse(scene: Scene, body: string, leg: Leg, pin: Pin): Course {
   const start = scene.pose(body, leg.from);
-  const turn = scene.pose(body, leg.to).angle - start.angle;
+  const turn = turnOver(scene, body, leg, pin);
   const sense = turn < 0 ? -1 : 1;
   const arm = subtract([start.x, start.y], pin.at);
   const at = (q: number): Vec => rotate(arm, sense * q);
@@ -20,7 +20,7 @@ export function pinCourse(scene: Scene, body: string, leg: Leg, pin: Pin): Cours
     pose: (id, q) => {
       if (id !== body) return scene.pose(id, leg.from);
       const [x, y] = add(pin.at, at(q));
-      return { x, y, angle: start.angle + sense * q };
+      return { x, y, angle: isPoint(scene, body) ? start.angle : start.angle + sense * q };
     },
     rate: (q) => {
       const [x, y] = at(q);
@@ -30,6 +30,19 @@ export function pinCourse(scene: Scene, body: string, leg: Leg, pin: Pin): Cours
     rubs: [],
     joints: [pin],
   };
+}
+
+/** A point mass has no angle of its own: it swings as on a massless link. */
+const isPoint = (scene: Scene, body: string): boolean => scene.body(body).inertia === 0;
+
+/** Angle turned about the pin over a leg, turns counted [rad]. */
+function turnOver(scene: Scene, body: string, leg: Leg, pin: Pin): number {
+  const [start, end] = [scene.pose(body, leg.from), scene.pose(body, leg.to)];
+  if (!isPoint(scene, body)) return end.angle - start.angle;
+  const arms = [start, ...leg.rows.map((row) => scene.poseAtRow(body, row)), end].map(({ x, y }) =>
+    subtract([x, y], pin.at),
+  );
+  return arms.slice(1).reduce((sum, arm, i) => sum + Math.atan2(cross(arms[i], arm), dot(arms[i], arm)), 0);
 }
 
 /** Moment of inertia about a pin, by Steiner's rule [kg m²]. */

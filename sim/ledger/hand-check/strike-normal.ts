@@ -6,6 +6,8 @@ import type { Scene } from './scene.js';
 
 /** Nearer than this to an edge's end, of its length, a touch is at a corner. */
 const CORNER = 1e-3;
+/** A touch is on an edge within this share of the extent, beside the radius of a rounded bar. */
+const TOUCH = 1e-3;
 
 /** Where a pair touched in a blow [m], as the events tell it. */
 export function placesOf({ recording }: Scene, { between }: ContactPair, row: number): Vec[] {
@@ -39,18 +41,38 @@ function discNormal(scene: Scene, { between }: ContactPair, row: number, at: Vec
   return unit(subtract(at, [x, y]));
 }
 
-/** The normal of the nearest edge that does not have the touch at its end. */
+/** The outward normal of the face that is struck inside its edge, or of two faces that lie on each other. */
 function faceNormal(scene: Scene, { between }: ContactPair, row: number, at: Vec): Vec | undefined {
-  const faces = between
-    .flatMap((id) => edgesOf(scene, id, row))
-    .flatMap(([a, b]) => {
+  const slack = TOUCH * scene.mechanism.extent;
+  const [first, second] = between.map((id) => facesAt(edgesOf(scene, id, row), at, slack));
+  const inner = [...first, ...second].find(({ isInner }) => isInner);
+  if (inner) return inner.normal;
+  return first.find(({ normal }) => second.some((face) => dot(normal, face.normal) < -1 + CORNER * CORNER))?.normal;
+}
+
+interface Face {
+  normal: Vec;
+  /** The touch is not at its end. */
+  isInner: boolean;
+}
+
+/** The edges that a touch lies on, the nearest first. */
+function facesAt(edges: [Vec, Vec][], at: Vec, slack: number): Face[] {
+  return edges
+    .map(([a, b]) => {
       const edge = subtract(b, a);
       const along = dot(subtract(at, a), edge) / dot(edge, edge);
-      if (!(along > CORNER && along < 1 - CORNER)) return [];
-      const normal = left(unit(edge));
-      return [{ normal, off: Math.abs(dot(subtract(at, a), normal)) }];
-    });
-  return faces.sort((a, b) => a.off - b.off)[0]?.normal;
+      const normal = left(unit(subtract(a, b)));
+      const isInner = along > CORNER && along < 1 - CORNER;
+      return {
+        normal,
+        isInner,
+        off: Math.abs(dot(subtract(at, a), normal)),
+        isOn: along > -CORNER && along < 1 + CORNER,
+      };
+    })
+    .filter(({ off, isOn }) => isOn && off <= slack)
+    .sort((p, q) => p.off - q.off);
 }
 
 function edgesOf(scene: Scene, id: string, row: number): [Vec, Vec][] {

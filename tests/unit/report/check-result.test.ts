@@ -60,8 +60,13 @@ describe('checkResult', () => {
     expect(result.stepper?.step).toBe(1e-3);
   });
 
+  it('has a hand check of each body between each two stations', () => {
+    const found = result.handCheck.map(({ of, from, to }) => `${of} ${from} ${to}`);
+    expect(found).toEqual(['upper 1 2', 'lower 1 2']);
+  });
+
   it('is unaudited, and says so', () => {
-    expect(result).toMatchObject({ verdict: 'unaudited', auditor: null, handCheck: [] });
+    expect(result).toMatchObject({ verdict: 'unaudited', auditor: null });
     expect(result.findings.at(-1)).toMatchObject({ code: 'unaudited' });
   });
 
