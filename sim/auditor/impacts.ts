@@ -1,6 +1,6 @@
 import { ContactProblem } from './contact-problem.js';
 import type { Dynamics, FrictionGroup } from './dynamics.js';
-import { groupsOf, STILL, TOUCHING } from './modes.js';
+import { groupsOf, isDouble, STILL, TOUCHING } from './modes.js';
 import type { Row } from './row.js';
 import { ContactPoint, type Unilateral } from './unilateral.js';
 
@@ -70,13 +70,15 @@ export class Impacts {
   private touching(t: number, q: Float64Array, v: Float64Array): Unilateral[] {
     const { parts } = this.dynamics;
     this.dynamics.update(t, q, v);
-    return parts.unilaterals.filter((unilateral) => {
+    const found: Unilateral[] = [];
+    for (const unilateral of parts.unilaterals) {
       unilateral.locate(q);
-      if (!unilateral.isValid || Math.abs(unilateral.gap) > TOUCHING) return false;
-      if (unilateral instanceof ContactPoint && !unilateral.isArmed) return false;
+      if (!unilateral.isValid || Math.abs(unilateral.gap) > TOUCHING) continue;
+      if (unilateral instanceof ContactPoint && !unilateral.isArmed) continue;
       unilateral.aim(q, v, t);
-      return true;
-    });
+      if (!isDouble(unilateral, found)) found.push(unilateral);
+    }
+    return found;
   }
 
   private solve(

@@ -63,6 +63,7 @@ export class Modes {
         unilateral.isClosed = unilateral.rate(v) <= STILL;
         if (unilateral.isClosed && !wasClosed && unilateral instanceof ContactPoint) unilateral.mark(q, v);
       }
+      if (unilateral.isClosed && isDouble(unilateral, closed)) unilateral.isClosed = false;
       if (unilateral.isClosed) closed.push(unilateral);
       else if (wasClosed || isNear) unilateral.slack = Math.max(0, -unilateral.gap) + 1e-13;
       unilateral.lambda = 0;
@@ -201,6 +202,18 @@ interface Sticking {
   /** Its kinetic coefficient differs (or it must be mixed into the normals), so that the problem is solved again. */
   drops: boolean;
   change: number;
+}
+
+/** Two corners that meet corner to corner are each on the other's face: one point is enough. */
+export function isDouble(one: Unilateral, others: readonly Unilateral[]): boolean {
+  if (!(one instanceof ContactPoint)) return false;
+  return others.some(
+    (other) =>
+      other instanceof ContactPoint &&
+      other.pair === one.pair &&
+      Math.hypot(other.x - one.x, other.y - one.y) <= 10 * TOUCHING &&
+      Math.abs(other.nx * one.ny - other.ny * one.nx) <= 1e-6,
+  );
 }
 
 const holdsUnknown = (friction: DryFriction): boolean =>

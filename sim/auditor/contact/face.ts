@@ -12,6 +12,8 @@ export interface Faces {
 /** Distances closer than this are a tie; ways that lead into a face by less than this lie on it. */
 const TIE = 1e-9;
 const INTO = 1e-6;
+/** Slower than this along a face is no leaving of it. */
+const STILL = 1e-9;
 
 interface Edge {
   x: number;
@@ -219,18 +221,34 @@ export class RoundOnFace extends ContactPoint {
     this.aimTangent(q, v, across / away);
   }
 
-  mark(_q: Float64Array, _v: Float64Array): void {
+  mark(q: Float64Array, v: Float64Array): void {
     if (!this.isClosed || this.inside > TIE) return;
     const count = this.edges.length;
     if (this.feature >= 0) {
+      const edge = this.edges[this.feature];
+      const isStart = this.along < 0.5 * edge.length;
+      const leaves = (isStart ? -1 : 1) * this.alongRate(edge, q, v) > STILL;
+      if (!leaves) return;
       // Off the end of a face: about its corner, where a round goes on and a bare point does not.
-      const corner = this.along < 0.5 * this.edges[this.feature].length ? this.feature : (this.feature + 1) % count;
-      this.feature = -1 - corner;
+      this.feature = -1 - (isStart ? this.feature : (this.feature + 1) % count);
       this.isValid = this.radii > 0;
-    } else {
-      const corner = -1 - this.feature;
-      this.feature = this.over[0] < this.over[1] ? (corner + count - 1) % count : corner;
+      return;
     }
+    const corner = -1 - this.feature;
+    const before = (corner + count - 1) % count;
+    if (this.over[0] <= TIE && this.alongRate(this.edges[before], q, v) < -STILL) this.feature = before;
+    else if (this.over[1] <= TIE && this.alongRate(this.edges[corner], q, v) > STILL) this.feature = corner;
+  }
+
+  /** Rate at which the round moves along a face, seen from the faces' body. */
+  private alongRate({ nx, ny }: Edge, q: Float64Array, v: Float64Array): number {
+    const a = 3 * this.bodyA;
+    placeMark(this.roundMark, q, v, this.centre);
+    const [c, s] = [Math.cos(q[a + 2]), Math.sin(q[a + 2])];
+    const [wx, wy] = [c * nx - s * ny, s * nx + c * ny];
+    const ux = this.centre.vx - (v[a] - v[a + 2] * (this.centre.y - q[a + 1]));
+    const uy = this.centre.vy - (v[a + 1] + v[a + 2] * (this.centre.x - q[a]));
+    return -wy * ux + wx * uy;
   }
 
   seam(): number {

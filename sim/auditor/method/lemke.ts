@@ -1,12 +1,36 @@
+/** How far below zero w may be, relative to the greatest entry of q. */
+const ENOUGH = 1e-9;
+/** Sizes of the perturbations of q that are tried where ties led the pivoting astray. */
+const PERTURBATIONS = [0, 1e-12, 1e-10, 1e-8];
+
 /**
  * Linear complementarity problem w = M z + q, w ≥ 0, z ≥ 0, w·z = 0, by Lemke's method of complementary pivoting
- * (Cottle, Pang & Stone, *The Linear Complementarity Problem*, 1992, algorithm 4.4.5), with ties broken by the largest
- * pivot.
+ * (Cottle, Pang & Stone, *The Linear Complementarity Problem*, 1992, algorithm 4.4.5). Every answer is checked; where ties
+ * of a degenerate problem gave a wrong one, q is perturbed by a little (ibid. 4.9).
  *
  * @param m n × n, row by row
  * @returns z, or null where the method ends on a secondary ray (no solution found)
  */
 export function lemke(m: Float64Array, q: Float64Array, n: number): Float64Array | null {
+  const size = q.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
+  for (const perturbation of PERTURBATIONS) {
+    const moved = q.map((value, i) => value + perturbation * size * (1 + ((i * 7) % 11) / 11));
+    const z = pivoting(m, moved, n);
+    if (z && isSolution(m, q, z, n, Math.max(ENOUGH, 10 * perturbation) * size)) return z;
+  }
+  return null;
+}
+
+function isSolution(m: Float64Array, q: Float64Array, z: Float64Array, n: number, enough: number): boolean {
+  for (let i = 0; i < n; i += 1) {
+    let w = q[i];
+    for (let j = 0; j < n; j += 1) w += m[i * n + j] * z[j];
+    if (w < -enough || (z[i] > enough && w > enough * 1e3)) return false;
+  }
+  return true;
+}
+
+function pivoting(m: Float64Array, q: Float64Array, n: number): Float64Array | null {
   const z = new Float64Array(n);
   let least = 0;
   for (let i = 1; i < n; i += 1) if (q[i] < q[least]) least = i;
