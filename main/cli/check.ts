@@ -1,30 +1,18 @@
-import type { Mechanism } from '../../sim/mechanism/model.js';
-import type { Finding, Recording } from '../../sim/recording/index.js';
-import { checkResult, checkText, exitStatus, type CheckInput } from '../../sim/report/index.js';
-import type { StepperOptions, StepperRun } from '../../sim/stepper/index.js';
+import { checkResult, checkText, exitStatus } from '../../sim/report/index.js';
 import type { Command, OptionValues } from './command.js';
-import { Progress } from './progress.js';
 import { problemLine, readFile } from './read-file.js';
+import { runBoth, type Solvers } from './run-both.js';
 import { status } from './status.js';
 import { checkStep, readStep } from './step.js';
 import type { Terminal } from './terminal.js';
 import { writeFiles } from './write-files.js';
 
-/** The solver that a check runs. */
-export interface Engine {
-  unsupported(mechanism: Mechanism): Finding[];
-  startRun(mechanism: Mechanism, options: StepperOptions): StepperRun;
-}
-
-/** Between two lines of progress [ms]. */
-const slice = 100;
-
 /** `joulewright check FILE`: runs a mechanism and gives its account. */
-export function checkCommand(engine: Engine): Command {
+export function checkCommand(solvers: Solvers): Command {
   return {
     name: 'check',
     usage: `  joulewright check FILE [--json] [--step S] [--stepper-only] [--out DIR]
-      runs the mechanism and prints its stations, the account between them, the same by hand, its criteria
+      runs the mechanism on both solvers and prints its stations, the account between them, the same by hand, its criteria
       with their margins, and what was found
       --json          one JSON object on standard output instead, numbers in SI
       --step S        the stepper's step: "0.25 ms", or seconds; default: chosen from the file
@@ -36,16 +24,20 @@ export function checkCommand(engine: Engine): Command {
       'stepper-only': { type: 'boolean' },
       out: { type: 'string' },
     },
-    run: (file, options, terminal) => check(engine, file, options, terminal),
+    run: (file, options, terminal) => check(solvers, file, options, terminal),
   };
 }
 
-async function check(engine: Engine, file: string, options: OptionValues, terminal: Terminal) {
+async function check(solvers: Solvers, file: string, options: OptionValues, terminal: Terminal) {
   const step = typeof options.step === 'string' ? readStep(options.step) : undefined;
   const { document, mechanism, problems } = await readFile(file, terminal);
   const title = typeof document?.title === 'string' ? document.title : '';
   const given = { file, title, mechanism, problems };
-  const result = checkResult({ ...given, ...runWhereSimulated(engine, mechanism, { step }, terminal) });
+  const stepperOnly = options['stepper-only'] === true;
+  if (mechanism !== null && step !== undefined) checkStep(step, mechanism.run.atMost);
+  const asked = stepperOnly ? { ...solvers, auditor: null } : solvers;
+  const ran = mechanism === null ? { stepper: null } : runBoth(asked, mechanism, { step }, terminal);
+  const result = checkResult({ ...given, ...ran });
   const text = checkText(result, { width: terminal.width });
   if (mechanism === null) terminal.err(problems.map(problemLine).join(''));
   const json = `${JSON.stringify(result, null, 2)}\n`;
@@ -55,34 +47,10 @@ async function check(engine: Engine, file: string, options: OptionValues, termin
     const failure = await writeFiles(options.out, { 'result.json': json, 'report.txt': text });
     if (failure !== null) return notWritten(failure, terminal);
   }
-  return exitStatus(result, { stepperOnly: options['stepper-only'] === true });
+  return exitStatus(result, { stepperOnly });
 }
 
 function notWritten(failure: string, terminal: Terminal) {
   terminal.err(`${failure}\n`);
   return status.internalError;
-}
-
-/** The stepper's run, or the findings that name what it does not simulate. */
-function runWhereSimulated(
-  engine: Engine,
-  mechanism: Mechanism | null,
-  options: StepperOptions,
-  terminal: Terminal,
-): Pick<CheckInput, 'stepper' | 'findings'> {
-  if (mechanism === null) return { stepper: null };
-  if (options.step !== undefined) checkStep(options.step, mechanism.run.atMost);
-  const findings = engine.unsupported(mechanism);
-  const isRefused = findings.some((finding) => finding.severity === 'error');
-  return { findings, stepper: isRefused ? null : runToEnd(engine.startRun(mechanism, options), terminal) };
-}
-
-function runToEnd(run: StepperRun, terminal: Terminal): Recording {
-  const progress = new Progress(terminal);
-  while (!run.done) {
-    run.advance(slice);
-    progress.show(run.time, run.duration);
-  }
-  progress.clear();
-  return run.recording();
 }

@@ -4,13 +4,18 @@ import type { Terminal } from './terminal.js';
 export class Progress {
   private shown = false;
 
-  constructor(private readonly terminal: Terminal) {}
+  /** @param label what is running */
+  constructor(
+    private readonly terminal: Terminal,
+    private readonly label = '',
+  ) {}
 
   /** @param time reached [s] @param duration of the run [s] */
   show(time: number, duration: number): void {
     if (!this.terminal.watched) return;
     const percent = Math.min(100, Math.floor((100 * time) / duration));
-    this.terminal.err(`\r${percent.toString().padStart(3)} %  ${time.toFixed(3)} s of ${duration.toFixed(3)} s`);
+    const line = `${percent.toString().padStart(3)} %  ${time.toFixed(3)} s of ${duration.toFixed(3)} s  ${this.label}`;
+    this.terminal.err(`\r${line.trimEnd()}`);
     this.shown = true;
   }
 

@@ -6,7 +6,7 @@ import { commonSpans, commonStations, oneSidedStations, type OneSided } from './
 import { offDocument, type OffDocument } from './comparison/document-check.js';
 import type { Role, SpanComparison, StationComparison } from './comparison/figures.js';
 import { partingOf, type Parting } from './comparison/parting.js';
-import { remediesFor, type Remedy } from './comparison/remedies.js';
+import { impactsTogether, remediesFor, type Remedy, type Together } from './comparison/remedies.js';
 import { scalesOf, wholeTurnover, type Compared } from './comparison/scales.js';
 import {
   nothingCompared,
@@ -44,8 +44,15 @@ export interface Comparison {
   parting: Parting | null;
   /** What a run had otherwise than the document. */
   off: OffDocument[];
+  /** The first instant at which several pairs strike at once. */
+  together: Together | null;
   remedies: Remedy[];
   findings: Finding[];
+}
+
+/** Whether it is worth running the mechanism from a start a hair away: the runs part for no known reason, or may. */
+export function mayBeSensitive({ off, parting, oneSided, together }: Comparison): boolean {
+  return off.length === 0 && (parting !== null || oneSided.length > 0 || together !== null);
 }
 
 export interface ComparisonOptions {
@@ -86,8 +93,9 @@ export function compareRuns(
   );
   const oneSided = oneSidedStations(stepper, auditor).filter((station) => isTelling(compared, station));
   const books = { stepper: booksOf(mechanism, stepper), auditor: booksOf(mechanism, auditor) };
-  const excess = books.stepper.numerical / NUMERICAL_LIMIT;
-  const remedies = off.length === 0 ? remediesFor(compared, common, parting, excess) : [];
+  const together = impactsTogether(compared);
+  const found = { numerical: books.stepper.numerical / NUMERICAL_LIMIT, together };
+  const remedies = off.length === 0 ? remediesFor(compared, common, parting, found) : [];
   const isDifferent = parting !== null || off.length > 0 || oneSided.length > 0 || !Object.values(books).every(isSound);
   const isWhole = stepper.end === 'reachedEnd' && auditor.end === 'reachedEnd' && common.length > 0;
   return {
@@ -100,6 +108,7 @@ export function compareRuns(
     numerical: { stepper: books.stepper.numerical, auditor: books.auditor.numerical },
     parting,
     off,
+    together,
     remedies,
     findings: [
       ...(parting ? partingFindings(parting, common.find(({ id }) => id === parting.station)?.auditor.time ?? 0) : []),

@@ -44,7 +44,7 @@ export function ledgerFindings(recording: Recording, ledgers: readonly Ledger[],
   return [
     ...recording.findings,
     ...ledgers.flatMap((ledger) => ledger.findings),
-    ...ledgers.filter((ledger) => !closes(ledger)).map(openFinding),
+    ...ledgers.filter((ledger) => !closes(ledger)).map((ledger) => openFinding(ledger, recording)),
     ...ledgers.flatMap((ledger) => numericalFindings(ledger, run, recording)),
   ];
 }
@@ -55,9 +55,9 @@ function runTurnover(recording: Recording, system: readonly string[]): number {
   return bookLedger(recording, whole, system, { places: false }).turnover;
 }
 
-function openFinding({ from, to, unbooked, turnover }: Ledger): Finding {
+function openFinding({ from, to, unbooked, turnover }: Ledger, { solver }: Recording): Finding {
   const text =
-    `The account from station ${from} to ${to} does not close: ${figure(unbooked)} J of ${figure(turnover)} J turned ` +
+    `The ${solver}’s account from station ${from} to ${to} does not close: ${figure(unbooked)} J of ${figure(turnover)} J turned ` +
     'over are unbooked. No account explains them, so no figure of this account can be relied on.';
   return { severity: 'error', code: 'ledger-open', text, of: [from, to] };
 }

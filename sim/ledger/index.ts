@@ -9,7 +9,7 @@ export { bookLedger, kineticEnergy } from './book.js';
 export { consecutiveLedgers, stationRows, stationSpans } from './stations.js';
 export { entryKind } from './kind.js';
 export { ACCOUNT_NAMES, CAUSE_NAMES, lineLabel, ofLabel } from './names.js';
-export { AGREEMENT, compareRuns } from './comparison.js';
+export { AGREEMENT, compareRuns, mayBeSensitive } from './comparison.js';
 export type { Comparison, ComparisonOptions, Verdict } from './comparison.js';
 export type {
   AccountFigure,

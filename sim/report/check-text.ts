@@ -1,6 +1,7 @@
 import type { AccountView } from '../ledger/index.js';
 import type { CheckResult } from './result.js';
 import { accountsText } from './text/account-text.js';
+import { comparisonText } from './text/comparison-text.js';
 import { criteriaText } from './text/criteria-text.js';
 import { findingsText } from './text/findings-text.js';
 import { handText } from './text/hand-text.js';
@@ -21,8 +22,8 @@ export interface TextOptions {
 }
 
 /**
- * A result for a person at a terminal: stations, the account between each two, where it was lost, criteria, findings,
- * and the verdict last, where the eye ends. Plain characters without colour or escape codes.
+ * A result for a person at a terminal: stations, the account between each two, the same by hand, where it was lost,
+ * criteria, findings, and the verdict last, where the eye ends. Plain characters without colour or escape codes.
  */
 export function checkText(result: CheckResult, { width = 88, view = 'work' }: TextOptions = {}): string {
   const columns = Math.min(WIDEST, Math.max(NARROWEST, width));
@@ -32,6 +33,7 @@ export function checkText(result: CheckResult, { width = 88, view = 'work' }: Te
     ...accountsText(result, view, columns),
     ...handText(result, columns),
     ...lossesText(result, columns),
+    ...comparisonText(result, columns),
     ...criteriaText(result, columns),
     ...findingsText(result, columns),
     ...verdictText(result, columns),

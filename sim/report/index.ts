@@ -1,5 +1,5 @@
 export { checkResult } from './check-result.js';
-export type { CheckInput } from './check-result.js';
+export type { Audit, CheckInput } from './check-result.js';
 export { checkText } from './check-text.js';
 export type { TextOptions } from './check-text.js';
 export { exitStatus } from './exit-status.js';

@@ -1,4 +1,5 @@
 import * as v from 'valibot';
+import { comparison } from './comparison-result.js';
 import { handCheckSchema } from './hand-schema.js';
 
 const joules = (what: string) => v.pipe(v.number(), v.finite(), v.description(`${what} [J]`));
@@ -140,6 +141,7 @@ export const resultSchema = v.pipe(
     findings: v.array(finding),
     stepper: v.nullable(solverRun),
     auditor: v.nullable(solverRun),
+    comparison: v.pipe(v.nullable(comparison), v.description('Of the two, where both ran')),
     handCheck: v.array(handCheckSchema),
     criteria: v.array(criterion),
   }),

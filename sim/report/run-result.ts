@@ -5,10 +5,11 @@ import type { Ledger, StationRow } from '../ledger/index.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { BodyState, Recording } from '../recording/index.js';
 import { bodyAtRow, storedAtRow } from '../recording/index.js';
+import type { BookedRun } from './booked-run.js';
 import type { ReachedStation, ResultLedger, ResultRun, ResultStation } from './result.js';
 
 /** One solver's part of the result: its stations, its ledgers, its step. */
-export function runResult(mechanism: Mechanism, recording: Recording, ledgers: readonly Ledger[]): ResultRun {
+export function runResult(mechanism: Mechanism, { recording, ledgers }: BookedRun): ResultRun {
   return {
     stations: stationsOf(mechanism, recording),
     ledgers: ledgers.map((ledger) => ledgerResult(mechanism, ledger)),

@@ -8,7 +8,14 @@ import type { Compared } from './scales.js';
 export type Remedy =
   | { do: 'smaller-step'; /** [s] */ step: number; /** Of the run [s]. */ now: number }
   | { do: 'compliant-stop'; pair: [string, string] }
-  | { do: 'contact-order'; pairs: [string, string][]; /** [s] */ at: number };
+  | ({ do: 'contact-order' } & Together);
+
+/** Pairs that strike at one instant. */
+export interface Together {
+  pairs: [string, string][];
+  /** [s] */
+  at: number;
+}
 
 /** The next step to try, as a share of the last: aimed at half of what is allowed, and no further than a tenth. */
 const [LEAST_STEP, GREATEST_STEP] = [0.1, 0.5];
@@ -20,19 +27,21 @@ const INSTANT = 1e-6;
  * What to do where two runs part, or where the stepper's method itself makes or loses too much, though both runs have
  * what the document says.
  *
- * @param numerical what the stepper's method made or lost, in units of its limit
+ * @param found.numerical what the stepper's method made or lost, in units of its limit
+ * @param found.together the first impacts at one instant
  */
 export function remediesFor(
   compared: Compared,
   stations: readonly CommonStation[],
   parting: Parting | null,
-  numerical: number,
+  { numerical, together }: { numerical: number; together: Together | null },
 ): Remedy[] {
   const worst = Math.max(parting?.figure?.share ?? 0, parting?.account?.share ?? 0) / compared.tolerance;
   const step = smallerStep(compared.stepper, Math.max(worst, numerical));
   if (!parting) return step;
   const until = stations.find(({ id }) => id === parting.station)?.auditor.time ?? Infinity;
-  return [...step, ...compliantStop(compared, parting), ...impactsTogether(compared, until)];
+  const order: Remedy[] = together && together.at <= until ? [{ do: 'contact-order', ...together }] : [];
+  return [...step, ...compliantStop(compared, parting), ...order];
 }
 
 /** @param excess how many times what is allowed; the error with contacts is of first order in the step */
@@ -57,18 +66,25 @@ function compliantStop({ mechanism }: Compared, { account }: Parting): Remedy[] 
   return pair && !pair.compliant ? [{ do: 'compliant-stop', pair: pair.between }] : [];
 }
 
-/** The first instant, not after a time, at which several pairs strike at once. */
-function impactsTogether({ stepper, auditor, scales }: Compared, until: number): Remedy[] {
-  for (const { events } of [auditor, stepper]) {
-    const touches = events.filter((event) => event.kind === 'touch' && event.time <= until) as Touch[];
-    for (const { time } of touches) {
-      const now = touches.filter((other) => Math.abs(other.time - time) <= INSTANT * scales.duration);
-      const pairs = distinct(now.map(({ pair }) => pair));
-      if (pairs.length > 1) return [{ do: 'contact-order', pairs, at: time }];
-    }
-  }
-  return [];
+/** The first instant at which several pairs strike at once, in either run. */
+export function impactsTogether({ stepper, auditor, scales }: Compared): Together | null {
+  const within = INSTANT * scales.duration;
+  const first = [auditor, stepper].map((run) => firstTogether(run.events.filter(isTouch), within));
+  return first[0] ?? first[1];
 }
+
+/** @param touches in order of time */
+function firstTogether(touches: readonly Touch[], within: number): Together | null {
+  for (const [i, { time, pair }] of touches.entries()) {
+    const pairs = [pair];
+    for (let j = i + 1; j < touches.length && touches[j].time - time <= within; j += 1) pairs.push(touches[j].pair);
+    const different = distinct(pairs);
+    if (different.length > 1) return { pairs: different, at: time };
+  }
+  return null;
+}
+
+const isTouch = (event: RunEvent): event is Touch => event.kind === 'touch';
 
 type Touch = RunEvent & { kind: 'touch' };
 

@@ -38,7 +38,8 @@ export function sensitivityOf(
   const scales = scalesOf(mechanism, [nominal]);
   const nudged = run(nudge(mechanism, scales.speed));
   const compared: Compared = { mechanism, stepper: nudged, auditor: nominal, scales, least: 1, tolerance: SENSITIVE };
-  const [lost] = oneSidedStations(nudged, nominal);
+  // A run that was stopped says nothing about stations it did not come to.
+  const [lost] = nudged.end === nominal.end ? oneSidedStations(nudged, nominal) : [];
   for (const station of commonStations(nudged, nominal)) {
     const moved = compareStation(compared, station).figures.filter(
       ({ within, quantity }) => !within && isOutcome(quantity),

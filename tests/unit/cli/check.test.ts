@@ -3,9 +3,10 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { checkCommand } from '../../../main/cli/check.js';
+import type { Auditor } from '../../../main/cli/run-both.js';
 import { runCommandLine } from '../../../main/cli/cli.js';
 import type { CheckResult } from '../../../sim/report/index.js';
-import { fallingDocument, fallingEngine } from './falling.js';
+import { fallingAuditor, fallingDocument, fallingEngine } from './falling.js';
 import { recordedTerminal } from './recorded-terminal.js';
 
 describe('joulewright check', () => {
@@ -13,10 +14,19 @@ describe('joulewright check', () => {
   beforeAll(() => (folder = mkdtempSync(join(tmpdir(), 'check-'))));
   afterAll(() => rmSync(folder, { recursive: true }));
 
-  async function check(document: unknown, options: string[], engine = fallingEngine(), watched = false) {
+  async function check(
+    document: unknown,
+    options: string[],
+    engine = fallingEngine(),
+    { watched = false, auditor = null as Auditor | null } = {},
+  ) {
     const text = typeof document === 'string' ? document : JSON.stringify(document);
     const terminal = recordedTerminal(text, watched);
-    const status = await runCommandLine(['check', '-', ...options], [checkCommand(engine)], terminal);
+    const status = await runCommandLine(
+      ['check', '-', ...options],
+      [checkCommand({ stepper: engine, auditor })],
+      terminal,
+    );
     return { status, engine, ...terminal.written };
   }
   const asked = {
@@ -143,9 +153,57 @@ describe('joulewright check', () => {
     expect(status).toBe(4);
   });
 
-  it('shows progress on a watched standard error only', async () => {
-    const { err } = await check(fallingDocument, [], fallingEngine(), true);
-    expect(err).toContain('\r 50 %  0.500 s of 1.000 s');
+  it('shows progress on a watched standard error only, for each of the solvers', async () => {
+    const { err } = await check(fallingDocument, [], fallingEngine(), { watched: true, auditor: fallingAuditor() });
+    expect(err).toContain('\r 50 %  0.500 s of 1.000 s  stepper\r');
+    expect(err).toContain('\r 50 %  0.500 s of 1.000 s  auditor\r');
     expect(err.endsWith('\r\u001b[K')).toBe(true);
+  });
+
+  it('answers 0 where stepper and auditor agree, and has both of them beside each other', async () => {
+    const audited = { auditor: fallingAuditor() };
+    const { status, out } = await check(fallingDocument, [], fallingEngine(), audited);
+    expect(out).toMatch(/speed weight, m\/s +9\.8066 +9\.8066 +9\.8066/);
+    expect(out).toContain('Agrees, stepper and auditor');
+    const { out: json } = await check(fallingDocument, ['--json'], fallingEngine(), audited);
+    const result = JSON.parse(json) as CheckResult;
+    expect(result).toMatchObject({ verdict: 'agrees', comparison: { parting: null } });
+    expect(result.auditor?.stations).toEqual(result.stepper?.stations);
+    expect({ status, starts: audited.auditor.starts }).toEqual({ status: 0, starts: [0, 0] });
+  });
+
+  it('answers 2 where they differ, names the station and the account, and tries a start a hair away', async () => {
+    const auditor = fallingAuditor(0.98);
+    const { status, out } = await check(fallingDocument, ['--json'], fallingEngine(), { auditor });
+    const { verdict, comparison, findings } = JSON.parse(out) as CheckResult;
+    expect({ status, verdict }).toEqual({ status: 2, verdict: 'differs' });
+    expect(comparison?.parting).toMatchObject({ station: '2', account: { account: 'gravity', of: 'weight' } });
+    expect(findings.map(({ code }) => code)).toEqual(['runs-part', 'account-parts', 'try-smaller-step']);
+    expect(auditor.starts).toHaveLength(2);
+    expect(auditor.starts[1]).not.toBe(0);
+  });
+
+  it('leaves the auditor out with --stepper-only', async () => {
+    const auditor = fallingAuditor();
+    const { status, out } = await check(fallingDocument, ['--stepper-only', '--json'], fallingEngine(), { auditor });
+    expect(JSON.parse(out)).toMatchObject({ verdict: 'unaudited', auditor: null, comparison: null });
+    expect({ status, starts: auditor.starts }).toEqual({ status: 0, starts: [] });
+  });
+
+  it('is unaudited, with 2, where the auditor refuses the mechanism, and says why', async () => {
+    const finding = { severity: 'warning', code: 'not-audited', text: 'The cam is not audited.', of: ['c'] } as const;
+    const auditor = { ...fallingAuditor(), unaudited: () => [{ ...finding, of: ['c'] }] };
+    const { status, out } = await check(fallingDocument, ['--json'], fallingEngine(), { auditor });
+    const result = JSON.parse(out) as CheckResult;
+    expect(result).toMatchObject({ verdict: 'unaudited', auditor: null, findings: [finding, { code: 'unaudited' }] });
+    expect({ status, starts: auditor.starts }).toEqual({ status: 2, starts: [] });
+  });
+
+  it('still audits what the stepper refuses, with nothing to compare it with', async () => {
+    const refusal = { severity: 'error' as const, code: 'not-simulated', text: 'No ropes.', of: ['r'] };
+    const engine = { ...fallingEngine(), unsupported: () => [refusal] };
+    const { status, out } = await check(fallingDocument, ['--json'], engine, { auditor: fallingAuditor() });
+    expect(JSON.parse(out)).toMatchObject({ verdict: 'unaudited', stepper: null, comparison: null, auditor: {} });
+    expect(status).toBe(2);
   });
 });

@@ -1,4 +1,4 @@
-import type { Engine } from '../../../main/cli/check.js';
+import type { Auditor, Engine } from '../../../main/cli/run-both.js';
 import { buildLayout, RecordingWriter, type Recording } from '../../../sim/recording/index.js';
 
 /** A particle of 2 kg let go: after 1 s it has fallen g/2 and moves at g, and gravity has done m g²/2. */
@@ -20,15 +20,16 @@ const layout = buildLayout({
   accounts: [{ account: 'gravity', of: 'weight', bodies: ['weight'], stored: true }],
 });
 
-function fallen(share: number, step: number): Recording {
-  const writer = new RecordingWriter({ solver: 'stepper', layout, step });
+function fallen(share: number, step: number | undefined, lasts = 1): Recording {
+  const solver = step === undefined ? 'auditor' : 'stepper';
+  const writer = new RecordingWriter({ solver, layout, ...(step === undefined ? {} : { step }) });
   const [body] = layout.bodies;
   const [account] = layout.accounts;
   [0, 1].forEach((time) => {
     const row = writer.offset(writer.addRow(time));
-    const work = 0.5 * mass * (gravity * time) ** 2;
-    writer.buffer[row + body.columns.y] = -0.5 * gravity * time ** 2;
-    writer.buffer[row + body.columns.vy] = -gravity * time;
+    const work = 0.5 * mass * (gravity * lasts * time) ** 2;
+    writer.buffer[row + body.columns.y] = -0.5 * gravity * (lasts * time) ** 2;
+    writer.buffer[row + body.columns.vy] = -gravity * lasts * time;
     writer.buffer[row + account.columns.work[0]] = share * work;
     writer.buffer[row + account.columns.stored!] = -share * work;
     writer.event({ kind: 'station', station: String(time + 1), time, row: time });
@@ -47,16 +48,27 @@ export function fallingEngine(booked = 1): Engine & { steps: (number | undefined
     unsupported: () => [],
     startRun: (_mechanism, { step }) => {
       steps.push(step);
-      const run = {
-        time: 0,
-        duration: 1,
-        done: false,
-        advance: () => forth(run),
-        recording: () => fallen(booked, step ?? 1e-3),
-      };
-      return run;
+      return inTenSlices(() => fallen(booked, step ?? 1e-3));
     },
   };
+}
+
+/** An auditor that lets the weight fall too, for a share of the time; `starts` are the places it was given. */
+export function fallingAuditor(lasts = 1): Auditor & { starts: number[] } {
+  const starts: number[] = [];
+  return {
+    starts,
+    unaudited: () => [],
+    startAudit: ({ bodies }) => {
+      starts.push(bodies[0].at[0]);
+      return inTenSlices(() => fallen(1, undefined, lasts));
+    },
+  };
+}
+
+function inTenSlices(recording: () => Recording) {
+  const run = { time: 0, duration: 1, done: false, advance: () => forth(run), recording };
+  return run;
 }
 
 function forth(run: { time: number; done: boolean }): void {

@@ -65,7 +65,7 @@ describe('checkText', () => {
     const text = textOf({ stepper: run });
     expect(text).toMatch(/Numerical, clamped motion +0\.500/);
     expect(text).toMatch(/Unbooked +0\.500 │/);
-    expect(text).toContain('Error    The account from station 1 to 2 does not close');
+    expect(text).toContain('Error    The stepper’s account from station 1 to 2 does not close');
   });
 
   it('gives the spin of a body that only turns', () => {

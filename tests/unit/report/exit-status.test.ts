@@ -3,7 +3,7 @@ import type { CheckResult } from '../../../sim/report/index.js';
 import { exitStatus } from '../../../sim/report/index.js';
 
 function result(changes: Partial<CheckResult>): CheckResult {
-  const empty = { findings: [], stepper: null, auditor: null, handCheck: [], criteria: [] };
+  const empty = { findings: [], stepper: null, auditor: null, comparison: null, handCheck: [], criteria: [] };
   return { format: 'joulewright-result/1', file: '', title: '', verdict: 'agrees', ...empty, ...changes };
 }
 const criterion = (passes: boolean | null): CheckResult['criteria'][0] => ({
