@@ -3,7 +3,7 @@ import type { Assembly } from './assembly.js';
 import type { FrictionGroup } from './dynamics.js';
 import type { DryFriction } from './element.js';
 import type { SoftPoint } from './contact/soft-point.js';
-import { STILL } from './modes.js';
+import { isDouble, STILL, TOUCHING } from './modes.js';
 import type { StateMotion } from './motion.js';
 import { ContactPoint, type Unilateral } from './unilateral.js';
 
@@ -44,7 +44,11 @@ export function watchList(
   const { dynamics, soft, springs, dampers } = assembly;
   const { unilaterals, frictions } = dynamics.parts;
   const list: Watch[] = [];
-  for (const what of unilaterals) list.push(...(what.isClosed ? closedWatches(what) : openWatches(what, isNear)));
+  const closed = unilaterals.filter(({ isClosed }) => isClosed);
+  for (const what of unilaterals) {
+    if (what.isClosed) list.push(...closedWatches(what));
+    else if (!isRidden(what, closed, motion)) list.push(...openWatches(what, isNear));
+  }
   for (const group of dynamics.groups) list.push(...groupWatches(group));
   for (const friction of frictions) if (friction.isActive) list.push(frictionWatch(friction));
   for (const point of soft) list.push(...softWatches(point, isNear));
@@ -65,6 +69,15 @@ export function watchList(
     });
   }
   return list;
+}
+
+/** Another point of its pair is closed at the very place: where that goes, this goes. */
+function isRidden(what: Unilateral, closed: readonly Unilateral[], { q, v }: StateMotion): boolean {
+  if (!(what instanceof ContactPoint)) return false;
+  what.locate(q);
+  if (!what.isValid || Math.abs(what.gap) > TOUCHING) return false;
+  what.aim(q, v, 0);
+  return isDouble(what, closed);
 }
 
 function closedWatches(what: Unilateral): Watch[] {

@@ -114,12 +114,25 @@ function openCorners(
     ];
     return ends
       .filter(({ isOpen }) => isOpen)
-      .filter(({ foot }) => !isInside(foot, free, run, courses))
+      .filter(({ foot }) => !isInside(foot, free, run, courses) && !isEarlier(foot, run, course, courses))
       .map(({ foot }) => {
         const sense = foot.s === 0 ? 1 : -1;
         return { x: foot.x, y: foot.y, track, way: { x: sense * foot.tx, y: sense * foot.ty } };
       });
   });
+}
+
+/** A corner is the end of one course and the start of the next: the first of the two stands for it. */
+function isEarlier(
+  { x, y }: { x: number; y: number },
+  own: Course[number]['run'],
+  course: Course,
+  courses: readonly Course[],
+): boolean {
+  const before = courses.slice(0, courses.indexOf(course)).flatMap((other) => [...other]);
+  return before.some(
+    ({ run }) => run.track === own.track && [run.start, run.end].some(([ex, ey]) => Math.hypot(ex - x, ey - y) <= NEAR),
+  );
 }
 
 function isInside(
