@@ -40,7 +40,8 @@ export function findEvent(
     const passed = watches.filter((watch) => watch.value(q, v) < -watch.tolerance);
     if (passed.length === 0) continue;
     const low = (k - 1) / SAMPLES;
-    const roots = passed.map((watch) => root((x) => valueAt(watch, x), low, theta));
+    // Looked for a tolerance below zero: rounding about the start is then no root.
+    const roots = passed.map((watch) => root((x) => valueAt(watch, x) + watch.tolerance, low, theta));
     const first = Math.min(...roots);
     const together = passed.filter((_, i) => roots[i] <= first + 1e-10 * theta + 1e-15);
     return land(method, together, first * h, scale, look, t);
