@@ -1,3 +1,4 @@
+import { startAudit, unaudited } from './auditor/index.js';
 import { readMechanism } from './mechanism/index.js';
 import {
   FrameCutter,
@@ -5,40 +6,65 @@ import {
   webPort,
   type Handlers,
   type Progress,
+  type RunClosing,
   type RunFrame,
   type SolverMethods,
 } from './protocol/index.js';
+import type { Finding, Recording } from './recording/index.js';
 import { startRun, unsupported } from './stepper/index.js';
 
 /** Wall-clock time between two frames [ms]: the pen of the recorder moves some thirty times a second. */
 const frameTime = 30;
 
-/** What the solver's thread does; the same in a worker, in a Node thread and in process. */
+/** What a solver's thread does; the same in a worker, in a Node thread and in process. */
 export const solver: Handlers<SolverMethods> = {
   read: ({ text, fileSize }) => readMechanism(text, { fileSize }),
 
   run: async ({ mechanism, step }, progress) => {
     const findings = unsupported(mechanism);
-    if (findings.some(({ severity }) => severity === 'error')) return { end: 'notSimulated', findings, counters: {} };
-    const run = startRun(mechanism, step === undefined ? {} : { step });
-    await sendLayout(run, progress);
-    const cutter = new FrameCutter();
-    do {
-      run.advance(frameTime);
-      const frame = cutter.next(run.recording());
-      if (frame) await progress.send(frame, [frame.rows]);
-      await turn();
-    } while (!run.done);
-    const { end, findings: found, counters } = run.recording();
-    return { end, findings: [...findings, ...found], counters };
+    if (findings.some(({ severity }) => severity === 'error')) return refused(findings);
+    const closing = await sendRun(startRun(mechanism, step === undefined ? {} : { step }), progress);
+    return { ...closing, findings: [...findings, ...closing.findings] };
+  },
+
+  audit: async ({ mechanism, tolerance }, progress) => {
+    const findings = unaudited(mechanism);
+    if (findings.length > 0) return refused(findings);
+    return sendRun(startAudit(mechanism, tolerance === undefined ? {} : { tolerance }), progress);
   },
 };
 
-async function sendLayout(run: ReturnType<typeof startRun>, progress: Progress<RunFrame>): Promise<void> {
-  const { solver, layout, step } = run.recording();
+function refused(findings: Finding[]): RunClosing {
+  return { end: 'notSimulated', findings, counters: {} };
+}
+
+/** A run that goes on piece by piece, as both solvers have it. */
+interface PieceByPiece {
+  readonly duration: number;
+  readonly done: boolean;
+  advance(wallMs: number): void;
+  recording(): Recording;
+}
+
+/** Takes a run to its end, and sends what is recorded as it comes. */
+async function sendRun(run: PieceByPiece, progress: Progress<RunFrame>): Promise<RunClosing> {
+  await sendLayout(run, progress);
+  const cutter = new FrameCutter();
+  do {
+    run.advance(frameTime);
+    const frame = cutter.next(run.recording());
+    if (frame) await progress.send(frame, [frame.rows]);
+    await turn();
+  } while (!run.done);
+  const { end, findings, counters } = run.recording();
+  return { end, findings, counters };
+}
+
+async function sendLayout(run: PieceByPiece, progress: Progress<RunFrame>): Promise<void> {
+  const { solver: name, layout, step } = run.recording();
   await progress.send({
     part: 'layout',
-    solver,
+    solver: name,
     layout,
     duration: run.duration,
     ...(step === undefined ? {} : { step }),

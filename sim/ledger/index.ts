@@ -19,6 +19,7 @@ export type {
   StationComparison,
   StationFigure,
 } from './comparison/figures.js';
+export { compareFigures } from './comparison/figures.js';
 export { nudge, sensitivityOf } from './comparison/sensitivity.js';
 export type { Sensitivity } from './comparison/sensitivity.js';
 export { QUANTITIES } from './comparison/words.js';
