@@ -73,7 +73,7 @@ export function fourFigures(value: number): string {
 }
 
 /** Unit and decimals in which the amounts of one sum are printed. */
-export interface SumScale {
+interface SumScale {
   unit: string;
   joules: number;
   decimals: number;

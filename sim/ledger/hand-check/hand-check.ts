@@ -36,7 +36,15 @@ export function handCheck(mechanism: Mechanism, recording: Recording): HandCheck
 
 const UNKNOWN = 'is not known by hand';
 
+/** What a walk found. */
+interface Way {
+  stages: Stage[];
+  remarks: Expression[];
+  speeds: Speeds;
+}
+
 class Hand {
+  private readonly ways = new Map<string, Way | NoHandSum>();
   private readonly known = new Map<string, Speeds | string>();
 
   constructor(
@@ -57,7 +65,16 @@ class Hand {
     }
   }
 
-  private walk(body: string, from: number, to: number): { stages: Stage[]; remarks: Expression[]; speeds: Speeds } {
+  /** The way between two stations, gone once; a refusal is remembered too. */
+  private walk(body: string, from: number, to: number): Way {
+    const key = `${body} ${from} ${to}`;
+    const way = this.ways.get(key) ?? this.attempt(body, from, to);
+    this.ways.set(key, way);
+    if (way instanceof NoHandSum) throw way;
+    return way;
+  }
+
+  private attempt(body: string, from: number, to: number): Way | NoHandSum {
     const [start, end] = [this.stations[from], this.stations[to]];
     const route: Route = {
       body,
@@ -67,8 +84,13 @@ class Hand {
       toRow: end.row,
       restsAt: (mover, tangent) => restAt(this.scene, end.id, mover, tangent),
     };
-    const walk = this.walkOn(route, this.speedsAt(body, from));
-    return { stages: walk.walk.stages, remarks: walk.walk.remarks, speeds: walk.speeds };
+    try {
+      const { walk, speeds } = this.walkOn(route, this.speedsAt(body, from));
+      return { stages: walk.stages, remarks: walk.remarks, speeds };
+    } catch (error) {
+      if (error instanceof NoHandSum) return error;
+      throw error;
+    }
   }
 
   private walkOn(route: Route, speeds: Speeds): { walk: Walk; speeds: Speeds } {

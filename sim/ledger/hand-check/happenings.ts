@@ -39,7 +39,9 @@ const NOWHERE = 1e-6;
 /** Legs and blows of a span of rows; cut at every event of the run, and where the body turns back. */
 export function happenings(scene: Scene, body: string, fromRow: number, toRow: number): Happening[] {
   const turns = turningPoints(scene, body, fromRow, toRow);
-  const cuts = [...eventCuts(scene, fromRow, toRow), ...turns].sort((a, b) => a.time - b.time || a.before - b.before);
+  const cuts = [...eventCuts(scene, body, fromRow, toRow), ...turns].sort(
+    (a, b) => a.time - b.time || a.before - b.before,
+  );
   const list: Happening[] = [];
   let [row, time] = [fromRow, scene.time(fromRow)];
   const end: Cut = { before: toRow, after: toRow, time: scene.time(toRow) };
@@ -60,10 +62,25 @@ function rowsBetween(from: number, to: number): number[] {
   return rows.length > 2 ? rows.slice(1, -1) : rows;
 }
 
-function eventCuts({ recording }: Scene, fromRow: number, toRow: number): Cut[] {
+/** The bodies that a body has to do with in a span, itself among them: those it touches, and those they touch. */
+function company(scene: Scene, body: string, pairs: readonly (readonly string[])[], fromRow: number): Set<string> {
+  const known = new Set([body]);
+  for (const member of known) {
+    for (const pair of pairs) if (pair.includes(member)) pair.forEach((id) => scene.isBody(id) && known.add(id));
+    for (const pair of scene.pairsOf(member)) {
+      if (scene.touches(pair, fromRow)) pair.between.forEach((id) => scene.isBody(id) && known.add(id));
+    }
+  }
+  return known;
+}
+
+function eventCuts(scene: Scene, body: string, fromRow: number, toRow: number): Cut[] {
   const cuts = new Map<number, Cut>();
-  for (const event of recording.events) {
-    if (event.kind === 'station' || event.row < fromRow || event.row >= toRow) continue;
+  const events = scene.recording.events.filter(({ kind, row }) => kind !== 'station' && row >= fromRow && row < toRow);
+  const pairs = events.flatMap((event) => ('pair' in event ? [event.pair] : []));
+  const concerned = company(scene, body, pairs, fromRow);
+  for (const event of events) {
+    if ('pair' in event && !event.pair.some((id) => concerned.has(id))) continue;
     const { row, time } = event;
     const cut = cuts.get(row) ?? { before: row, after: row, time };
     cuts.set(row, cut);

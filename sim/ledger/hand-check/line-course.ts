@@ -130,7 +130,7 @@ export function refuseSoft({ compliant, between }: ContactPair): void {
 }
 
 /** The bodies that ride on a body, with it; what is only pushed ahead rests on something of its own. */
-export function carriedBy(
+function carriedBy(
   scene: Scene,
   body: string,
   members: readonly string[],

@@ -6,11 +6,12 @@ import type { Joint, PointOn } from '../../mechanism/kinds/joint.js';
 import type { Mechanism } from '../../mechanism/model.js';
 import {
   bodyAtRow,
-  bodyOf,
   contactOf,
   poseAtTime,
   timeOfRow,
   valueAt,
+  type BodySpec,
+  type ContactSpec,
   type Pose,
   type Recording,
 } from '../../recording/index.js';
@@ -23,6 +24,11 @@ import { refuse } from './refusal.js';
 export class Scene {
   readonly tracks: TrackPath[];
   private readonly bodies: Map<string, Body>;
+  private readonly specs: Map<string, BodySpec>;
+  private readonly contacts: Map<ContactPair, ContactSpec | undefined>;
+  private readonly pairs: Map<string, ContactPair[]>;
+  /** Rows before a blow, by body. */
+  private readonly blows: Map<string, number[]>;
 
   constructor(
     readonly mechanism: Mechanism,
@@ -30,6 +36,12 @@ export class Scene {
   ) {
     this.tracks = joinTracks(mechanism.tracks, mechanism.extent);
     this.bodies = new Map(mechanism.bodies.map((body) => [body.id, body]));
+    this.specs = new Map(recording.layout.bodies.map((spec) => [spec.id, spec]));
+    this.contacts = new Map(mechanism.contacts.map((pair) => [pair, contactOf(recording, pair.between)]));
+    this.blows = this.blowRows();
+    this.pairs = new Map(
+      mechanism.bodies.map(({ id }) => [id, mechanism.contacts.filter(({ between }) => between.includes(id))]),
+    );
   }
 
   isBody(id: string): boolean {
@@ -40,22 +52,45 @@ export class Scene {
     return this.bodies.get(id) ?? refuse(`There is no body ${id}.`);
   }
 
+  /** How often a body is struck between two rows; several touches at one row are one blow. */
+  blowsOf(id: string, fromRow: number, toRow: number): number {
+    const rows = this.blows.get(id) ?? [];
+    return rows.filter((row) => row >= fromRow && row < toRow).length;
+  }
+
+  private blowRows(): Map<string, number[]> {
+    const joints = new Map(this.mechanism.joints.map((joint) => [joint.id, 'between' in joint ? joint.between : []]));
+    const blows = new Map<string, number[]>(this.mechanism.bodies.map(({ id }) => [id, []]));
+    for (const event of this.recording.events) {
+      if (event.kind !== 'touch' && event.kind !== 'limit') continue;
+      for (const part of event.kind === 'touch' ? event.pair : (joints.get(event.joint) ?? [])) {
+        const rows = blows.get(part);
+        if (rows && rows.at(-1) !== event.row) rows.push(event.row);
+      }
+    }
+    return blows;
+  }
+
+  private spec(id: string): BodySpec {
+    return this.specs.get(id) ?? refuse(`The run has no body ${id}.`);
+  }
+
   /** Where the centre of mass is, and the angle, at a time [s]. */
   pose(id: string, time: number): Pose {
-    const spec = bodyOf(this.recording, id) ?? refuse(`The run has no body ${id}.`);
+    const spec = this.spec(id);
     return poseAtTime(this.recording, spec, time);
   }
 
   /** The same at a row. */
   poseAtRow(id: string, row: number): Pose {
-    const spec = bodyOf(this.recording, id) ?? refuse(`The run has no body ${id}.`);
+    const spec = this.spec(id);
     const { x, y, angle } = bodyAtRow(this.recording, spec, row);
     return { x, y, angle };
   }
 
   /** Which way it moves at a row: velocity [m/s] and spin [rad/s], for their signs and for whether it rolls. */
   heading(id: string, row: number): { vx: number; vy: number; spin: number } {
-    const spec = bodyOf(this.recording, id) ?? refuse(`The run has no body ${id}.`);
+    const spec = this.spec(id);
     return bodyAtRow(this.recording, spec, row);
   }
 
@@ -64,20 +99,20 @@ export class Scene {
   }
 
   /** Whether a pair touches at a row. */
-  touches({ between }: ContactPair, row: number): boolean {
-    const spec = contactOf(this.recording, between);
+  touches(pair: ContactPair, row: number): boolean {
+    const spec = this.contacts.get(pair);
     return spec !== undefined && valueAt(this.recording, row, spec.columns.points) > 0;
   }
 
   /** Unit normal of a pair at a row, in the direction from its second to its first. */
-  normal({ between }: ContactPair, row: number): Vec {
-    const spec = contactOf(this.recording, between) ?? refuse(`The run has no contact ${between.join('/')}.`);
+  normal(pair: ContactPair, row: number): Vec {
+    const spec = this.contacts.get(pair) ?? refuse(`The run has no contact ${pair.between.join('/')}.`);
     return [valueAt(this.recording, row, spec.columns.nx), valueAt(this.recording, row, spec.columns.ny)];
   }
 
   /** Contact pairs of a body with anything. */
   pairsOf(id: string): ContactPair[] {
-    return this.mechanism.contacts.filter(({ between }) => between.includes(id));
+    return this.pairs.get(id) ?? [];
   }
 
   /** Joints that hold a body at a row, but for those a latch has let go. */

@@ -40,7 +40,7 @@ export function leftOf({ start, rate, terms }: Stage): number {
 }
 
 /** The greatest amount of a stage [J], which what is left is judged by. */
-export function greatestOf({ start, rate, terms }: Stage): number {
+function greatestOf({ start, rate, terms }: Stage): number {
   return Math.max(kinetic(start, rate), ...joinTerms(terms).map(({ value }) => Math.abs(value)), 0);
 }
 

@@ -13,7 +13,7 @@ export type Operator = '=' | '+' | '−' | '×' | '/' | '(' | ')' | ',' | 'cos';
 export type Expression = Token[];
 
 /** What a symbol carries beside its name. */
-export type SymbolParts = Omit<Extract<Token, { kind: 'symbol' }>, 'kind' | 'name'>;
+type SymbolParts = Omit<Extract<Token, { kind: 'symbol' }>, 'kind' | 'name'>;
 
 export const symbol = (name: string, parts: SymbolParts = {}): Token => ({
   kind: 'symbol',

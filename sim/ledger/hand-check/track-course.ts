@@ -39,7 +39,7 @@ export function trackCourses(scene: Scene, body: string, leg: Leg): Course[] {
 }
 
 /** Contacts with tracks; where rough ones are closed at once, nobody can say by hand which carries what. */
-export function touchedTracks(scene: Scene, body: string, { rows }: Leg): ContactPair[] {
+function touchedTracks(scene: Scene, body: string, { rows }: Leg): ContactPair[] {
   const pairs = scene.pairsOf(body).filter((pair) => rows.some((row) => scene.touches(pair, row)));
   for (const pair of pairs) refuseSoft(pair);
   const rough = pairs.filter(({ staticFriction, kineticFriction }) => staticFriction > 0 || kineticFriction > 0);

@@ -61,8 +61,8 @@ export class Walk {
   /** @returns the speeds at the end */
   run(): Speeds {
     const { scene, route } = this;
+    limitTo(scene.blowsOf(route.body, route.fromRow, route.toRow), route.body, 'is struck');
     const list = happenings(scene, route.body, route.fromRow, route.toRow);
-    limitTo(this.strikes(list), route.body, 'is struck');
     limitTo(turnsIn(list), route.body, 'turns back');
     list.forEach((happening, i) => {
       if (happening.kind === 'leg') this.pass(happening.leg);
@@ -73,17 +73,6 @@ export class Walk {
     if (last && this.remarks.length === 0) last.to = route.to;
     this.remarks.push(...this.pending);
     return this.speeds;
-  }
-
-  private strikes(list: readonly Happening[]): number {
-    const { body } = this.route;
-    return list.filter((each) => {
-      if (each.kind === 'leg') return false;
-      const isJoint = each.blow.joints.some((id) =>
-        this.scene.jointsOf(body, each.blow.row).some((joint) => joint.id === id),
-      );
-      return isJoint || each.blow.pairs.some((pair) => pair.includes(body));
-    }).length;
   }
 
   private pass(leg: Leg): void {

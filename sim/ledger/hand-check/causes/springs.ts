@@ -91,13 +91,13 @@ export function forceOf(spring: LinearSpring, deflection: number): number {
 }
 
 /** Energy stored [J]: ½ k δ², or the area under its curve from the relaxed length. */
-export function storedIn(spring: LinearSpring, deflection: number): number {
+function storedIn(spring: LinearSpring, deflection: number): number {
   if (isSlack(spring, deflection)) return 0;
   return spring.curve ? areaUnder(spring.curve, 0, deflection) : 0.5 * spring.rate * deflection ** 2;
 }
 
 /** A line through points, its end slopes going on. */
-export function heightOn(curve: readonly Vec[], x: number): number {
+function heightOn(curve: readonly Vec[], x: number): number {
   if (curve.length === 1) return curve[0][1];
   const i = Math.min(Math.max(curve.findIndex(([at]) => at > x) - 1, x < curve[0][0] ? 0 : -1), curve.length - 2);
   const k = i < 0 ? (x < curve[0][0] ? 0 : curve.length - 2) : i;
