@@ -27,12 +27,14 @@ export interface TextOptions {
  */
 export function checkText(result: CheckResult, { width = 88, view = 'work' }: TextOptions = {}): string {
   const columns = Math.min(WIDEST, Math.max(NARROWEST, width));
+  // Where the stepper refused and the auditor did not, the auditor's run is the one to show.
+  const shown = { ...result, stepper: result.stepper ?? result.auditor };
   const lines = [
     ...headText(result, columns),
-    ...stationsText(result, columns),
-    ...accountsText(result, view, columns),
+    ...stationsText(shown, columns),
+    ...accountsText(shown, view, columns),
     ...handText(result, columns),
-    ...lossesText(result, columns),
+    ...lossesText(shown, columns),
     ...comparisonText(result, columns),
     ...criteriaText(result, columns),
     ...findingsText(result, columns),

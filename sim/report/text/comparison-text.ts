@@ -5,7 +5,7 @@ import type { CheckResult } from '../result.js';
 import { table, type Column } from './layout.js';
 import { figure, lengthUnit, massUnit, short, speedUnit, type PrintUnit } from './quantities.js';
 
-/** Two runs that agree to so much are printed as equal. */
+/** A difference below this is printed as below it: it tells nothing of the runs. */
 const LEAST_PERCENT = 0.001;
 
 /** One line of the three columns. */
@@ -106,14 +106,17 @@ function lineOf(place: string, what: string, of: ResultFigure | ResultAccount, u
     stepper: print(of.stepper),
     auditor: print(of.auditor),
     hand: hand === '' ? '–' : hand,
-    difference: short(of.difference / unit.size),
+    difference: isTold(of.share) ? short(of.difference / unit.size) : figure(of.difference, unit),
     share: percent(of.share),
   };
 }
 
+function isTold(share: number): boolean {
+  return 100 * share >= LEAST_PERCENT;
+}
+
 function percent(share: number): string {
-  const value = 100 * share;
-  return value > 0 && value < LEAST_PERCENT ? `< ${LEAST_PERCENT}` : short(value);
+  return share === 0 || isTold(share) ? short(100 * share) : `< ${LEAST_PERCENT}`;
 }
 
 function linesTable(head: string, lines: readonly Line[], width: number): string[] {

@@ -17,9 +17,9 @@ const WORDS = {
  * The corner of the title block: the verdict's mark in its box, dashed while nothing has audited the run; beside it what
  * is unbooked and what the method made, at worst.
  */
-export function verdictText({ verdict, stepper }: CheckResult, width: number): string[] {
+export function verdictText({ verdict, stepper, auditor }: CheckResult, width: number): string[] {
   const [top, side, bottom] = verdict === 'unaudited' ? ['┌╌╌╌┐', '╎', '└╌╌╌┘'] : ['┌───┐', '│', '└───┘'];
-  const [word, who] = stepper ? WORDS[verdict] : ['Unaudited', 'not run'];
+  const [word, who] = stepper ? WORDS[verdict] : ['Unaudited', auditor ? 'the auditor alone' : 'not run'];
   const ledgers = stepper?.ledgers ?? [];
   const figures = ledgers.length === 0 ? ['', ''] : [unbooked(ledgers), numerical(ledgers)];
   return [
