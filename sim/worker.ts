@@ -21,7 +21,7 @@ export const solver: Handlers<SolverMethods> = {
   read: ({ text, fileSize }) => readMechanism(text, { fileSize }),
 
   run: async ({ mechanism, step }, progress) => {
-    const findings = unsupported(mechanism);
+    const findings = unsupported(mechanism, { step });
     if (findings.some(({ severity }) => severity === 'error')) return refused(findings);
     const closing = await sendRun(startRun(mechanism, step === undefined ? {} : { step }), progress);
     return { ...closing, findings: [...findings, ...closing.findings] };

@@ -1,8 +1,6 @@
 import { readQuantity } from '../../sim/mechanism/index.js';
+import { MOST_STEPS } from '../../sim/stepper/index.js';
 import { UsageError } from './command.js';
-
-/** More steps than anybody waits for; a step too small to move the clock at all never ends. */
-const mostSteps = 1e8;
 
 /** The step given with `--step` [s]: a positive time, with its unit or in seconds. */
 export function readStep(typed: string): number {
@@ -17,8 +15,8 @@ export function readStep(typed: string): number {
 
 /** Refuses a step that a run of `duration` cannot be made of. @param step [s] @param duration at most [s] */
 export function checkStep(step: number, duration: number): void {
-  if (step <= duration && duration / step <= mostSteps) return;
-  const least = Number((duration / mostSteps).toPrecision(3));
+  if (step <= duration && duration / step <= MOST_STEPS) return;
+  const least = Number((duration / MOST_STEPS).toPrecision(3));
   throw new UsageError(
     `--step: found ${step} s; accepted, for a run of ${duration} s, is ${least} s to ${duration} s.`,
   );

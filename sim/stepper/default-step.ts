@@ -1,6 +1,7 @@
 import type { Body } from '../mechanism/kinds/body.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { Spring } from '../mechanism/kinds/spring.js';
+import { steepest } from './kinds/spring.js';
 import { shapeReach } from './scale.js';
 
 /** Steps in the time in which something falls the extent of the mechanism. */
@@ -56,10 +57,6 @@ function springFrequency(spring: Spring, mechanism: Mechanism): number {
     return sum + 1 / body.mass + (body.inertia > 0 ? lever2 / body.inertia : 0);
   }, 0);
   return Math.sqrt(rate * mobility);
-}
-
-function steepest(curve: readonly (readonly [number, number])[]): number {
-  return Math.max(...curve.slice(1).map(([d, f], i) => Math.abs((f - curve[i][1]) / (d - curve[i][0]))));
 }
 
 function contactFrequency({ compliant, between }: Mechanism['contacts'][number], mechanism: Mechanism): number {

@@ -13,7 +13,7 @@ import { poseBodies, setVelocities } from './scene.js';
 import { Shock, type Strike } from './shock.js';
 import { SlidingModes } from './sliding.js';
 import { VelocitySolver } from './solver.js';
-import { copyState, isFiniteState } from './state.js';
+import { copyState, isBounded } from './state.js';
 import { findStep } from './step-finder.js';
 import { Trial, type Passage } from './trial.js';
 
@@ -129,9 +129,12 @@ export class Engine {
     const { scene } = this.assembly;
     this.trial.begin();
     const { taken, met } = findStep(this.trial, scene.state, tau, locates);
+    if (!isBounded(this.trial.next)) {
+      this.giveUp();
+      return tau;
+    }
     // Where slides were not followed to their end, what has turned round has stopped.
     this.commit(taken, locates ? met : [...met, ...this.trial.passedSlips()]);
-    if (!isFiniteState(scene.state)) this.finish('nonFinite');
     return Math.max(taken, 1e-15 * tau);
   }
 
@@ -335,6 +338,17 @@ export class Engine {
       sweeps: this.solver.sweeps,
       unconvergedSolves: this.solver.unconverged,
     });
+  }
+
+  /** The step in hand grew beyond all bounds: the last good state is the last one recorded. */
+  private giveUp(): void {
+    const { scene, manager } = this.assembly;
+    poseBodies(scene, scene.state.x, scene.state.y, scene.state.a);
+    manager.refresh();
+    this.motion.state = scene.state;
+    const text = `The motion grew beyond all bounds, as it does when the step (${this.options.step} s) is too long for what is stiff or fast. Take a smaller step.`;
+    this.log.warn('not-finite', text, [], 'error');
+    this.finish('nonFinite');
   }
 
   private reportCrowd(events: number): void {

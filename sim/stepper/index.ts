@@ -6,6 +6,7 @@ import { Engine } from './engine.js';
 import { unsupported } from './unsupported.js';
 
 export { defaultStep } from './default-step.js';
+export { MOST_STEPS } from './step-limits.js';
 export { unsupported } from './unsupported.js';
 
 export interface StepperOptions {
@@ -33,10 +34,11 @@ const DEFAULT_ROWS = 2000;
 const clock = (): number => Date.now();
 
 /**
- * Starts a run of the stepper. A mechanism with elements that it does not simulate ends at once with their findings.
+ * Starts a run of the stepper. A mechanism with elements that it does not simulate, or a step that it cannot run with, ends
+ * at once with its findings.
  */
 export function startRun(mechanism: Mechanism, options: StepperOptions = {}): StepperRun {
-  const refused = unsupported(mechanism);
+  const refused = unsupported(mechanism, options);
   if (refused.length > 0) return refusedRun(mechanism, refused);
   const duration =
     'time' in mechanism.run.until ? Math.min(mechanism.run.until.time, mechanism.run.atMost) : mechanism.run.atMost;

@@ -88,10 +88,10 @@ export class RunLog {
     this.recorder.writer.event({ kind: 'release', time: this.time, row: this.record(), latch });
   }
 
-  /** A warning of the run; the first of its kind says where. */
-  warn(code: string, text: string, of: string[]): void {
+  /** A warning (or an error) of the run; the first of its kind says where. */
+  warn(code: string, text: string, of: string[], severity: 'warning' | 'error' = 'warning'): void {
     if (this.reported.has(code)) return;
     this.reported.add(code);
-    this.recorder.writer.finding({ severity: 'warning', code, text, of, at: this.time });
+    this.recorder.writer.finding({ severity, code, text, of, at: this.time });
   }
 }

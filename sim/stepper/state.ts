@@ -26,10 +26,18 @@ export function copyState(from: State, to: State): void {
   to.w.set(from.w);
 }
 
-export function isFiniteState(state: State): boolean {
-  let sum = 0;
-  for (const column of [state.x, state.y, state.a, state.vx, state.vy, state.w]) {
-    for (const value of column) sum += value - value;
-  }
-  return sum === 0;
+/** Far beyond what any machine does, and far from where squares of it overflow [engine units]. */
+const FARTHEST = 1e14;
+const FASTEST = 1e10;
+
+/** Whether a state is finite, and not on its way to being infinite. */
+export function isBounded({ x, y, a, vx, vy, w }: State): boolean {
+  return (
+    [x, y, a].every((column) => isWithin(column, FARTHEST)) && [vx, vy, w].every((column) => isWithin(column, FASTEST))
+  );
+}
+
+function isWithin(column: Float64Array, most: number): boolean {
+  for (let i = 0; i < column.length; i += 1) if (!(Math.abs(column[i]) <= most)) return false;
+  return true;
 }

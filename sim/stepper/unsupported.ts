@@ -1,9 +1,19 @@
 import type { Mechanism } from '../mechanism/model.js';
 import type { Finding } from '../recording/recording.js';
 import { driveLaws, joints, shapes, springs } from './kinds/index.js';
+import { stepFindings } from './step-limits.js';
 
-/** What a document asks of the stepper that it does not simulate: one finding for each element, none when it can run. */
-export function unsupported(mechanism: Mechanism): Finding[] {
+/**
+ * Why the stepper cannot run a document: one finding for each element that it does not simulate, or what is wrong with the
+ * step that `options` or else the document fixes. None when it can run.
+ */
+export function unsupported(mechanism: Mechanism, options: { step?: number } = {}): Finding[] {
+  const findings = unsupportedElements(mechanism);
+  const step = options.step ?? mechanism.run.step;
+  return findings.length > 0 || step === undefined ? findings : stepFindings(mechanism, step);
+}
+
+function unsupportedElements(mechanism: Mechanism): Finding[] {
   const findings: Finding[] = [];
   const refuse = (id: string, what: string): void => {
     findings.push({

@@ -22,7 +22,7 @@ export interface LinkReading {
  * its impulses miss of the stored energy is booked as force-truncation.
  */
 export abstract class SpringElement implements Element {
-  protected readonly row: AxisRow;
+  readonly row: AxisRow;
   private readonly account: PairAccount;
   private energy = 0;
   private workA = 0;
@@ -43,11 +43,19 @@ export abstract class SpringElement implements Element {
   /** Aims the row along the spring at the present configuration; returns its force, positive when it pulls. */
   protected abstract aim(): number;
   protected abstract storedNow(): number;
+  /** Greatest slope of its law, in engine units. */
+  protected abstract readonly stiffest: number;
   abstract reading(): LinkReading;
 
   begin(): void {
     this.energy = this.storedNow();
     this.account.booked.stored = this.energy;
+  }
+
+  /** Aims the row at the present configuration; returns how stiff the spring is at the most. */
+  ready(): number {
+    this.aim();
+    return this.stiffest;
   }
 
   push(half: number): void {
@@ -93,6 +101,7 @@ class LinearSpringElement extends SpringElement {
   private readonly anchorB: Anchor;
   private readonly free: number;
   private readonly law: Law;
+  protected readonly stiffest: number;
   private readonly pointA = { x: 0, y: 0 };
   private readonly pointB = { x: 0, y: 0 };
 
@@ -103,6 +112,7 @@ class LinearSpringElement extends SpringElement {
     this.anchorB = anchorOf(scene, to);
     this.free = spring.freeLength / scene.scale.length;
     this.law = lawOf(spring, scene);
+    this.stiffest = (spring.curve ? steepest(spring.curve) : spring.rate) / scene.scale.rate;
   }
 
   private length(): number {
@@ -133,12 +143,14 @@ class LinearSpringElement extends SpringElement {
 
 class TorsionSpringElement extends SpringElement {
   private readonly rate: number;
+  protected readonly stiffest: number;
   private readonly free: number;
 
   constructor(scene: Scene, spring: TorsionSpring) {
     // Row B is the first part, so that its rate is the first's spin relative to the second.
     super(scene, spring.id, partIndex(scene, spring.between[1]), partIndex(scene, spring.between[0]));
     this.rate = spring.rate / scene.scale.energy;
+    this.stiffest = this.rate;
     this.free = spring.freeAngle;
     this.row.turn();
   }
@@ -175,6 +187,11 @@ function lawOf(spring: LinearSpring, { scale }: Scene): Law {
     force: (d) => (acts(d) ? law.force(d) : 0),
     energy: (d) => (acts(d) ? law.energy(d) : 0),
   };
+}
+
+/** Greatest slope of a curve of force over deflection. */
+export function steepest(curve: readonly (readonly [number, number])[]): number {
+  return Math.max(...curve.slice(1).map(([d, f], i) => Math.abs((f - curve[i][1]) / (d - curve[i][0]))));
 }
 
 const rateLaw = (rate: number): Law => ({ force: (d) => rate * d, energy: (d) => 0.5 * rate * d * d });
