@@ -60,16 +60,16 @@ const SPARE = 1.25;
 
 /** First column that nothing has taken. */
 function usedWidth({ bodies, accounts, contacts, joints, springs, dampers }: RecordingLayout): number {
-  const named = [...bodies, ...contacts, ...joints, ...springs, ...dampers].flatMap(({ columns }) =>
-    Object.values(columns),
-  );
-  const booked = accounts.flatMap(({ columns: { work, heat = 0, stored = 0, input = 0 } }) => [
-    ...work,
-    heat,
-    stored,
-    input,
-  ]);
-  return 1 + [...named, ...booked].reduce((most, column) => Math.max(most, column), 0);
+  let most = 0;
+  for (const list of [bodies, contacts, joints, springs, dampers]) {
+    for (const { columns } of list) for (const column of Object.values(columns)) most = Math.max(most, column);
+  }
+  for (const { columns } of accounts) {
+    const { work, heat = 0, stored = 0, input = 0 } = columns;
+    most = Math.max(most, heat, stored, input);
+    for (const column of work) most = Math.max(most, column);
+  }
+  return 1 + most;
 }
 
 class ColumnCounter {

@@ -1,5 +1,14 @@
 import type { BodyInternals } from './planck-internals.js';
 
+/** A row that brings a rate to its target in a correction. */
+export interface HeldRow {
+  a: number;
+  b: number;
+  row: AxisRow;
+  target: number;
+  least: number;
+}
+
 /**
  * One scalar constraint or bounded force along an axis between two parts: rate u = n·(v_B + ω_B×r_B − v_A − ω_A×r_A), or
  * u = ω_B − ω_A for a turning one. Solved by projected Gauss–Seidel beside planck's own constraints, on the same

@@ -196,7 +196,7 @@ export class Engine {
         state.a[i] = a;
       });
       poseBodies(scene, state.x, state.y, state.a);
-      manager.refresh();
+      manager.reevaluate();
       for (const element of elements) element.project?.();
       this.solver.soft.project();
     }

@@ -15,14 +15,15 @@ export const CAUSES: readonly NumericalCause[] = [
  * - velocity-projection and position-projection: bringing the state back onto joints and closed contacts.
  */
 export class NumericalBooks {
-  private readonly byCause: Map<NumericalCause, BookedAccount>;
+  private readonly byCause: Record<NumericalCause, BookedAccount>;
 
   constructor(books: Books, ids: string[]) {
-    this.byCause = new Map(CAUSES.map((cause) => [cause, books.open('numerical', null, ids, { cause })]));
+    const opened = CAUSES.map((cause) => [cause, books.open('numerical', null, ids, { cause })] as const);
+    this.byCause = Object.fromEntries(opened) as Record<NumericalCause, BookedAccount>;
   }
 
   add(cause: NumericalCause, body: number, work: number): void {
-    if (body >= 0) this.byCause.get(cause)?.work(body, work);
+    if (body >= 0) this.byCause[cause].work(body, work);
   }
 
   /** Shares work between the bodies of a pair; all of it goes to the one that moves. */

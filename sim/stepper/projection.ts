@@ -4,7 +4,7 @@ import { frameOf } from './contact/soft-point.js';
 import type { BodyInternals } from './planck-internals.js';
 import { partInner, type Scene } from './scene.js';
 import type { VelocitySolver } from './solver.js';
-import type { State } from './state.js';
+import { newState, type State } from './state.js';
 import type { Touch } from './contact/touch.js';
 
 const MOST_PASSES = 8;
@@ -18,11 +18,15 @@ const step = new TimeStep();
  * errors of third order in the step, so these moves are tiny; what they change of the energy is booked.
  */
 export class Projection {
+  private readonly last: State;
+
   constructor(
     private readonly scene: Scene,
     private readonly manager: ContactManager,
     private readonly solver: VelocitySolver,
-  ) {}
+  ) {
+    this.last = newState(scene.ids.length);
+  }
 
   /** Moves `state` (positions are also in planck, contacts evaluated there). Returns false when nothing moved. */
   apply(state: State): boolean {
@@ -30,28 +34,29 @@ export class Projection {
     const gaps = this.pressedGaps();
     const joints = solver.joints.filter((joint) => !joint.isReleased);
     if (joints.length === 0 && gaps.every(({ gap }) => Math.abs(gap) <= EXACT)) return false;
+    const changes = joints.length + gaps.length > 1;
     for (let pass = 0; pass < MOST_PASSES; pass += 1) {
       for (const joint of joints) joint.reader.joint.solvePositionConstraints(step);
       for (const gap of gaps) this.close(gap, state);
-      if (joints.length + gaps.length <= 1 || this.moved() <= EXACT) break;
+      if (!changes || this.moved() <= EXACT) break;
     }
-    let changed = false;
-    scene.bodies.forEach(({ c_position: { c, a } }, i) => {
-      changed ||= c.x !== state.x[i] || c.y !== state.y[i] || a !== state.a[i];
-    });
-    return changed;
+    return scene.bodies.some(
+      ({ c_position: { c, a } }, i) => c.x !== state.x[i] || c.y !== state.y[i] || a !== state.a[i],
+    );
   }
-
-  private readonly last: number[] = [];
 
   /** Greatest move since last asked. */
   private moved(): number {
+    const { last } = this;
+    const { bodies } = this.scene;
     let most = 0;
-    this.scene.bodies.forEach(({ c_position: { c, a } }, i) => {
-      const moves = [c.x - (this.last[3 * i] ?? 0), c.y - (this.last[3 * i + 1] ?? 0), a - (this.last[3 * i + 2] ?? 0)];
-      most = Math.max(most, ...moves.map(Math.abs));
-      [this.last[3 * i], this.last[3 * i + 1], this.last[3 * i + 2]] = [c.x, c.y, a];
-    });
+    for (let i = 0; i < bodies.length; i += 1) {
+      const { c, a } = bodies[i].c_position;
+      most = Math.max(most, Math.abs(c.x - last.x[i]), Math.abs(c.y - last.y[i]), Math.abs(a - last.a[i]));
+      last.x[i] = c.x;
+      last.y[i] = c.y;
+      last.a[i] = a;
+    }
     return most;
   }
 
@@ -75,12 +80,7 @@ export class Projection {
     const { touch, nx, ny, leverA, leverB } = gap;
     const a = partInner(this.scene, touch.bodyA);
     const b = partInner(this.scene, touch.bodyB);
-    const moveOf = (part: number, lever: number): number => {
-      if (part < 0) return 0;
-      const { c, a: angle } = this.scene.bodies[part].c_position;
-      return nx * (c.x - state.x[part]) + ny * (c.y - state.y[part]) + lever * (angle - state.a[part]);
-    };
-    const now = gap.gap + moveOf(touch.bodyB, leverB) - moveOf(touch.bodyA, leverA);
+    const now = gap.gap + this.moveOf(touch.bodyB, gap, leverB, state) - this.moveOf(touch.bodyA, gap, leverA, state);
     const k = a.m_invMass + b.m_invMass + a.m_invI * leverA * leverA + b.m_invI * leverB * leverB;
     if (k === 0) return;
     const push = -now / k;
@@ -90,6 +90,13 @@ export class Projection {
     b.c_position.c.x += b.m_invMass * push * nx;
     b.c_position.c.y += b.m_invMass * push * ny;
     b.c_position.a += b.m_invI * push * leverB;
+  }
+
+  /** How far the point of a part has moved along the normal since the step's end. */
+  private moveOf(part: number, { nx, ny }: PressedGap, lever: number, { x, y, a }: State): number {
+    if (part < 0) return 0;
+    const { c, a: angle } = this.scene.bodies[part].c_position;
+    return nx * (c.x - x[part]) + ny * (c.y - y[part]) + lever * (angle - a[part]);
   }
 
   /** Clears what the recorder was shown, before a step is booked. */

@@ -45,14 +45,11 @@ export class Recorder {
     this.widen();
     const row = this.writer.addRow(scene.time * scene.scale.time);
     const { buffer } = this.writer;
-    const offset = this.writer.offset(row);
-    const put = (column: number, value: number): void => {
-      buffer[offset + column] = value;
-    };
-    this.bodies(put);
-    this.accounts(put);
-    this.contacts(put);
-    this.links(put);
+    const at = this.writer.offset(row);
+    this.bodies(buffer, at);
+    this.accounts(buffer, at);
+    this.contacts(buffer, at);
+    this.links(buffer, at);
     return row;
   }
 
@@ -69,53 +66,59 @@ export class Recorder {
     this.writer.widen(this.layout);
   }
 
-  private bodies(put: (column: number, value: number) => void): void {
-    const { scene } = this.recorded;
-    const { length, speed, time } = scene.scale;
-    const { state } = scene;
-    this.layout.bodies.forEach(({ columns }, i) => {
-      put(columns.x, state.x[i] * length);
-      put(columns.y, state.y[i] * length);
-      put(columns.angle, state.a[i]);
-      put(columns.vx, state.vx[i] * speed);
-      put(columns.vy, state.vy[i] * speed);
-      put(columns.spin, state.w[i] / time);
-    });
+  private bodies(row: Float64Array, at: number): void {
+    const { state, scale } = this.recorded.scene;
+    const { length, speed, time } = scale;
+    const { bodies } = this.layout;
+    for (let i = 0; i < bodies.length; i += 1) {
+      const { columns } = bodies[i];
+      row[at + columns.x] = state.x[i] * length;
+      row[at + columns.y] = state.y[i] * length;
+      row[at + columns.angle] = state.a[i];
+      row[at + columns.vx] = state.vx[i] * speed;
+      row[at + columns.vy] = state.vy[i] * speed;
+      row[at + columns.spin] = state.w[i] / time;
+    }
   }
 
-  private accounts(put: (column: number, value: number) => void): void {
-    const { scene } = this.recorded;
-    const { energy } = scene.scale;
-    this.layout.accounts.forEach(({ columns }, index) => {
-      const booked = scene.books.booked[index];
-      columns.work.forEach((column, slot) => {
-        put(column, booked.workSoFar(slot) * energy);
-      });
-      if (columns.heat !== undefined) put(columns.heat, booked.heatSoFar() * energy);
-      if (columns.stored !== undefined) put(columns.stored, booked.stored * energy);
-      if (columns.input !== undefined) put(columns.input, booked.input * energy);
-    });
+  private accounts(row: Float64Array, at: number): void {
+    const { books, scale } = this.recorded.scene;
+    const { energy } = scale;
+    const { accounts } = this.layout;
+    for (let i = 0; i < accounts.length; i += 1) {
+      const { work, heat, stored, input } = accounts[i].columns;
+      const booked = books.booked[i];
+      for (let slot = 0; slot < work.length; slot += 1) row[at + work[slot]] = booked.workSoFar(slot) * energy;
+      if (heat !== undefined) row[at + heat] = booked.heatSoFar() * energy;
+      if (stored !== undefined) row[at + stored] = booked.stored * energy;
+      if (input !== undefined) row[at + input] = booked.input * energy;
+    }
   }
 
-  private contacts(put: (column: number, value: number) => void): void {
+  private contacts(row: Float64Array, at: number): void {
     const { scene, manager } = this.recorded;
     const { force, speed, length } = scene.scale;
-    this.layout.contacts.forEach(({ columns }, index) => {
-      const { reading } = manager.met[index];
-      put(columns.points, reading.points);
-      put(columns.normal, reading.normal * force);
-      put(columns.friction, reading.friction * force);
-      put(columns.slip, reading.slip * speed);
-      put(columns.x, reading.x * length);
-      put(columns.y, reading.y * length);
-      put(columns.nx, reading.nx);
-      put(columns.ny, reading.ny);
-      put(columns.segment, reading.segment);
-    });
+    const { contacts } = this.layout;
+    for (let i = 0; i < contacts.length; i += 1) {
+      const { columns } = contacts[i];
+      const { reading } = manager.met[i];
+      row[at + columns.points] = reading.points;
+      row[at + columns.normal] = reading.normal * force;
+      row[at + columns.friction] = reading.friction * force;
+      row[at + columns.slip] = reading.slip * speed;
+      row[at + columns.x] = reading.x * length;
+      row[at + columns.y] = reading.y * length;
+      row[at + columns.nx] = reading.nx;
+      row[at + columns.ny] = reading.ny;
+      row[at + columns.segment] = reading.segment;
+    }
   }
 
-  private links(put: (column: number, value: number) => void): void {
+  private links(row: Float64Array, at: number): void {
     const { joints, springs, dampers } = this.recorded;
+    const put = (column: number, value: number): void => {
+      row[at + column] = value;
+    };
     this.layout.joints.forEach(({ columns }, index) => {
       const reading = joints[index].reading();
       put(columns.fx, reading.fx);

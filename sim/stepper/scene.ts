@@ -145,7 +145,9 @@ export function anchorAt(scene: Scene, anchor: Anchor, out: { x: number; y: numb
 
 /** Moves planck's bodies to positions (and keeps where they came from, for the broad phase). */
 export function poseBodies(scene: Scene, x: Float64Array, y: Float64Array, a: Float64Array): void {
-  scene.bodies.forEach((body, i) => {
+  const { bodies } = scene;
+  for (let i = 0; i < bodies.length; i += 1) {
+    const body = bodies[i];
     body.m_sweep.c.x = x[i];
     body.m_sweep.c.y = y[i];
     body.m_sweep.a = a[i];
@@ -153,7 +155,7 @@ export function poseBodies(scene: Scene, x: Float64Array, y: Float64Array, a: Fl
     body.c_position.c.y = y[i];
     body.c_position.a = a[i];
     body.synchronizeTransform();
-  });
+  }
 }
 
 /** Poses one body between two states, for a look at its contacts; `share` 0 is the first. */
@@ -168,27 +170,33 @@ export function poseBetween(scene: Scene, index: number, from: State, to: State,
 
 /** Remembers the present positions as the start of a sweep. */
 export function startSweep(scene: Scene, { x, y, a }: State): void {
-  scene.bodies.forEach((body, i) => {
-    body.m_sweep.c0.x = x[i];
-    body.m_sweep.c0.y = y[i];
-    body.m_sweep.a0 = a[i];
-  });
+  const { bodies } = scene;
+  for (let i = 0; i < bodies.length; i += 1) {
+    const { m_sweep } = bodies[i];
+    m_sweep.c0.x = x[i];
+    m_sweep.c0.y = y[i];
+    m_sweep.a0 = a[i];
+  }
 }
 
 /** Writes velocities into planck's solver. */
 export function setVelocities(scene: Scene, vx: Float64Array, vy: Float64Array, w: Float64Array): void {
-  scene.bodies.forEach(({ c_velocity }, i) => {
+  const { bodies } = scene;
+  for (let i = 0; i < bodies.length; i += 1) {
+    const { c_velocity } = bodies[i];
     c_velocity.v.x = vx[i];
     c_velocity.v.y = vy[i];
     c_velocity.w = w[i];
-  });
+  }
 }
 
 /** Reads velocities out of planck's solver. */
 export function getVelocities(scene: Scene, vx: Float64Array, vy: Float64Array, w: Float64Array): void {
-  scene.bodies.forEach(({ c_velocity }, i) => {
+  const { bodies } = scene;
+  for (let i = 0; i < bodies.length; i += 1) {
+    const { c_velocity } = bodies[i];
     vx[i] = c_velocity.v.x;
     vy[i] = c_velocity.v.y;
     w[i] = c_velocity.w;
-  });
+  }
 }

@@ -1,9 +1,10 @@
 import { TimeStep } from 'planck';
-import { AxisRow } from './axis-row.js';
+import { AxisRow, type HeldRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
-import { NO_KEY, type Touch } from './contact/touch.js';
+import { NO_KEY, wasClosedKey, type Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
+import type { BodyInternals } from './planck-internals.js';
 import { getVelocities, partInner, setVelocities, type Scene } from './scene.js';
 import { ShockBooks } from './shock-books.js';
 import type { VelocitySolver } from './solver.js';
@@ -30,15 +31,6 @@ export interface Strike {
   rows?: AxisRow[];
 }
 
-/** A row that brings a rate to its target in a correction. */
-export interface HeldRow {
-  a: number;
-  b: number;
-  row: AxisRow;
-  target: number;
-  least: number;
-}
-
 interface Struck {
   touch: Touch;
   point: 0 | 1;
@@ -58,8 +50,6 @@ export class Shock {
   private readonly before: State;
   private readonly last: State;
   private readonly books: ShockBooks;
-  /** Keys that were closed before the present configuration was settled, by touch. */
-  private readonly known = new Map<Touch, [number, number]>();
   /** Friction that sticks, to be held in a correction. */
   private holding: Friction[] = [];
   /** What part of the restitution the last impact was left with, so that it added no energy. */
@@ -79,19 +69,16 @@ export class Shock {
 
   /** Remembers which points are closed, before the manager settles the new configuration. */
   remember(): void {
-    this.known.clear();
-    for (const touch of this.manager.touches) this.known.set(touch, [touch.closed[0], touch.closed[1]]);
-  }
-
-  wasClosed(touch: Touch, key: number): boolean {
-    const keys = this.known.get(touch);
-    return keys !== undefined && (keys[0] === key || keys[1] === key);
+    for (const { closed, closedBefore } of this.manager.touches) {
+      closedBefore[0] = closed[0];
+      closedBefore[1] = closed[1];
+    }
   }
 
   /** Readies contacts, joints and closed stops without any warm start; velocities are those of `state`. */
   private ready(state: State): void {
     setVelocities(this.scene, state.vx, state.vy, state.w);
-    this.solver.rigid.prepare(0, 0, this.scene.time);
+    this.solver.rigid.prepareShock(this.scene.time);
     for (const joint of this.solver.joints) {
       if (joint.isReleased) continue;
       joint.reader.save();
@@ -122,7 +109,7 @@ export class Shock {
       for (let j = 0; j < contact.v_pointCount; j += 1) {
         const { nA, nB, tA, tB } = this.solver.rigid.rate(touch, contact.v_points[j as 0 | 1]);
         const approach = nA - nB;
-        const isNew = !this.wasClosed(touch, contact.m_manifold.points[j].id.key);
+        const isNew = !wasClosedKey(touch, contact.m_manifold.points[j].id.key);
         if (isNew && approach > IMPACT) {
           isImpact = true;
           struck.push({ touch, point: j as 0 | 1, approach });
@@ -192,7 +179,8 @@ export class Shock {
    * step were closed all through it, so that their normal rate is nil either way; others are only kept from approaching.
    */
   private correct(state: State): void {
-    const rows = this.solver.rigid.live.flatMap((touch) => this.heldRows(touch));
+    const rows: HeldRow[] = [];
+    for (const touch of this.solver.rigid.live) this.holdTouch(touch, rows);
     for (const friction of this.holding) friction.aim();
     this.repeat(() => {
       this.sweepJoints();
@@ -203,25 +191,39 @@ export class Shock {
     this.books.correction(this.before, [...this.holding, ...rows]);
   }
 
-  /** Rows of a touch's closed points: along the normal, and along the tangent where it sticks. */
-  private heldRows(touch: Touch): HeldRow[] {
-    const { contact, bodyA: a, bodyB: b } = touch;
+  /** Adds the rows of a touch's closed points: along the normal, and along the tangent where it sticks. */
+  private holdTouch(touch: Touch, rows: HeldRow[]): void {
+    const { contact } = touch;
     const { v_normal: n } = contact;
-    const rows: HeldRow[] = [];
+    const sticks = touch.sliding === 0 && this.isRubbing(touch);
     for (let j = 0; j < contact.v_pointCount; j += 1) {
       const { rB } = contact.v_points[j];
-      const { c } = this.scene.bodies[b].c_position;
-      const aimed = (nx: number, ny: number, target: number, least: number): HeldRow => {
-        const row = new AxisRow(partInner(this.scene, a), partInner(this.scene, b));
-        row.aim(nx, ny, c.x + rB.x, c.y + rB.y);
-        return { a, b, row, target, least };
-      };
       const isPressed = this.isPressed(touch, contact.m_manifold.points[j].id.key);
-      rows.push(aimed(n.x, n.y, 0, isPressed ? -Infinity : 0));
-      const sticks = touch.sliding === 0 && this.isRubbing(touch);
-      if (sticks) rows.push(aimed(n.y, -n.x, contact.m_tangentSpeed, -Infinity));
+      rows.push(this.aimed(touch, 2 * j, n.x, n.y, rB, 0, isPressed ? -Infinity : 0));
+      if (sticks) rows.push(this.aimed(touch, 2 * j + 1, n.y, -n.x, rB, contact.m_tangentSpeed, -Infinity));
     }
-    return rows;
+  }
+
+  private aimed(
+    touch: Touch,
+    slot: number,
+    nx: number,
+    ny: number,
+    rB: { x: number; y: number },
+    target: number,
+    least: number,
+  ): HeldRow {
+    const held = (touch.held[slot] ??= this.newRow(touch));
+    const { c } = this.scene.bodies[touch.bodyB].c_position;
+    held.row.aim(nx, ny, c.x + rB.x, c.y + rB.y);
+    held.row.impulse = 0;
+    held.target = target;
+    held.least = least;
+    return held;
+  }
+
+  private newRow({ bodyA: a, bodyB: b }: Touch): HeldRow {
+    return { a, b, row: new AxisRow(partInner(this.scene, a), partInner(this.scene, b)), target: 0, least: 0 };
   }
 
   private isPressed({ pressed }: Touch, key: number): boolean {
@@ -281,30 +283,36 @@ export class Shock {
   }
 
   /** Repeats a sweep until the velocities stand still. */
-  private repeat(sweep: () => void): void {
-    const { scene, solver, last } = this;
-    getVelocities(scene, last.vx, last.vy, last.w);
-    const most = sweepsFor(2 * (solver.rigid.live.length + solver.joints.length));
+  private repeat(
+    sweep: () => void,
+    bodies: readonly BodyInternals[] = this.scene.bodies,
+    touches = this.solver.rigid.live.length,
+  ): void {
+    const { solver } = this;
+    this.change(bodies);
+    const most = sweepsFor(2 * (touches + solver.joints.length));
     for (let i = 0; i < most; i += 1) {
       sweep();
       solver.sweeps += 1;
-      if (this.change() <= CONVERGED) return;
+      if (this.change(bodies) <= CONVERGED) return;
     }
     solver.unconverged += 1;
   }
 
-  private change(): number {
+  /** Greatest change of a velocity since last asked, relative to the greatest. */
+  private change(bodies: readonly BodyInternals[]): number {
     const { vx, vy, w } = this.last;
     let change = 0;
     let most = 1e-3;
-    this.scene.bodies.forEach(({ c_velocity }, i) => {
+    for (let i = 0; i < bodies.length; i += 1) {
+      const { c_velocity } = bodies[i];
       const { v } = c_velocity;
       change = Math.max(change, Math.abs(v.x - vx[i]), Math.abs(v.y - vy[i]), Math.abs(c_velocity.w - w[i]));
       most = Math.max(most, Math.abs(v.x), Math.abs(v.y), Math.abs(c_velocity.w));
       vx[i] = v.x;
       vy[i] = v.y;
       w[i] = c_velocity.w;
-    });
+    }
     return change / most;
   }
 
@@ -348,9 +356,13 @@ export class Shock {
   softStrikes(state: State): Strike[] {
     if (this.solver.soft.isEmpty) return [];
     setVelocities(this.scene, state.vx, state.vy, state.w);
-    const strikes = this.solver.soft.strikes((touch, key) => this.wasClosed(touch, key));
+    const strikes = this.solver.soft.strikes();
     for (const strike of strikes) strike.effectiveMass = this.massThroughJoints(strike.rows ?? []);
     return strikes;
+  }
+
+  private isJoined(body: number): boolean {
+    return body >= 0 && this.solver.joints.some(({ isReleased, a, b }) => !isReleased && (a === body || b === body));
   }
 
   /** Effective mass of rows that share an impulse equally, joints holding. */
@@ -380,19 +392,30 @@ export class Shock {
    * alone would take, joints holding: Σ λ u / u_max². For one point it is 1 / (n M⁻¹ nᵀ) through the joints.
    */
   private effectiveMass(items: Struck[], state: State): number {
-    const chosen = new Set(items.map(({ touch }) => touch));
-    this.ready(state);
-    const live = this.solver.rigid.live;
-    const all = live.splice(0, live.length, ...live.filter((touch) => chosen.has(touch)));
-    for (const touch of live) touch.contact.v_friction = 0;
-    this.iterate();
+    const touches = [...new Set(items.map(({ touch }) => touch))];
+    const { rigid } = this.solver;
+    const { bodyA, bodyB } = touches[0];
+    const isJoined = this.isJoined(bodyA) || this.isJoined(bodyB);
+    if (isJoined) this.ready(state);
+    else setVelocities(this.scene, state.vx, state.vy, state.w);
+    for (const touch of touches) {
+      rigid.clear(touch);
+      touch.contact.v_friction = 0;
+    }
+    this.repeat(
+      () => {
+        if (isJoined) this.sweepJoints();
+        rigid.solveThese(touches);
+      },
+      isJoined ? this.scene.bodies : [partInner(this.scene, bodyA), partInner(this.scene, bodyB)],
+      touches.length,
+    );
     let energy = 0;
     let most = 0;
     for (const { touch, point, approach } of items) {
       energy += touch.contact.v_points[point].normalImpulse * approach;
       most = Math.max(most, approach);
     }
-    live.splice(0, live.length, ...all);
     return energy / (most * most);
   }
 }

@@ -33,7 +33,7 @@ export class SlidingModes {
   private ready(): readonly Touch[] {
     const { scene, solver } = this;
     setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
-    solver.rigid.prepare(0, 0, scene.time);
+    solver.rigid.prepareShock(scene.time);
     return solver.rigid.live;
   }
 

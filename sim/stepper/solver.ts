@@ -21,6 +21,8 @@ export class VelocitySolver {
   readonly rigid: RigidContacts;
   readonly soft: SoftContacts;
   readonly rolling: RollingResistance[];
+  /** Dry friction of joints and rolling. */
+  private readonly dry: readonly Friction[];
   private readonly before: State;
   sweeps = 0;
   solves = 0;
@@ -38,6 +40,7 @@ export class VelocitySolver {
     this.rolling = manager.pairs
       .filter((pair) => pair.rollingResistance > 0)
       .map((pair) => new RollingResistance(scene, pair));
+    this.dry = [...joints.flatMap(({ frictionRow }) => frictionRow ?? []), ...this.rolling];
     this.before = newState(scene.ids.length);
   }
 
@@ -139,8 +142,8 @@ export class VelocitySolver {
   }
 
   /** All dry friction but that of planck's contacts. */
-  frictions(): Friction[] {
-    return [...this.joints.flatMap(({ frictionRow }) => frictionRow ?? []), ...this.rolling, ...this.soft.live];
+  frictions(): readonly Friction[] {
+    return this.soft.isEmpty ? this.dry : [...this.dry, ...this.soft.live];
   }
 
   /** Lets go what has reached its static limit; true when the solve must be done again with a lower coefficient. */

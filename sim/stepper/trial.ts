@@ -25,9 +25,7 @@ export class Trial {
   readonly mean: State;
   readonly middle: State;
   readonly next: State;
-  private readonly modes = new Map<Touch | Friction, 1 | -1 | 0>();
-  /** Sliding rates where the step starts. */
-  private readonly slipNow = new Map<Touch, number>();
+  private readonly modes = new Map<Friction, 1 | -1 | 0>();
   private readonly startSlip = new Map<Touch | Friction, number>();
   private lastHalf = 0;
   /** The state that the trial started from. */
@@ -52,17 +50,17 @@ export class Trial {
   begin(): void {
     const { scene, manager, solver } = this;
     setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
-    this.slipNow.clear();
     for (const touch of manager.touches) {
-      if (touch.sliding !== 0) this.slipNow.set(touch, solver.rigid.slipNow(touch, scene.time));
+      touch.slidingAtStart = touch.sliding;
+      touch.slipAtStart = touch.sliding === 0 ? 0 : solver.rigid.slipNow(touch, scene.time);
     }
     this.modes.clear();
-    for (const touch of this.manager.touches) this.modes.set(touch, touch.sliding);
-    for (const friction of this.solver.frictions()) this.modes.set(friction, friction.sliding);
+    for (const friction of solver.frictions()) this.modes.set(friction, friction.sliding);
   }
 
   private restoreModes(): void {
-    for (const [item, sliding] of this.modes) item.sliding = sliding;
+    for (const touch of this.manager.touches) touch.sliding = touch.slidingAtStart;
+    for (const [friction, sliding] of this.modes) friction.sliding = sliding;
   }
 
   /** Tries a step of `tau` from `state`: afterwards planck holds the end configuration, and contacts are evaluated there. */
@@ -93,7 +91,7 @@ export class Trial {
     }
     startSweep(scene, state);
     poseBodies(scene, next.x, next.y, next.a);
-    this.manager.setTravel((i) => tau * (Math.hypot(mean.vx[i], mean.vy[i]) + Math.abs(mean.w[i]) * scene.reach[i]));
+    this.manager.setTravel(mean, tau);
     this.manager.refresh();
     setVelocities(scene, next.vx, next.vy, next.w);
     this.motion.state = next;
@@ -102,12 +100,15 @@ export class Trial {
   /** Sliding rates at the step's start; what has only just broken away had none. */
   private noteSlips(state: State): void {
     this.startSlip.clear();
-    const sliding = this.solver.rigid.live.filter((touch) => touch.sliding !== 0);
-    const frictions = this.solver.frictions().filter((friction) => friction.sliding !== 0);
-    if (sliding.length === 0 && frictions.length === 0) return;
+    for (const touch of this.solver.rigid.live) {
+      if (touch.sliding !== 0) this.startSlip.set(touch, (touch.sliding * touch.slipAtStart) / STILL);
+    }
+    const frictions = this.solver.frictions();
+    if (frictions.length === 0) return;
     setVelocities(this.scene, state.vx, state.vy, state.w);
-    for (const touch of sliding) this.startSlip.set(touch, (touch.sliding * (this.slipNow.get(touch) ?? 0)) / STILL);
-    for (const friction of frictions) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
+    for (const friction of frictions) {
+      if (friction.sliding !== 0) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
+    }
   }
 
   /**

@@ -3,6 +3,7 @@ import type { Track } from '../../mechanism/kinds/track.js';
 import type { BodyInternals, ContactInternals, FixtureInternals } from '../planck-internals.js';
 import { bodyInternals, fixtureInternals } from '../planck-internals.js';
 import type { Scene } from '../scene.js';
+import type { State } from '../state.js';
 import { buildChains, type Chain } from './chain.js';
 import { coreAgainstCore } from './core-core.js';
 import { coreAgainstCorners } from './corners.js';
@@ -10,7 +11,7 @@ import { coresOf, cornersOf } from './outline.js';
 import { Pair } from './pair.js';
 import { CORE, CoreShape, CornersShape, SURFACE, SurfaceShape } from './shapes.js';
 import { coreAgainstSurface, type PairOf } from './surface.js';
-import { fillManifold, isClosedKey, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
+import { fillManifold, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
 
 /** A point nearer than this is closed [engine length]; touches are found to a quarter of it. */
 export const SKIN = 1e-7;
@@ -29,6 +30,8 @@ export class ContactManager {
   /** Pairs that have met, or may: those that have columns in the recording. */
   readonly met: Pair[] = [];
   readonly touches: Touch[] = [];
+  /** Counts the configurations and sets of closed points that there have been. */
+  version = 0;
   readonly pairOf: PairOf;
   private readonly tracks: Track[];
   private readonly bodyPairs = new Map<number, number>();
@@ -44,7 +47,7 @@ export class ContactManager {
     this.tracks = mechanism.tracks.map((track) => scaleTrack(track, scale.length));
     this.travel = new Float64Array(scene.ids.length);
     this.pairs = mechanism.contacts.map((pair, index) => new Pair(scene, pair, index));
-    if (this.pairs.length <= OPEN_AT_ONCE) this.met.push(...this.pairs);
+    if (this.pairs.length <= OPEN_AT_ONCE) for (const pair of this.pairs) this.meet(pair);
     this.indexPairs();
     this.pairOf = (bodyA, bodyB, track) =>
       bodyB < 0
@@ -123,6 +126,7 @@ export class ContactManager {
     for (const body of bodies) body.synchronizeFixtures();
     inner.findNewContacts();
     this.touches.length = 0;
+    this.version += 1;
     let next = inner.m_contactList;
     while (next) {
       const contact = next;
@@ -151,6 +155,7 @@ export class ContactManager {
     const bodyB = this.owner.get(contact.m_fixtureB.m_body) ?? -1;
     this.seen += 1;
     const touch = newTouch(this.seen, contact, bodyA, bodyB);
+    if (bodyA >= 0) touch.pair = this.pairOf(bodyA, bodyB, -1);
     contact.m_manifold.pointCount = 0;
     this.known.set(contact, touch);
     touch.curved = touch.shapeA.kind !== CORE && !touch.shapeA.chain.straight;
@@ -174,20 +179,28 @@ export class ContactManager {
     });
   }
 
+  /** Works out the candidates anew where bodies have moved by next to nothing since `refresh`. */
+  reevaluate(): void {
+    this.version += 1;
+    for (const touch of this.touches) this.evaluate(touch);
+  }
+
   /** Works out the candidate points of a touch at the bodies' present transforms. */
   evaluate(touch: Touch): void {
     const { m_fixtureA, m_fixtureB } = touch.contact;
     const { shapeA } = touch;
     if (shapeA.kind === CORE) {
-      touch.pair = this.pairOf(touch.bodyA, touch.bodyB, -1);
       coreAgainstCore(touch, m_fixtureA.m_body.m_xf, m_fixtureB.m_body.m_xf);
     } else if (shapeA.kind === SURFACE) coreAgainstSurface(touch, m_fixtureB.m_body.m_xf, this.pairOf);
     else coreAgainstCorners(touch, m_fixtureB.m_body.m_xf, this.pairOf);
   }
 
-  /** Sets how far each body may have moved since the closed points were last settled. */
-  setTravel(bound: (body: number) => number): void {
-    for (let i = 0; i < this.travel.length; i += 1) this.travel[i] = bound(i);
+  /** Sets how far each body may move in a step with these mean velocities. */
+  setTravel({ vx, vy, w }: State, tau: number): void {
+    const { travel, scene } = this;
+    for (let i = 0; i < travel.length; i += 1) {
+      travel[i] = tau * (Math.hypot(vx[i], vy[i]) + Math.abs(w[i]) * scene.reach[i]);
+    }
   }
 
   private travelOf(touch: Touch): number {
@@ -241,6 +254,7 @@ export class ContactManager {
   settle(touch: Touch): void {
     if (!touch.armed && lowestGap(touch) >= 0) touch.armed = true;
     const wasActive = this.isActive(touch);
+    const [first, second] = touch.closed;
     touch.closed[0] = NO_KEY;
     touch.closed[1] = NO_KEY;
     if (touch.armed && touch.pair >= 0) {
@@ -252,6 +266,7 @@ export class ContactManager {
         slot = 1;
       }
     }
+    if (touch.closed[0] !== first || touch.closed[1] !== second) this.version += 1;
     if (this.isActive(touch)) this.meet(this.pairs[touch.pair]);
     touch.openGap = leastOpenGap(touch, DEEPEST);
     touch.isFresh = this.isActive(touch) && (!wasActive || touch.pair !== touch.startPair);
@@ -259,11 +274,13 @@ export class ContactManager {
     touch.startLink = touch.foot.link;
     touch.startSeam = this.seamNow(touch);
     // Trials of the next step all start from here, whatever the ones before them found at their ends.
-    fillManifold(touch, ({ key }) => isClosedKey(touch, key));
+    fillManifold(touch);
   }
 
   private meet(pair: Pair): void {
-    if (this.pairs.length > OPEN_AT_ONCE && !this.met.includes(pair)) this.met.push(pair);
+    if (pair.isMet) return;
+    pair.isMet = true;
+    this.met.push(pair);
   }
 
   /** A compliant pair may overlap as far as its force allows. */

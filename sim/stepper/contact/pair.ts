@@ -45,6 +45,8 @@ export class Pair {
   readonly isSoft: boolean;
   readonly rubs: boolean;
   readonly reading: PairReading = { points: 0, normal: 0, friction: 0, slip: 0, x: 0, y: 0, nx: 0, ny: 0, segment: -1 };
+  /** It has columns in the recording. */
+  isMet = false;
   /** It carried force over the last step. */
   isLasting = false;
   wasSliding = false;

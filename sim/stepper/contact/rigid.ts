@@ -22,6 +22,9 @@ export class RigidContacts {
   /** Touches whose closed points are in the present solve. */
   readonly live: Touch[] = [];
   private half = 0;
+  /** The manager's version, and the time, that the live touches are ready for without a step; −1 while they are not. */
+  private readyFor = -1;
+  private readyAt = 0;
 
   constructor(
     private readonly scene: Scene,
@@ -36,6 +39,7 @@ export class RigidContacts {
   /** Readies the closed points at the mid-step configuration; `ratio` > 0 scales last step's impulses (warm start). */
   prepare(half: number, ratio: number, time: number): void {
     this.half = half;
+    this.readyFor = -1;
     step.warmStarting = ratio > 0;
     step.dtRatio = ratio;
     this.live.length = 0;
@@ -43,7 +47,7 @@ export class RigidContacts {
       if (!this.manager.isActive(touch)) continue;
       if (touch.curved) {
         this.manager.evaluate(touch);
-        fillManifold(touch, ({ key }) => isClosedKey(touch, key));
+        fillManifold(touch);
       }
       if (touch.pair < 0 || touch.contact.m_manifold.pointCount === 0) continue;
       if (this.manager.pairs[touch.pair].isSoft) continue;
@@ -55,10 +59,39 @@ export class RigidContacts {
     if (ratio > 0) for (const { contact } of this.live) contact.warmStartConstraint(step);
   }
 
+  /** Readies the closed points for impulses alone at the present configuration; what is ready is only cleared. */
+  prepareShock(time: number): void {
+    const { version } = this.manager;
+    if (this.readyFor === version && this.readyAt === time) {
+      for (const touch of this.live) this.clear(touch);
+      return;
+    }
+    this.prepare(0, 0, time);
+    this.readyFor = version;
+    this.readyAt = time;
+  }
+
+  /** Takes a ready touch back to no impulse, no restitution and its present friction. */
+  clear(touch: Touch): void {
+    const { contact } = touch;
+    contact.m_friction = this.frictionOf(touch);
+    contact.v_friction = contact.m_friction;
+    for (let j = 0; j < contact.v_pointCount; j += 1) {
+      const point = contact.v_points[j as 0 | 1];
+      point.normalImpulse = 0;
+      point.tangentImpulse = 0;
+      point.velocityBias = 0;
+    }
+  }
+
+  private frictionOf(touch: Touch): number {
+    const pair = this.pairOf(touch);
+    return touch.sliding === 0 ? pair.staticFriction : pair.kineticFriction;
+  }
+
   private ready(touch: Touch, time: number): void {
     const { contact } = touch;
-    const pair = this.pairOf(touch);
-    contact.m_friction = touch.sliding === 0 ? pair.staticFriction : pair.kineticFriction;
+    contact.m_friction = this.frictionOf(touch);
     contact.m_restitution = 0;
     contact.m_tangentSpeed = 0;
     contact.initConstraint(step);
@@ -81,7 +114,11 @@ export class RigidContacts {
   }
 
   solve(): void {
-    for (const { contact } of this.live) contact.solveVelocityConstraint(step);
+    this.solveThese(this.live);
+  }
+
+  solveThese(touches: readonly Touch[]): void {
+    for (const { contact } of touches) contact.solveVelocityConstraint(step);
   }
 
   keepImpulses(): void {

@@ -4,7 +4,7 @@ import type { Strike } from '../shock.js';
 import type { ContactManager } from './manager.js';
 import { addWork, type Pair } from './pair.js';
 import { SoftPoint } from './soft-point.js';
-import { isClosedKey, type Touch } from './touch.js';
+import { isClosedKey, wasClosedKey, type Touch } from './touch.js';
 
 /** An approach slower than this is rounding, not a touch [engine speed]. */
 const APPROACH = 1e-6;
@@ -139,12 +139,12 @@ export class SoftContacts {
   }
 
   /** Touches that begin now, as the run's events have them: no impulse, so nothing else happens. */
-  strikes(wasClosed: (touch: Touch, key: number) => boolean): Strike[] {
+  strikes(): Strike[] {
     const strikes = new Map<Pair, Strike>();
     for (const touch of this.touches()) {
       for (let i = 0; i < touch.count; i += 1) {
         const { key } = touch.candidates[i];
-        if (!isClosedKey(touch, key) || wasClosed(touch, key)) continue;
+        if (!isClosedKey(touch, key) || wasClosedKey(touch, key)) continue;
         const point = this.newPoint(touch, key);
         point.aimAt(i as 0 | 1, 0);
         const approach = -point.normal.rate();

@@ -1,3 +1,4 @@
+import type { HeldRow } from '../axis-row.js';
 import type { ContactInternals, XY } from '../planck-internals.js';
 import { newFoot } from '../../geometry/index.js';
 import type { ChainFoot } from './chain.js';
@@ -49,6 +50,8 @@ export interface Touch {
 
   /** Keys of the points closed at the start of the step (−1: none). */
   closed: [number, number];
+  /** Keys that were closed before the present configuration was settled. */
+  closedBefore: [number, number];
   /** Least gap of the points that are not closed, at the start of the step. */
   openGap: number;
   /** Of a track drawn free on both sides: the side the body is on; otherwise the track's own. 0: not known yet. */
@@ -61,6 +64,11 @@ export interface Touch {
 
   /** +1 or −1: slides that way along the tangent; 0: sticks. */
   sliding: 1 | -1 | 0;
+  /** What `sliding` was, and the sliding rate, where the step starts: every trial of it starts from there. */
+  slidingAtStart: 1 | -1 | 0;
+  slipAtStart: number;
+  /** Rows that hold its points in a correction: a normal and a tangent each; made when first needed. */
+  held: HeldRow[];
   /** Where it last was on its chain. */
   foot: ChainFoot;
   /** The geometry changes within a step by more than planck's local manifold follows (curved surfaces). */
@@ -91,11 +99,15 @@ export function newTouch(id: number, contact: ContactInternals, bodyA: number, b
     candidates: [newCandidate(), newCandidate()],
     count: 0,
     closed: [NO_KEY, NO_KEY],
+    closedBefore: [NO_KEY, NO_KEY],
     openGap: Infinity,
     side: 0,
     armed: true,
     pressed: [NO_KEY, NO_KEY],
     sliding: 0,
+    slidingAtStart: 0,
+    slipAtStart: 0,
+    held: [],
     foot: { foot: newFoot(), link: 0, held: false },
     curved: false,
   };
@@ -115,6 +127,9 @@ export function setCandidate(touch: Touch, index: 0 | 1, key: number, gap: numbe
 
 export const isClosedKey = (touch: Touch, key: number): boolean => touch.closed[0] === key || touch.closed[1] === key;
 
+export const wasClosedKey = ({ closedBefore }: Touch, key: number): boolean =>
+  closedBefore[0] === key || closedBefore[1] === key;
+
 /**
  * Least gap among the candidates that were not closed at the start of the step. One that overlaps by more than `deepest`
  * did not come through the surface but round an end of it.
@@ -130,12 +145,12 @@ export function leastOpenGap(touch: Touch, deepest: number): number {
 }
 
 /**
- * Puts the chosen candidates into planck's manifold. Warm-starting impulses of points that were there are kept.
- * @returns the number of points
+ * Puts the closed candidates into planck's manifold. Warm-starting impulses of points that were there are kept.
  */
-export function fillManifold(touch: Touch, use: (candidate: Candidate) => boolean): number {
+export function fillManifold(touch: Touch): void {
   const { m_manifold: manifold } = touch.contact;
-  const [k0, k1] = [manifold.points[0].id.key, manifold.points[1].id.key];
+  const k0 = manifold.points[0].id.key;
+  const k1 = manifold.points[1].id.key;
   const n0 = manifold.points[0].normalImpulse;
   const t0 = manifold.points[0].tangentImpulse;
   const n1 = manifold.points[1].normalImpulse;
@@ -149,7 +164,7 @@ export function fillManifold(touch: Touch, use: (candidate: Candidate) => boolea
   let used = 0;
   for (let i = 0; i < touch.count; i += 1) {
     const candidate = touch.candidates[i as 0 | 1];
-    if (!use(candidate)) continue;
+    if (!isClosedKey(touch, candidate.key)) continue;
     const point = manifold.points[used];
     point.localPoint.x = candidate.local.x;
     point.localPoint.y = candidate.local.y;
@@ -160,5 +175,4 @@ export function fillManifold(touch: Touch, use: (candidate: Candidate) => boolea
     used += 1;
   }
   manifold.pointCount = used;
-  return used;
 }
