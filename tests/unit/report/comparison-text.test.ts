@@ -30,7 +30,7 @@ const slower = (copy: Recording): void => {
 const section = (result: CheckResult, width = 88): string[] => {
   const lines = checkText(result, { width }).split('\n');
   const from = lines.findIndex((line) => line.includes('Compared'));
-  return lines.slice(from, lines.indexOf('Findings') < 0 ? undefined : lines.indexOf('Findings'));
+  return lines.slice(from, lines.includes('Findings') ? lines.indexOf('Findings') : undefined);
 };
 
 describe('the text of a comparison', () => {
