@@ -19,7 +19,7 @@ export interface PieceByPiece {
 /** The solver that a check runs. */
 export interface Engine {
   /** What it does not simulate; an error refuses the run. */
-  unsupported(mechanism: Mechanism): Finding[];
+  unsupported(mechanism: Mechanism, options: StepperOptions): Finding[];
   startRun(mechanism: Mechanism, options: StepperOptions): PieceByPiece;
 }
 
@@ -49,7 +49,7 @@ export function runBoth(
   options: StepperOptions,
   terminal: Terminal,
 ): Pick<CheckInput, 'stepper' | 'audit' | 'findings'> {
-  const findings = stepper.unsupported(mechanism);
+  const findings = stepper.unsupported(mechanism, options);
   const isRefused = findings.some(({ severity }) => severity === 'error');
   const stepped = isRefused ? null : toEnd(stepper.startRun(mechanism, options), 'stepper', terminal);
   if (!auditor) return { findings, stepper: stepped };
