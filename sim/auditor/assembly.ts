@@ -14,7 +14,7 @@ import { buildLoad } from './kinds/load.js';
 import { buildRolling } from './kinds/rolling.js';
 import { RopeParts } from './kinds/rope.js';
 import { buildSpring, type SpringParts } from './kinds/spring.js';
-import { Account } from './ledgers.js';
+import type { Account } from './ledgers.js';
 import { buildSystem, type System } from './system.js';
 import type { ContactPoint, Unilateral } from './unilateral.js';
 

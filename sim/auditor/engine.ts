@@ -1,14 +1,18 @@
 import type { Moment } from '../mechanism/kinds/load.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { RunEnd } from '../recording/recording.js';
-import { AT_REST, restScales, StationWatch } from '../recording/station-watch.js';
+import { AT_REST, StationWatch } from '../recording/station-watch.js';
 import { assemble, type Assembly } from './assembly.js';
 import { findEvent } from './event-finder.js';
 import { Impacts } from './impacts.js';
+import { unrest } from './rest.js';
 import { RunLog } from './run-log.js';
 import { Dop853 } from './method/dop853.js';
 import { Modes, type Decided } from './modes.js';
 import { StateMotion } from './motion.js';
+import { Latches } from './latches.js';
+import { hasCome, momentsOf } from './moments.js';
+import { Pace } from './pace.js';
 import { Projection } from './projection.js';
 import { Recorder } from './recorder.js';
 import { connectStores } from './stores.js';
@@ -22,11 +26,6 @@ export interface EngineOptions {
   rows: number;
 }
 
-/** Steps are held so short that nothing crosses more than this part of the mechanism, or turns more than this [rad]. */
-const TRAVEL = 0.2;
-const TURN = 0.5;
-/** A turning body counts by a point this far out. */
-const REACH = 0.1;
 const LEAST_STEP = 1e-14;
 const MOST_EVENTS = 200_000;
 /** A point this far on the wrong side is behind the surface, where nothing is solid. */
@@ -52,12 +51,12 @@ export class Engine {
   private readonly stations: StationWatch;
   private readonly log: RunLog;
   private readonly moments: number[];
-  private readonly released = new Set<string>();
+  private readonly pace: Pace;
+  private readonly latches: Latches;
   private h: number;
   private nextRow = 0;
   private events = 0;
   private steps = 0;
-  private greatest = { speed: 1e-2, spin: 1, energy: 1e-3 };
 
   constructor(
     private readonly mechanism: Mechanism,
@@ -82,7 +81,9 @@ export class Engine {
     this.stations = new StationWatch(mechanism, this.motion);
     this.recorder = new Recorder(this.assembly);
     this.log = new RunLog(this.assembly, this.recorder, this.stations);
-    this.moments = this.allMoments();
+    this.moments = momentsOf(mechanism, this.stations, system.units.time);
+    this.latches = new Latches(mechanism, this.assembly, this.stations);
+    this.pace = new Pace(system, options.tolerance, this.duration());
     this.h = 1e-4 * this.duration();
     this.begin();
   }
@@ -96,33 +97,8 @@ export class Engine {
   }
 
   private isOn(from: Moment | undefined, until: Moment | undefined): boolean {
-    return (!from || this.hasCome(from)) && !(until && this.hasCome(until));
-  }
-
-  private hasCome(moment: Moment): boolean {
-    if ('time' in moment) return this.seconds() >= moment.time * (1 - 1e-12) - 1e-15;
-    return this.stations.isReached(moment.station);
-  }
-
-  private allMoments(): number[] {
-    const { loads, drives, latches, run, tracks } = this.mechanism;
-    const { time } = this.assembly.system.units;
-    const of = (moment: Moment | undefined): number[] => (moment && 'time' in moment ? [moment.time] : []);
-    const seconds = [
-      ...this.stations.times(),
-      ...[...loads, ...drives].flatMap(({ from, until }) => [...of(from), ...of(until)]),
-      ...drives.flatMap(({ law }) =>
-        law.kind === 'effortCurve' && law.over === 'time' ? law.curve.map(([x]) => x) : [],
-      ),
-      ...drives.flatMap(({ law }) =>
-        law.kind === 'speed' && typeof law.value !== 'number' ? law.value.map(([x]) => x) : [],
-      ),
-      ...tracks.flatMap(({ surfaceSpeed }) => (typeof surfaceSpeed === 'number' ? [] : surfaceSpeed.map(([x]) => x))),
-      ...latches.flatMap(({ releasesAt }) => ('time' in releasesAt ? [releasesAt.time] : [])),
-      ...('time' in run.until ? [run.until.time] : []),
-      run.atMost,
-    ];
-    return seconds.map((moment) => moment / time).sort((a, b) => a - b);
+    const come = (moment: Moment): boolean => hasCome(moment, this.seconds(), this.stations);
+    return (!from || come(from)) && !(until && come(until));
   }
 
   private derivative(t: number, y: Float64Array, dy: Float64Array): void {
@@ -166,11 +142,13 @@ export class Engine {
   /** One step of the integration, up to the first event in it. */
   step(): void {
     this.steps += 1;
-    this.measure();
+    this.pace.measure(this.v, this.scale);
     const watches = this.watches();
     const next = this.moments.find((moment) => moment > this.t * (1 + 1e-14) + 1e-300) ?? Infinity;
     this.method.restart(this.t, this.y);
-    const taken = this.tryStep(Math.min(this.h, this.longest(), next - this.t));
+    const taken = this.tryStep(
+      Math.min(this.h, this.pace.longest(this.v, this.assembly.dynamics.acceleration), next - this.t),
+    );
     if (taken === null) return;
     const event = findEvent(
       this.method,
@@ -226,56 +204,21 @@ export class Engine {
     }
   }
 
-  private longest(): number {
-    let speed = 0;
-    let spin = 0;
-    const { count } = this.assembly.system;
-    const { acceleration } = this.assembly.dynamics;
-    let push = 0;
-    for (let i = 0; i < count; i += 1) {
-      speed = Math.max(speed, Math.hypot(this.v[3 * i], this.v[3 * i + 1]));
-      spin = Math.max(spin, Math.abs(this.v[3 * i + 2]));
-      push = Math.max(push, Math.hypot(acceleration[3 * i], acceleration[3 * i + 1]));
-    }
-    // Travel s = v h + a h²/2, solved for h.
-    const travel = (2 * TRAVEL) / (speed + Math.sqrt(speed * speed + 2 * push * TRAVEL) + 1e-300);
-    return Math.min(travel, TURN / (spin + 1e-300), this.duration() / 20);
-  }
-
-  /** Error scales by the greatest speed, spin and energy so far, so that they suit every size. */
-  private measure(): void {
-    const { mass, count } = this.assembly.system;
-    let kinetic = 0;
-    for (let i = 0; i < count; i += 1) {
-      this.greatest.speed = Math.max(this.greatest.speed, Math.hypot(this.v[3 * i], this.v[3 * i + 1]));
-      this.greatest.spin = Math.max(this.greatest.spin, Math.abs(this.v[3 * i + 2]));
-      for (let k = 3 * i; k < 3 * i + 3; k += 1) kinetic += 0.5 * mass[k] * this.v[k] ** 2;
-    }
-    this.greatest.energy = Math.max(this.greatest.energy, kinetic);
-    const n = this.q.length;
-    const { tolerance } = this.options;
-    for (let i = 0; i < n; i += 1) {
-      this.scale[i] = tolerance;
-      this.scale[n + i] = tolerance * (i % 3 === 2 ? this.greatest.spin : this.greatest.speed);
-    }
-    this.scale.fill(tolerance * this.greatest.energy, 2 * n);
-  }
-
   private watches(): Watch[] {
     const reach = this.mechanism.bodies.map((_, i) => this.speedBound(i));
-    const h = Math.min(this.h, this.longest());
-    const latches = this.mechanism.latches.flatMap(({ id, joint: of, releasesAt }) => {
-      const joint = this.assembly.joints.find((candidate) => candidate.id === of);
-      if (this.released.has(id) || !joint || !('force' in releasesAt)) return [];
-      const limit = releasesAt.force / this.log.forceUnit;
-      return [{ id, left: () => limit - joint.reactionSize() }];
-    });
+    const h = Math.min(this.h, this.pace.longest(this.v, this.assembly.dynamics.acceleration));
     const isNear = (point: ContactPoint): boolean => {
       point.locate(this.q);
       const travel = 2 * h * ((reach[point.bodyA] ?? 0) + (reach[point.bodyB] ?? 0)) + 2 * h * h * 2 + 1e-3;
       return !(Math.abs(point.gap) > Math.max(travel, 0.05));
     };
-    const list = watchList(this.assembly, this.stations, this.motion.at(this.q, this.v), latches, isNear);
+    const list = watchList(
+      this.assembly,
+      this.stations,
+      this.motion.at(this.q, this.v),
+      this.latches.watched(),
+      isNear,
+    );
     for (const of of this.stations.resting()) {
       const value = (_q: Float64Array, v: Float64Array): number => this.unrest(of, v) - AT_REST;
       list.push({ value, tolerance: 0, happening: { kind: 'rests' } });
@@ -409,21 +352,19 @@ export class Engine {
     this.finish('noSolution');
   }
 
-  private release(id: string): void {
-    const latch = this.mechanism.latches.find((candidate) => candidate.id === id);
-    const joint = this.assembly.joints.find((candidate) => candidate.id === latch?.joint);
-    if (!joint || this.released.has(id)) return;
-    this.released.add(id);
-    this.log.release(id, this.seconds(), this.record());
-    joint.isReleased = true;
-  }
-
   private releaseDue(): void {
-    for (const { id, releasesAt } of this.mechanism.latches) {
-      if (this.released.has(id) || 'force' in releasesAt || !this.hasCome(releasesAt)) continue;
+    for (const id of this.latches.due(this.seconds())) {
       this.release(id);
       this.settle({});
     }
+  }
+
+  private release(id: string): void {
+    this.latches.release(id, () => this.log.release(id, this.seconds(), this.record()));
+  }
+
+  private unrest(of: string, v: Float64Array): number {
+    return unrest(this.assembly.system, of, v, this.assembly.dynamics.acceleration);
   }
 
   private noticeRest(): void {
@@ -433,18 +374,6 @@ export class Engine {
       this.seconds(),
     );
     this.log.reach(reached, this.seconds(), () => this.record());
-  }
-
-  /** How far a body (or 'all') is from rest: speed and acceleration on the scales of the mechanism. */
-  private unrest(of: string, v: Float64Array): number {
-    const { ids, units } = this.assembly.system;
-    const { acceleration } = this.assembly.dynamics;
-    const scales = restScales(this.mechanism);
-    const bodies = of === 'all' ? ids.map((_, i) => i) : [ids.indexOf(of)];
-    const size = (x: Float64Array, i: number): number => Math.hypot(x[3 * i], x[3 * i + 1], x[3 * i + 2] * REACH);
-    const speed = Math.max(...bodies.map((i) => size(v, i))) * (units.length / units.time);
-    const change = Math.max(...bodies.map((i) => size(acceleration, i))) * (units.length / units.time ** 2);
-    return speed / scales.speed + change / scales.acceleration;
   }
 
   private recordBetween(length: number): void {

@@ -8,7 +8,7 @@ import { ContactProblem } from './contact-problem.js';
 import { JointStop } from './kinds/joint.js';
 import type { Recorder } from './recorder.js';
 import { ContactPoint } from './unilateral.js';
-import { forceUnit, speedUnit } from './units.js';
+import { speedUnit } from './units.js';
 
 type Row = () => number;
 
@@ -17,7 +17,6 @@ type Standing = 'apart' | 'sticks' | 'slides';
 
 /** Writes down what happens in a run: events, the stations they reach, findings (each kind once). */
 export class RunLog {
-  readonly forceUnit: number;
   private rowNow = -1;
   private readonly standing = new Map<Pair, { how: Standing; since: number }>();
   private readonly reported = new Set<string>();
@@ -26,9 +25,7 @@ export class RunLog {
     private readonly assembly: Assembly,
     private readonly recorder: Recorder,
     private readonly stations: StationWatch,
-  ) {
-    this.forceUnit = forceUnit(assembly.system.units);
-  }
+  ) {}
 
   /** The state has changed since the last row. */
   moved(): void {

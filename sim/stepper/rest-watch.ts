@@ -16,8 +16,9 @@ export class RestWatch {
   private readonly since: (Resting | null)[];
   private readonly speed: number;
   private readonly acceleration: number;
-  private readonly before: { vx: Float64Array; vy: Float64Array; w: Float64Array };
-  private lastTime = 0;
+  /** Velocities one step ago and two steps ago, and when those were. */
+  private before: Past;
+  private earlier: Past;
 
   constructor(
     private readonly scene: Scene,
@@ -28,30 +29,30 @@ export class RestWatch {
     this.since = ids.map(() => null);
     this.speed = scales.speed / scale.speed;
     this.acceleration = scales.acceleration / scale.acceleration;
-    const column = (): Float64Array => new Float64Array(ids.length);
-    this.before = { vx: column(), vy: column(), w: column() };
+    this.before = newPast(ids.length);
+    this.earlier = newPast(ids.length);
   }
 
-  /** Takes the state at a time [engine time]; `record` gives the row of it, which may turn out to be where rest began. */
+  /**
+   * Takes the state at a time [engine time]; `record` gives the row of it, which may turn out to be where rest began.
+   * Acceleration is taken over two steps: what the midpoint rule leaves of a rate it only mirrors from step to step.
+   */
   look(state: State, time: number, record: () => number): void {
-    const { before, scene } = this;
-    const elapsed = time - this.lastTime;
+    const { earlier, scene } = this;
+    const elapsed = time - earlier.time;
     for (let i = 0; i < this.since.length; i += 1) {
       const reach = scene.reach[i];
       const speed = Math.hypot(state.vx[i], state.vy[i], state.w[i] * reach);
-      const change = Math.hypot(
-        state.vx[i] - before.vx[i],
-        state.vy[i] - before.vy[i],
-        (state.w[i] - before.w[i]) * reach,
-      );
-      const acceleration = elapsed > 0 ? change / elapsed : Infinity;
+      const [dx, dy, dw] = [state.vx[i] - earlier.vx[i], state.vy[i] - earlier.vy[i], state.w[i] - earlier.w[i]];
+      const acceleration = elapsed > 0 ? Math.hypot(dx, dy, dw * reach) / elapsed : Infinity;
       if (speed / this.speed + acceleration / this.acceleration > AT_REST) this.since[i] = null;
       else this.since[i] ??= { time, row: record() };
     }
-    before.vx.set(state.vx);
-    before.vy.set(state.vy);
-    before.w.set(state.w);
-    this.lastTime = time;
+    [this.before, this.earlier] = [this.earlier, this.before];
+    this.before.vx.set(state.vx);
+    this.before.vy.set(state.vy);
+    this.before.w.set(state.w);
+    this.before.time = time;
   }
 
   /** Since when a body (or 'all') has been at rest, if it has been long enough to tell. */
@@ -66,3 +67,17 @@ export class RestWatch {
     return last !== null && time - last.time >= STEPS * this.step ? last : null;
   }
 }
+
+interface Past {
+  time: number;
+  vx: Float64Array;
+  vy: Float64Array;
+  w: Float64Array;
+}
+
+const newPast = (count: number): Past => ({
+  time: -Infinity,
+  vx: new Float64Array(count),
+  vy: new Float64Array(count),
+  w: new Float64Array(count),
+});

@@ -49,8 +49,8 @@ export function buildDamper(system: System, damper: Damper): DamperParts {
 interface Geometry {
   row: Row;
   bodies: number[];
-  aim(q: Float64Array): void;
-  deflection(q: Float64Array): number;
+  aim: (q: Float64Array) => void;
+  deflection: (q: Float64Array) => number;
 }
 
 function along(system: System, between: (Damper & { kind: 'linear' })['between']): Geometry {

@@ -113,7 +113,7 @@ export class JointParts implements Bilateral {
     this.place(q, v);
     if (this.link > 0) this.updateLink();
     else if (this.kind === 'slide') this.updateSlide(q, v);
-    else this.updatePoint(q, v);
+    else this.updatePoint(q);
   }
 
   private updateLink(): void {
@@ -130,7 +130,7 @@ export class JointParts implements Bilateral {
     this.errors[0] = away - this.link;
   }
 
-  private updatePoint(q: Float64Array, v: Float64Array): void {
+  private updatePoint(q: Float64Array): void {
     const { pa, pb, a, b, rows } = this;
     rows[0].clear().addPoint(a.body, 1, 0, pa.rx, pa.ry, 1);
     rows[0].addPoint(b.body, 1, 0, pb.rx, pb.ry, -1);
@@ -141,7 +141,6 @@ export class JointParts implements Bilateral {
     this.errors[0] = pa.x - pb.x;
     this.errors[1] = pa.y - pb.y;
     if (this.kind === 'weld') this.updateAngle(2, q);
-    void v;
   }
 
   private updateAngle(index: number, q: Float64Array): void {
