@@ -205,29 +205,17 @@ export class Engine {
   }
 
   private watches(): Watch[] {
-    const reach = this.mechanism.bodies.map((_, i) => this.speedBound(i));
-    const h = Math.min(this.h, this.pace.longest(this.v, this.assembly.dynamics.acceleration));
-    const isNear = (point: ContactPoint): boolean => {
-      point.locate(this.q);
-      const travel = 2 * h * ((reach[point.bodyA] ?? 0) + (reach[point.bodyB] ?? 0)) + 2 * h * h * 2 + 1e-3;
-      return !(Math.abs(point.gap) > Math.max(travel, 0.05));
-    };
-    const list = watchList(
-      this.assembly,
-      this.stations,
-      this.motion.at(this.q, this.v),
-      this.latches.watched(),
-      isNear,
+    const { acceleration } = this.assembly.dynamics;
+    const h = Math.min(this.h, this.pace.longest(this.v, acceleration));
+    const motion = this.motion.at(this.q, this.v);
+    const list = watchList(this.assembly, this.stations, motion, this.latches.watched(), (point) =>
+      this.pace.canMeet(point, this.q, this.v, h),
     );
     for (const of of this.stations.resting()) {
       const value = (_q: Float64Array, v: Float64Array): number => this.unrest(of, v) - AT_REST;
       list.push({ value, tolerance: 0, happening: { kind: 'rests' } });
     }
     return list;
-  }
-
-  private speedBound(i: number): number {
-    return Math.hypot(this.v[3 * i], this.v[3 * i + 1]) + Math.abs(this.v[3 * i + 2]) * 0.5;
   }
 
   private arm(point: ContactPoint): void {

@@ -1,8 +1,12 @@
 import type { System } from './system.js';
+import type { ContactPoint } from './unilateral.js';
 
 /** Steps are held so short that nothing crosses more than this part of the mechanism, or turns more than this [rad]. */
 const TRAVEL = 0.2;
 const TURN = 0.5;
+/** A point nearer than this is always watched; a turning body may reach so far out. */
+const ALWAYS_NEAR = 0.05;
+const LEVER = 0.5;
 
 /** How fast things go: what errors are measured by, and how long a step may be. */
 export class Pace {
@@ -47,5 +51,14 @@ export class Pace {
     // Travel s = v h + a h²/2, solved for h.
     const travel = (2 * TRAVEL) / (speed + Math.sqrt(speed * speed + 2 * push * TRAVEL) + 1e-300);
     return Math.min(travel, TURN / (spin + 1e-300), this.duration / 20);
+  }
+
+  /** Whether an open point is near enough for a step of `h` to close it. */
+  canMeet(point: ContactPoint, q: Float64Array, v: Float64Array, h: number): boolean {
+    point.locate(q);
+    const bound = (body: number): number =>
+      body < 0 ? 0 : Math.hypot(v[3 * body], v[3 * body + 1]) + Math.abs(v[3 * body + 2]) * LEVER;
+    const travel = 2 * h * (bound(point.bodyA) + bound(point.bodyB)) + 4 * h * h + 1e-3;
+    return Math.abs(point.gap) <= Math.max(travel, ALWAYS_NEAR);
   }
 }
