@@ -107,8 +107,22 @@ describe('impact of bodies', () => {
       ],
       // Two equal links: the block swings without turning.
       joints: [
-        { id: 'left', kind: 'rope', through: [{ of: 'ground', at: [0, 0.05] }, { of: 'block', at: [0, -0.95] }] },
-        { id: 'right', kind: 'rope', through: [{ of: 'ground', at: [0.1, 0.05] }, { of: 'block', at: [0.1, -0.95] }] },
+        {
+          id: 'left',
+          kind: 'rope',
+          through: [
+            { of: 'ground', at: [0, 0.05] },
+            { of: 'block', at: [0, -0.95] },
+          ],
+        },
+        {
+          id: 'right',
+          kind: 'rope',
+          through: [
+            { of: 'ground', at: [0.1, 0.05] },
+            { of: 'block', at: [0.1, -0.95] },
+          ],
+        },
       ],
       tracks: [track('barrel', [-1, -1], [-0.0001, -1])],
       contacts: [{ between: ['bullet', 'block'] }, { between: ['bullet', 'barrel'] }],

@@ -143,9 +143,7 @@ describe('a drop on a spring', () => {
       ...earth,
       bodies: [particle('mass', [0, 1.1], 5)],
       joints: [{ id: 'guide', kind: 'slide', between: ['mass', 'ground'], at: [0, 1.1], axis: [0, 1] }],
-      springs: [
-        spring(ground(0, 0), { of: 'mass', at: [0, 1.1] }, { rate: 500, freeLength: 1, acts: 'compression' }),
-      ],
+      springs: [spring(ground(0, 0), { of: 'mass', at: [0, 1.1] }, { rate: 500, freeLength: 1, acts: 'compression' })],
       stations: [{ id: 'low', when: { turns: { of: 'mass', along: [0, 1] } } }],
       run: { until: { station: 'low' }, atMost: 1 },
     });
@@ -200,10 +198,10 @@ describe('a pendulum that strikes a block at its lowest point', () => {
     const { row, touch } = ran.station('hit');
     const given = ((1 + e) * inertia * omega * L) / (inertia + M * L * L);
     expectWithin('speed at the strike [m/s]', ran.motion('bob', row).speed, omega * L, CLOSE);
-    expectWithin('effective mass [kg]', touch?.effectiveMass ?? NaN, 1 / (L * L / inertia + 1 / M), CLOSE);
+    expectWithin('effective mass [kg]', touch?.effectiveMass ?? NaN, 1 / ((L * L) / inertia + 1 / M), CLOSE);
     expectWithin('speed given [m/s]', ran.motion('block').vx, given, CLOSE);
     expectWithin('speed left [m/s]', ran.motion('bob', row + 1).vx, given - e * omega * L, CLOSE);
-    const lost = (0.5 * (1 - e * e) * (omega * L) ** 2) / (L * L / inertia + 1 / M);
+    const lost = (0.5 * (1 - e * e) * (omega * L) ** 2) / ((L * L) / inertia + 1 / M);
     expectWithin('lost [J]', ran.entry('impact', 'bob/block').heat, lost, CLOSE);
   });
 });
@@ -220,7 +218,10 @@ describe('two weights on a rope over a fixed point', () => {
           through: [{ of: 'light', at: [-0.1, 0] }, ground(-0.1, 2), ground(0.1, 2), { of: 'heavy', at: [0.1, 0] }],
         },
       ],
-      stations: [{ id: 'start', when: { start: true } }, { id: 'end', when: { end: true } }],
+      stations: [
+        { id: 'start', when: { start: true } },
+        { id: 'end', when: { end: true } },
+      ],
       run: { until: 0.9 },
     });
     expectAudited(ran);
@@ -314,7 +315,9 @@ describe('an orifice damper (exponent 2)', () => {
     const ran = audit({
       gravity: [0, 0],
       bodies: [particle('carriage', [1, 0], m, { velocity: [v0, 0] })],
-      dampers: [{ id: 'orifice', between: [ground(0, 0), { of: 'carriage', at: [1, 0] }], coefficient: c, exponent: 2 }],
+      dampers: [
+        { id: 'orifice', between: [ground(0, 0), { of: 'carriage', at: [1, 0] }], coefficient: c, exponent: 2 },
+      ],
       run: { until: t },
     });
     expectAudited(ran);
