@@ -13,7 +13,9 @@ export interface Resting {
 
 /** Tells when bodies are at rest: velocity and acceleration nil over a few steps, counted from the first still one. */
 export class RestWatch {
+  /** Since when each body has been slow, and whether it has no acceleration either by now. */
   private readonly since: (Resting | null)[];
+  private readonly isSteady: boolean[];
   private readonly speed: number;
   private readonly acceleration: number;
   /** Velocities one step ago and two steps ago, and when those were. */
@@ -27,6 +29,7 @@ export class RestWatch {
     const { mechanism, scale, ids } = scene;
     const scales = restScales(mechanism);
     this.since = ids.map(() => null);
+    this.isSteady = ids.map(() => false);
     this.speed = scales.speed / scale.speed;
     this.acceleration = scales.acceleration / scale.acceleration;
     this.before = newPast(ids.length);
@@ -45,8 +48,9 @@ export class RestWatch {
       const speed = Math.hypot(state.vx[i], state.vy[i], state.w[i] * reach);
       const [dx, dy, dw] = [state.vx[i] - earlier.vx[i], state.vy[i] - earlier.vy[i], state.w[i] - earlier.w[i]];
       const acceleration = elapsed > 0 ? Math.hypot(dx, dy, dw * reach) / elapsed : Infinity;
-      if (speed / this.speed + acceleration / this.acceleration > AT_REST) this.since[i] = null;
+      if (speed / this.speed > AT_REST) this.since[i] = null;
       else this.since[i] ??= { time, row: record() };
+      this.isSteady[i] = speed / this.speed + acceleration / this.acceleration <= AT_REST;
     }
     [this.before, this.earlier] = [this.earlier, this.before];
     this.before.vx.set(state.vx);
@@ -61,7 +65,7 @@ export class RestWatch {
     let last: Resting | null = null;
     for (const i of indices) {
       const since = this.since[i];
-      if (since === null) return null;
+      if (since === null || !this.isSteady[i]) return null;
       if (last === null || since.time > last.time) last = since;
     }
     return last !== null && time - last.time >= STEPS * this.step ? last : null;
