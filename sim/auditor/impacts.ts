@@ -160,9 +160,12 @@ export class Impacts {
   }
 }
 
+/** Slower than this nothing rebounds: it would not rise above what a touch is known to [auditor speed]. */
+const LEAST_REBOUND = 1e-5;
+
 /** Rate that Newton's restitution takes off the free rate: e × approach, nil below the pair's rest speed. */
 function rebound({ restitution, restSpeed }: Unilateral, rate: number): number {
-  return rate < 0 && -rate >= restSpeed ? restitution * rate : 0;
+  return -rate >= Math.max(restSpeed, LEAST_REBOUND) ? restitution * rate : 0;
 }
 
 /**
