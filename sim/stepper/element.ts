@@ -32,8 +32,8 @@ export interface Friction {
   readonly drops: boolean;
   /** It sticks, with friction to spare, by the last solve. */
   isHolding(): boolean;
-  /** Sliding rate with the velocities now in planck's bodies. */
-  slip(): number;
+  /** Sliding rate with the velocities now in planck's bodies, against a surface as it runs at an engine time. */
+  slip(time: number): number;
   /** The way it breaks loose when the last solve reached its bound, else 0. */
   breakaway(): 1 | -1 | 0;
   /** Readies `hold` at the present configuration. */

@@ -90,6 +90,8 @@ export class Engine {
     for (const touch of manager.touches) manager.settle(touch);
     this.settleStops();
     this.storeHeights();
+    setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
+    this.solver.soft.begin();
     this.log.record();
     this.log.reach(this.watch.reach(({ when }) => when.kind === 'start' || isDue(when, 0), 0));
     this.sliding.renew();

@@ -134,7 +134,7 @@ export class Shock {
       }
     }
     this.holding = this.solver.frictions().filter((friction) => friction.isHolding());
-    isOff ||= this.holding.some((friction) => Math.abs(friction.slip()) > OFF);
+    isOff ||= this.holding.some((friction) => Math.abs(friction.slip(this.scene.time)) > OFF);
     return { struck, stops, isImpact, isOff };
   }
 

@@ -20,7 +20,7 @@ export class SlidingModes {
     for (const touch of this.ready()) touch.sliding = signOf(this.solver.rigid.slip(touch));
     for (const friction of this.solver.frictions()) {
       friction.aim();
-      friction.sliding = signOf(friction.slip());
+      friction.sliding = signOf(friction.slip(this.scene.time));
     }
   }
 

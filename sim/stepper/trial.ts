@@ -107,7 +107,7 @@ export class Trial {
     if (frictions.length === 0) return;
     setVelocities(this.scene, state.vx, state.vy, state.w);
     for (const friction of frictions) {
-      if (friction.sliding !== 0) this.startSlip.set(friction, (friction.sliding * friction.slip()) / STILL);
+      if (friction.sliding !== 0) this.startSlip.set(friction, (friction.sliding * friction.slip(this.scene.time)) / STILL);
     }
   }
 
@@ -200,7 +200,7 @@ export class Trial {
     // One that has only just broken away starts from rest and has nothing to stop.
     if (start <= 1) return Infinity;
     const end = this.scene.time + 2 * this.lastHalf;
-    const slip = 'contact' in source ? this.solver.rigid.slipNow(source, end) : source.slip();
+    const slip = 'contact' in source ? this.solver.rigid.slipNow(source, end) : source.slip(end);
     return (source.sliding * slip) / STILL;
   }
 

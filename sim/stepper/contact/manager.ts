@@ -172,11 +172,17 @@ export class ContactManager {
       placeAt(body, c0.x, c0.y, a0);
     });
     this.evaluate(touch);
-    touch.armed = lowestGap(touch) >= -BEHIND;
+    touch.armed = lowestGap(touch) >= -this.deepestAtSight(touch);
     bodies.forEach((body, i) => {
       const { x, y, a } = ends[i];
       placeAt(body, x, y, a);
     });
+  }
+
+  /** How deep a body may be at first sight and be on the surface all the same: a compliant pair may start compressed. */
+  private deepestAtSight({ pair, bodyA, shapeB }: Touch): number {
+    if (pair < 0 || !this.pairs[pair].isSoft) return BEHIND;
+    return bodyA < 0 ? Math.max(DEEPEST, shapeB.thickness / 2) : Infinity;
   }
 
   /** Works out the candidates anew where bodies have moved by next to nothing since `refresh`. */

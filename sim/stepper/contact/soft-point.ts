@@ -8,6 +8,10 @@ import type { Touch } from './touch.js';
 /** Share of its bound at which friction has reached it: impulses of short steps are no more exact than this. */
 const SATURATED = 1 - 1e-6;
 
+/** Speed of a surface along its path at an engine time. */
+export type Belt = (time: number) => number;
+export const STANDS_STILL: Belt = () => 0;
+
 /**
  * A compliant contact point: along the normal a one-sided spring (explicit, at mid-step) and damper (implicit) that never
  * pull together, along the tangent Coulomb friction.
@@ -28,9 +32,15 @@ export class SoftPoint implements Friction {
   /** Energy stored, and whether it pressed in the last step. */
   stored = 0;
   isEngaged = false;
+  /** The points of its touch in the present solve. */
+  face: SoftPoint[] = [this];
   springWork = 0;
   private readonly stiffness: number;
   private readonly damping: number;
+  /** Speed of a belt's surface along its path at an engine time, and which way the path runs along the row. */
+  private belt: Belt = STANDS_STILL;
+  private beltSense = 1;
+  /** A belt's speed along the row at mid-step. */
   private surfaceSpeed = 0;
 
   constructor(
@@ -56,8 +66,8 @@ export class SoftPoint implements Friction {
     return gap < 0 ? 0.5 * this.stiffness * gap * gap : 0;
   }
 
-  /** Aims the rows at the present configuration; `pathSpeed` is a belt's, along its path. */
-  aimAt(index: 0 | 1, pathSpeed: number): void {
+  /** Aims the rows at the present configuration, for a solve at `time`. */
+  aimAt(index: 0 | 1, belt: Belt, time: number): void {
     const { nx, ny, x, y } = frameOf(this.touch, index);
     this.normal.aim(nx, ny, x, y);
     this.row.aim(ny, -nx, x, y);
@@ -66,11 +76,17 @@ export class SoftPoint implements Friction {
     this.normal.impulse = 0;
     this.row.impulse = 0;
     const { foot } = this.touch.foot;
-    this.surfaceSpeed = pathSpeed === 0 ? 0 : pathSpeed * Math.sign(foot.tx * ny - foot.ty * nx);
+    this.belt = belt;
+    this.beltSense = Math.sign(foot.tx * ny - foot.ty * nx);
+    this.surfaceSpeed = this.beltSpeed(time);
+  }
+
+  private beltSpeed(time: number): number {
+    return this.belt(time) * this.beltSense;
   }
 
   startSliding(): void {
-    const slip = this.slip();
+    const slip = this.row.rate() - this.surfaceSpeed;
     this.sliding = Math.abs(slip) < 1e-8 ? 0 : slip > 0 ? 1 : -1;
   }
 
@@ -90,8 +106,14 @@ export class SoftPoint implements Friction {
     row.solve(this.surfaceSpeed, -most, most);
   }
 
+  /** Friction of the whole face: one of its points may well be at its bound while the others hold them all. */
+  private friction(): number {
+    return this.face.reduce((sum, { row }) => sum + row.impulse, 0);
+  }
+
   private isSaturated(): boolean {
-    return Math.abs(this.row.impulse) >= this.coefficient() * this.normal.impulse * SATURATED;
+    const most = this.face.reduce((sum, point) => sum + point.coefficient() * point.normal.impulse, 0);
+    return Math.abs(this.friction()) >= most * SATURATED;
   }
 
   isHolding(): boolean {
@@ -99,12 +121,13 @@ export class SoftPoint implements Friction {
   }
 
   breakaway(): 1 | -1 | 0 {
-    if (this.normal.impulse === 0 || this.row.impulse === 0 || !this.isSaturated()) return 0;
-    return this.row.impulse > 0 ? -1 : 1;
+    const friction = this.friction();
+    if (this.normal.impulse === 0 || friction === 0 || !this.isSaturated()) return 0;
+    return friction > 0 ? -1 : 1;
   }
 
-  slip(): number {
-    return this.row.rate() - this.surfaceSpeed;
+  slip(time: number): number {
+    return this.row.rate() - this.beltSpeed(time);
   }
 
   aim(): void {
@@ -113,7 +136,7 @@ export class SoftPoint implements Friction {
   }
 
   hold(): void {
-    this.row.solve(this.surfaceSpeed, -Infinity, Infinity);
+    this.row.solve(this.beltSpeed(this.scene.time), -Infinity, Infinity);
   }
 
   book(half: number): void {
@@ -132,7 +155,7 @@ export class SoftPoint implements Friction {
     const { row, pair, a, b } = this;
     const impulse = 2 * row.impulse;
     if (impulse === 0) return;
-    const slip = this.slip();
+    const slip = row.rate() - this.surfaceSpeed;
     let onA = -impulse * row.rateA();
     let onB = impulse * row.rateB();
     if (this.isSaturated()) pair.accounts.friction?.heat(-impulse * slip);
@@ -153,7 +176,7 @@ export class SoftPoint implements Friction {
     reading.points += 1;
     reading.normal += normal.impulse * force;
     reading.friction += this.row.impulse * force;
-    reading.slip = this.slip();
+    reading.slip = this.row.rate() - this.surfaceSpeed;
     reading.x = this.x;
     reading.y = this.y;
     reading.nx = sign * normal.nx;

@@ -3,7 +3,7 @@ import type { Scene } from '../scene.js';
 import type { Strike } from '../shock.js';
 import type { ContactManager } from './manager.js';
 import { addWork, type Pair } from './pair.js';
-import { SoftPoint } from './soft-point.js';
+import { SoftPoint, STANDS_STILL, type Belt } from './soft-point.js';
 import { isClosedKey, wasClosedKey, type Touch } from './touch.js';
 
 /** An approach slower than this is rounding, not a touch [engine speed]. */
@@ -30,15 +30,33 @@ export class SoftContacts {
     }
   }
 
+  /** Points that overlap as drawn start compressed, with the energy that takes; the bodies' velocities are in planck. */
+  begin(): void {
+    for (const touch of this.touches()) {
+      for (let i = 0; i < touch.count; i += 1) {
+        const { gap } = touch.candidates[i];
+        if (gap >= 0) continue;
+        const point = this.ready(touch, i as 0 | 1);
+        point.isEngaged = true;
+        point.gapBefore = gap;
+        point.stored = point.energyOf(gap);
+      }
+    }
+    this.restore('position-projection');
+  }
+
   prepare(half: number): void {
     this.half = half;
     this.live = [];
     for (const touch of this.touches()) {
       this.manager.evaluate(touch);
       if (touch.pair < 0) continue;
+      const face: SoftPoint[] = [];
       for (let i = 0; i < touch.count; i += 1) {
-        if (touch.candidates[i].gap < 0) this.live.push(this.ready(touch, i as 0 | 1));
+        if (touch.candidates[i].gap < 0) face.push(this.ready(touch, i as 0 | 1));
       }
+      for (const point of face) point.face = face;
+      this.live.push(...face);
     }
   }
 
@@ -50,7 +68,7 @@ export class SoftContacts {
     point ??= this.newPoint(touch, key);
     this.points.set(name, point);
     point.gap = gap;
-    point.aimAt(index, this.surfaceSpeed(touch));
+    point.aimAt(index, this.beltOf(touch), this.scene.time + this.half);
     if (isNew) point.startSliding();
     return point;
   }
@@ -60,10 +78,10 @@ export class SoftContacts {
     return new SoftPoint(this.scene, touch, key, pair);
   }
 
-  private surfaceSpeed(touch: Touch): number {
-    if (touch.shapeA.kind === 'core') return 0;
-    const link = touch.shapeA.chain.links[touch.foot.link];
-    return this.manager.surfaceSpeed(link.track, this.scene.time);
+  private beltOf({ shapeA, foot }: Touch): Belt {
+    if (shapeA.kind === 'core') return STANDS_STILL;
+    const { track } = shapeA.chain.links[foot.link];
+    return (time) => this.manager.surfaceSpeed(track, time);
   }
 
   solve(): void {
@@ -103,7 +121,8 @@ export class SoftContacts {
     const { pair, touch } = point;
     const gained = engages ? point.energyOf(point.gapBefore) : -point.stored;
     point.isEngaged = engages;
-    if (gained === 0) return;
+    // Without a damper it has let go too early by part of a step, which is the method's doing.
+    if (gained === 0 || pair.damping === 0) return;
     point.stored += gained;
     share(touch, -gained, (onA, onB) => {
       addWork(pair.accounts.spring, pair, touch.bodyA, onA, onB);
@@ -146,7 +165,7 @@ export class SoftContacts {
         const { key } = touch.candidates[i];
         if (!isClosedKey(touch, key) || wasClosedKey(touch, key)) continue;
         const point = this.newPoint(touch, key);
-        point.aimAt(i as 0 | 1, 0);
+        point.aimAt(i as 0 | 1, STANDS_STILL, 0);
         const approach = -point.normal.rate();
         if (approach < APPROACH) continue;
         const known = strikes.get(point.pair);
