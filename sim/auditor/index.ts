@@ -3,6 +3,7 @@ import { buildLayout, RecordingWriter } from '../recording/index.js';
 import type { Finding, Recording } from '../recording/recording.js';
 import { auditedJoints, auditedSprings } from './assembly.js';
 import { Engine } from './engine.js';
+import { COARSER, estimateErrors } from './estimate.js';
 
 export interface AuditorOptions {
   /** Relative tolerance; 1e-11 when left out. */
@@ -44,27 +45,39 @@ export function startAudit(mechanism: Mechanism, options: AuditorOptions = {}): 
   const refused = unaudited(mechanism);
   if (refused.length > 0) return refusedRun(mechanism, refused);
   const { until, atMost, timeBudget } = mechanism.run;
-  const engine = new Engine(mechanism, {
-    tolerance: options.tolerance ?? mechanism.run.tolerance ?? DEFAULT_TOLERANCE,
-    rows: options.rows ?? DEFAULT_ROWS,
-  });
+  const tolerance = options.tolerance ?? mechanism.run.tolerance ?? DEFAULT_TOLERANCE;
+  const engine = new Engine(mechanism, { tolerance, rows: options.rows ?? DEFAULT_ROWS });
+  let second: Engine | null = null;
+  let errors: Recording['errors'];
   const began = Date.now();
   const budget = (timeBudget ?? Infinity) * 1000;
+  const step = (): void => {
+    if (engine.end === null) engine.step();
+    else if (second?.end === null) second.step();
+    if (engine.end === 'reachedEnd' && second === null) {
+      second = new Engine(mechanism, { tolerance: tolerance * COARSER, rows: 1 });
+    }
+    if (second && second.end !== null)
+      errors ??= estimateErrors(engine.recorder.writer.view(), second.recorder.writer.view());
+  };
+  const isDone = (): boolean => engine.end !== null && (engine.end !== 'reachedEnd' || errors !== undefined);
   return {
     get time() {
       return Math.max(0, engine.recorder.writer.lastTime);
     },
     duration: 'time' in until ? Math.min(until.time, atMost) : atMost,
     get done() {
-      return engine.end !== null;
+      return isDone();
     },
     advance(wallMs) {
       const from = Date.now();
-      do engine.step();
-      while (engine.end === null && Date.now() - from < wallMs);
-      if (Date.now() - began > budget) engine.finish('timeBudget');
+      do step();
+      while (!isDone() && Date.now() - from < wallMs);
+      if (Date.now() - began <= budget) return;
+      engine.finish('timeBudget');
+      second?.finish('timeBudget');
     },
-    recording: () => engine.recorder.writer.view(),
+    recording: () => ({ ...engine.recorder.writer.view(), ...(errors ? { errors } : {}) }),
   };
 }
 

@@ -123,6 +123,14 @@ export interface Finding {
   at?: number;
 }
 
+/** A solver's own estimate of its error at a station: of the time [s], and the greatest of any body [m], [m/s]. */
+export interface StationError {
+  station: string;
+  time: number;
+  position: number;
+  speed: number;
+}
+
 /** How a run ended. */
 export type RunEnd =
   | 'reachedEnd'
@@ -150,6 +158,8 @@ export interface Recording {
   end: RunEnd;
   /** Step used [s] (stepper). */
   step?: number;
+  /** Its own estimate of its errors (auditor). */
+  errors?: StationError[];
   /** Work counters, for benchmarks and the curious. */
   counters: Record<string, number>;
 }

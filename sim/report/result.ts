@@ -44,6 +44,12 @@ const reachedStation = v.strictObject({
   reached: v.literal(true),
   bodies: v.record(id, bodyState),
   touch: v.optional(v.strictObject({ approachSpeed: si('[m/s]'), effectiveMass: si('[kg]') })),
+  error: v.optional(
+    v.pipe(
+      v.strictObject({ time: si('[s]'), position: si('[m]'), speed: si('[m/s]') }),
+      v.description('The auditor’s own estimate: the greatest of any body'),
+    ),
+  ),
   energy,
 });
 const missedStation = v.strictObject({ id, reached: v.literal(false) });

@@ -40,8 +40,17 @@ function reachedStation(
     reached: true,
     bodies: Object.fromEntries(bodies),
     ...(touch ? { touch } : {}),
+    ...errorAt(recording, id),
     energy: energyAt(mechanism, recording, row),
   };
+}
+
+/** What the solver itself says that its figures may be off by there. */
+function errorAt({ errors }: Recording, id: string): Pick<ReachedStation, 'error'> {
+  const found = errors?.find(({ station }) => station === id);
+  if (!found) return {};
+  const { time, position, speed } = found;
+  return { error: { time, position, speed } };
 }
 
 function withSpeed(state: BodyState): BodyState & { speed: number } {

@@ -11,16 +11,28 @@ export interface Resting {
   row: number;
 }
 
-/** Tells when bodies are at rest: velocity and acceleration nil over a few steps, counted from the first still one. */
+/** What is kept of a state until it can be judged: two steps later, by how the velocities went on from it. */
+interface Past {
+  time: number;
+  /** Row of it, where a body was slow enough then to need one. */
+  row: number;
+  vx: Float64Array;
+  vy: Float64Array;
+  w: Float64Array;
+}
+
+const LOOK_AHEAD = 2;
+
+/**
+ * Tells when bodies are at rest: velocity, and the acceleration over the two steps that follow, both nil on the scales of
+ * the mechanism, and so for a few steps more. Over two steps, since what the midpoint rule leaves of a rate it only mirrors
+ * from one to the next.
+ */
 export class RestWatch {
-  /** Since when each body has been slow, and whether it has no acceleration either by now. */
   private readonly since: (Resting | null)[];
-  private readonly isSteady: boolean[];
   private readonly speed: number;
   private readonly acceleration: number;
-  /** Velocities one step ago and two steps ago, and when those were. */
-  private before: Past;
-  private earlier: Past;
+  private readonly past: Past[] = [];
 
   constructor(
     private readonly scene: Scene,
@@ -29,34 +41,36 @@ export class RestWatch {
     const { mechanism, scale, ids } = scene;
     const scales = restScales(mechanism);
     this.since = ids.map(() => null);
-    this.isSteady = ids.map(() => false);
     this.speed = scales.speed / scale.speed;
     this.acceleration = scales.acceleration / scale.acceleration;
-    this.before = newPast(ids.length);
-    this.earlier = newPast(ids.length);
   }
 
-  /**
-   * Takes the state at a time [engine time]; `record` gives the row of it, which may turn out to be where rest began.
-   * Acceleration is taken over two steps: what the midpoint rule leaves of a rate it only mirrors from step to step.
-   */
+  /** Takes the state at a time [engine time]; `record` gives the row of it, which may turn out to be where rest began. */
   look(state: State, time: number, record: () => number): void {
-    const { earlier, scene } = this;
-    const elapsed = time - earlier.time;
+    const mayRest = this.since.some((since, i) => since === null && this.slowness(state, i) <= AT_REST);
+    const { past } = this;
+    const { vx, vy, w } = state;
+    past.push({ time, row: mayRest ? record() : -1, vx: vx.slice(), vy: vy.slice(), w: w.slice() });
+    if (past.length <= LOOK_AHEAD) return;
+    const then = past.shift();
+    if (then) this.judge(then, state, time);
+  }
+
+  private slowness({ vx, vy, w }: Pick<State, 'vx' | 'vy' | 'w'>, i: number): number {
+    return Math.hypot(vx[i], vy[i], w[i] * this.scene.reach[i]) / this.speed;
+  }
+
+  private judge(then: Past, now: State, time: number): void {
     for (let i = 0; i < this.since.length; i += 1) {
-      const reach = scene.reach[i];
-      const speed = Math.hypot(state.vx[i], state.vy[i], state.w[i] * reach);
-      const [dx, dy, dw] = [state.vx[i] - earlier.vx[i], state.vy[i] - earlier.vy[i], state.w[i] - earlier.w[i]];
-      const acceleration = elapsed > 0 ? Math.hypot(dx, dy, dw * reach) / elapsed : Infinity;
-      if (speed / this.speed > AT_REST) this.since[i] = null;
-      else this.since[i] ??= { time, row: record() };
-      this.isSteady[i] = speed / this.speed + acceleration / this.acceleration <= AT_REST;
+      const change = Math.hypot(
+        now.vx[i] - then.vx[i],
+        now.vy[i] - then.vy[i],
+        (now.w[i] - then.w[i]) * this.scene.reach[i],
+      );
+      const unrest = this.slowness(then, i) + change / (time - then.time) / this.acceleration;
+      if (!(unrest <= AT_REST)) this.since[i] = null;
+      else if (then.row >= 0) this.since[i] ??= { time: then.time, row: then.row };
     }
-    [this.before, this.earlier] = [this.earlier, this.before];
-    this.before.vx.set(state.vx);
-    this.before.vy.set(state.vy);
-    this.before.w.set(state.w);
-    this.before.time = time;
   }
 
   /** Since when a body (or 'all') has been at rest, if it has been long enough to tell. */
@@ -65,23 +79,9 @@ export class RestWatch {
     let last: Resting | null = null;
     for (const i of indices) {
       const since = this.since[i];
-      if (since === null || !this.isSteady[i]) return null;
+      if (since === null) return null;
       if (last === null || since.time > last.time) last = since;
     }
     return last !== null && time - last.time >= STEPS * this.step ? last : null;
   }
 }
-
-interface Past {
-  time: number;
-  vx: Float64Array;
-  vy: Float64Array;
-  w: Float64Array;
-}
-
-const newPast = (count: number): Past => ({
-  time: -Infinity,
-  vx: new Float64Array(count),
-  vy: new Float64Array(count),
-  w: new Float64Array(count),
-});

@@ -7,6 +7,9 @@ export interface Factored {
   lu: Float64Array;
   rows: Int32Array;
   columns: Int32Array;
+  /** Powers of two that rows and columns were multiplied by. */
+  rowScale: Float64Array;
+  columnScale: Float64Array;
 }
 
 /** Pivots below this share of the greatest are taken as nil: redundant constraints. */
@@ -14,10 +17,13 @@ const NIL = 1e-11;
 
 /**
  * Gaussian elimination with complete pivoting (Golub & Van Loan, *Matrix Computations*, 4th ed. 2013, 3.4.8), of an n × n
- * matrix held row by row. It is the safest of the direct methods for the small, sometimes singular systems here.
+ * matrix held row by row. It is the safest of the direct methods for the small, sometimes singular systems here. Rows and
+ * columns are brought to one size before (ibid. 3.5.2), so that light bodies are no lack of rank.
  */
 export function factor(a: Float64Array, n: number): Factored {
   const lu = a.slice(0, n * n);
+  const rowScale = equilibrate(lu, n, n, 1);
+  const columnScale = equilibrate(lu, n, 1, n);
   const rows = Int32Array.from({ length: n }, (_, i) => i);
   const columns = Int32Array.from({ length: n }, (_, i) => i);
   let greatest = 0;
@@ -33,7 +39,20 @@ export function factor(a: Float64Array, n: number): Factored {
     rank += 1;
     eliminate(lu, n, k);
   }
-  return { n, rank, pivotRatio: greatest > 0 ? last / greatest : 1, lu, rows, columns };
+  return { n, rank, pivotRatio: greatest > 0 ? last / greatest : 1, lu, rows, columns, rowScale, columnScale };
+}
+
+/** Multiplies each row (or column: `across` and `along` tell them apart) so that its greatest entry is about one. */
+function equilibrate(lu: Float64Array, n: number, across: number, along: number): Float64Array {
+  const scales = new Float64Array(n);
+  for (let i = 0; i < n; i += 1) {
+    let size = 0;
+    for (let j = 0; j < n; j += 1) size = Math.max(size, Math.abs(lu[i * across + j * along]));
+    const scale = size > 0 && Number.isFinite(size) ? 2 ** -Math.round(Math.log2(size)) : 1;
+    for (let j = 0; j < n; j += 1) lu[i * across + j * along] *= scale;
+    scales[i] = scale;
+  }
+  return scales;
 }
 
 function pivot(lu: Float64Array, n: number, k: number): [number, number, number] {
@@ -75,10 +94,11 @@ function eliminate(lu: Float64Array, n: number, k: number): void {
 }
 
 /** Solves A x = b into `x`; b is left as it is. Equations that the rank leaves over are taken as consistent. */
-export function solve({ n, rank, lu, rows, columns }: Factored, b: Float64Array, x: Float64Array): Float64Array {
+export function solve(factored: Factored, b: Float64Array, x: Float64Array): Float64Array {
+  const { n, rank, lu, rows, columns, rowScale, columnScale } = factored;
   const y = new Float64Array(n);
   for (let i = 0; i < rank; i += 1) {
-    let sum = b[rows[i]];
+    let sum = b[rows[i]] * rowScale[rows[i]];
     for (let j = 0; j < i; j += 1) sum -= lu[i * n + j] * y[j];
     y[i] = sum;
   }
@@ -88,6 +108,6 @@ export function solve({ n, rank, lu, rows, columns }: Factored, b: Float64Array,
     y[i] = sum / lu[i * n + i];
   }
   x.fill(0, 0, n);
-  for (let i = 0; i < rank; i += 1) x[columns[i]] = y[i];
+  for (let i = 0; i < rank; i += 1) x[columns[i]] = y[i] * columnScale[columns[i]];
   return x;
 }

@@ -5,7 +5,7 @@ import type { PrintUnit } from './quantities.js';
 import { figure, massUnit, speedUnit } from './quantities.js';
 
 /** The stations as a table: when, how fast each body is, and how it strikes where a station falls on an impact. */
-export function stationsText({ stepper }: CheckResult, width: number): string[] {
+export function stationsText({ stepper, auditor }: CheckResult, width: number): string[] {
   const stations = stepper?.stations ?? [];
   if (stations.length === 0) return [];
   const reached = stations.filter((station): station is ReachedStation => station.reached);
@@ -16,7 +16,22 @@ export function stationsText({ stepper }: CheckResult, width: number): string[] 
     ...touchColumns(stations, reached),
     ...speedColumns(stations, reached, bodies),
   ];
-  return ['', 'Stations', ...table(columns, 2, width)];
+  return ['', 'Stations', ...table(columns, 2, width), ...errorText(auditor?.stations ?? [], width)];
+}
+
+/** What the auditor itself says that its figures may be off by, the greatest of any body. */
+function errorText(stations: readonly ResultStation[], width: number): string[] {
+  const known = stations.filter((station): station is ReachedStation => station.reached && station.error !== undefined);
+  if (known.length === 0) return [];
+  const cells = (of: (error: NonNullable<ReachedStation['error']>) => number): string[] =>
+    known.map(({ error }) => (error ? of(error).toExponential(0) : '–'));
+  const columns: Column[] = [
+    { head: 'Auditor’s own error at', cells: known.map(({ id }) => id), align: 'left' },
+    { head: 'Time, s', cells: cells(({ time }) => time), align: 'right' },
+    { head: 'Place, m', cells: cells(({ position }) => position), align: 'right' },
+    { head: 'Speed, m/s', cells: cells(({ speed }) => speed), align: 'right' },
+  ];
+  return ['', ...table(columns, 2, width)];
 }
 
 function touchColumns(stations: readonly ResultStation[], reached: readonly ReachedStation[]): Column[] {
