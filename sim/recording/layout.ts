@@ -58,16 +58,12 @@ export function extendLayout(
 /** How much wider than needed an extended layout is made. */
 const SPARE = 1.25;
 
-/** First column that nothing has taken. */
+/** First column that nothing has taken: each list has its columns in order, so that the last of each has its greatest. */
 function usedWidth({ bodies, accounts, contacts, joints, springs, dampers }: RecordingLayout): number {
   let most = 0;
-  for (const list of [bodies, contacts, joints, springs, dampers]) {
-    for (const { columns } of list) for (const column of Object.values(columns)) most = Math.max(most, column);
-  }
-  for (const { columns } of accounts) {
-    const { work, heat = 0, stored = 0, input = 0 } = columns;
-    most = Math.max(most, heat, stored, input);
-    for (const column of work) most = Math.max(most, column);
+  for (const list of [bodies, accounts, contacts, joints, springs, dampers]) {
+    const last = list.at(-1);
+    if (last) most = Math.max(most, ...Object.values(last.columns).flat());
   }
   return 1 + most;
 }

@@ -8,6 +8,9 @@ import type { AccountName, NumericalCause } from '../recording/recording.js';
 export class Books {
   readonly accounts: AccountRequest[] = [];
   private readonly slots: BookedAccount[] = [];
+  /** All sums in one piece each, account after account: a row of a recording reads every one of them. */
+  private readonly sums: Sums = { sums: new Float64Array(256), rests: new Float64Array(256) };
+  private used = 0;
 
   open(
     account: AccountName,
@@ -17,49 +20,79 @@ export class Books {
   ): BookedAccount {
     const { cause, ...columns } = options;
     this.accounts.push({ account, of, bodies, ...columns, ...(cause ? { cause } : {}) });
-    const booked = new BookedAccount(bodies.length);
+    const booked = new BookedAccount(this.sums, this.take(bodies.length + 1), bodies.length);
     this.slots.push(booked);
     return booked;
+  }
+
+  /** Room for so many sums more; returns the first. */
+  private take(count: number): number {
+    const first = this.used;
+    this.used += count;
+    const { sums, rests } = this.sums;
+    if (this.used > sums.length) {
+      this.sums.sums = larger(sums);
+      this.sums.rests = larger(rests);
+    }
+    return first;
   }
 
   get booked(): readonly BookedAccount[] {
     return this.slots;
   }
+
+  /** Every sum in the order of the accounts: of one its bodies', then its heat. */
+  sumsSoFar(): Readonly<Sums> {
+    return this.sums;
+  }
+}
+
+/** Compensated sums: what each has come to, and what rounding has left of it. */
+interface Sums {
+  sums: Float64Array;
+  rests: Float64Array;
+}
+
+function larger(values: Float64Array): Float64Array {
+  const wider = new Float64Array(2 * values.length);
+  wider.set(values);
+  return wider;
 }
 
 /** Running sums of one account [engine energy]. */
 export class BookedAccount {
-  private readonly sums: Float64Array;
-  private readonly rests: Float64Array;
   /** Set by elements whose energy is stored: the energy now. */
   stored = 0;
   input = 0;
 
-  constructor(bodies: number) {
-    this.sums = new Float64Array(bodies + 1);
-    this.rests = new Float64Array(bodies + 1);
-  }
+  constructor(
+    private readonly all: Sums,
+    private readonly first: number,
+    private readonly bodies: number,
+  ) {}
 
   /** Work on the account's body number `slot`. */
   work(slot: number, value: number): void {
-    const { sums, rests } = this;
-    const before = sums[slot];
+    const { sums, rests } = this.all;
+    const at = this.first + slot;
+    const before = sums[at];
     const after = before + value;
-    rests[slot] += Math.abs(before) >= Math.abs(value) ? before - after + value : value - after + before;
-    sums[slot] = after;
+    rests[at] += Math.abs(before) >= Math.abs(value) ? before - after + value : value - after + before;
+    sums[at] = after;
   }
 
   /** Lost at the interface, positive. */
   heat(value: number): void {
-    this.work(this.sums.length - 1, value);
+    this.work(this.bodies, value);
   }
 
   workSoFar(slot: number): number {
-    return this.sums[slot] + this.rests[slot];
+    const { sums, rests } = this.all;
+    return sums[this.first + slot] + rests[this.first + slot];
   }
 
   heatSoFar(): number {
-    return this.workSoFar(this.sums.length - 1);
+    return this.workSoFar(this.bodies);
   }
 }
 

@@ -1,5 +1,5 @@
 import { buildLayout, extendLayout, RecordingWriter } from '../recording/index.js';
-import type { RecordingLayout } from '../recording/recording.js';
+import type { AccountSpec, RecordingLayout } from '../recording/recording.js';
 import type { ContactManager } from './contact/manager.js';
 import type { DamperElement } from './kinds/damper.js';
 import type { JointElement } from './kinds/joint.js';
@@ -20,6 +20,10 @@ interface Recorded {
 export class Recorder {
   readonly writer: RecordingWriter;
   private layout: RecordingLayout;
+  /** Accounts whose sums have their columns listed, the columns, and the accounts that have more than sums. */
+  private numbered = 0;
+  private readonly sumColumns: number[] = [];
+  private readonly held: { columns: AccountSpec['columns']; booked: BookedAccount }[] = [];
 
   constructor(
     private readonly recorded: Recorded,
@@ -84,15 +88,26 @@ export class Recorder {
   private accounts(row: Float64Array, at: number): void {
     const { books, scale } = this.recorded.scene;
     const { energy } = scale;
-    const { accounts } = this.layout;
-    for (let i = 0; i < accounts.length; i += 1) {
-      const { work, heat, stored, input } = accounts[i].columns;
-      const booked = books.booked[i];
-      for (let slot = 0; slot < work.length; slot += 1) row[at + work[slot]] = booked.workSoFar(slot) * energy;
-      if (heat !== undefined) row[at + heat] = booked.heatSoFar() * energy;
-      if (stored !== undefined) row[at + stored] = booked.stored * energy;
-      if (input !== undefined) row[at + input] = booked.input * energy;
+    const { sums, rests } = books.sumsSoFar();
+    const { sumColumns } = this;
+    while (this.numbered < this.layout.accounts.length) this.numberSums();
+    for (let i = 0; i < sumColumns.length; i += 1) {
+      if (sumColumns[i] >= 0) row[at + sumColumns[i]] = (sums[i] + rests[i]) * energy;
     }
+    for (const { columns, booked } of this.held) {
+      if (columns.stored !== undefined) row[at + columns.stored] = booked.stored * energy;
+      if (columns.input !== undefined) row[at + columns.input] = booked.input * energy;
+    }
+  }
+
+  /** Columns of the next account's sums (−1: of no heat), and whether it also holds energy. */
+  private numberSums(): void {
+    const index = this.numbered;
+    const { columns } = this.layout.accounts[index];
+    this.sumColumns.push(...columns.work, columns.heat ?? -1);
+    if (columns.stored !== undefined || columns.input !== undefined)
+      this.held.push({ columns, booked: this.recorded.scene.books.booked[index] });
+    this.numbered += 1;
   }
 
   private contacts(row: Float64Array, at: number): void {
