@@ -14,6 +14,8 @@ export interface Factored {
 
 /** Pivots below this share of the greatest are taken as nil: redundant constraints. */
 const NIL = 1e-11;
+/** Smaller entries than this are as good as nil. */
+const LEAST = 1e-200;
 
 /**
  * Gaussian elimination with complete pivoting (Golub & Van Loan, *Matrix Computations*, 4th ed. 2013, 3.4.8), of an n × n
@@ -48,7 +50,7 @@ function equilibrate(lu: Float64Array, n: number, across: number, along: number)
   for (let i = 0; i < n; i += 1) {
     let size = 0;
     for (let j = 0; j < n; j += 1) size = Math.max(size, Math.abs(lu[i * across + j * along]));
-    const scale = size > 0 && Number.isFinite(size) ? 2 ** -Math.round(Math.log2(size)) : 1;
+    const scale = size > LEAST && Number.isFinite(size) ? 2 ** -Math.round(Math.log2(size)) : 1;
     for (let j = 0; j < n; j += 1) lu[i * across + j * along] *= scale;
     scales[i] = scale;
   }
