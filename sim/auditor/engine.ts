@@ -2,11 +2,13 @@ import type { Moment } from '../mechanism/kinds/load.js';
 import type { Mechanism } from '../mechanism/model.js';
 import type { RunEnd } from '../recording/recording.js';
 import { AT_REST, StationWatch } from '../recording/station-watch.js';
+import { armAtStart, armOnTheWay } from './arming.js';
 import { assemble, type Assembly } from './assembly.js';
 import { findEvent } from './event-finder.js';
 import { Impacts } from './impacts.js';
 import { unrest } from './rest.js';
 import { RunLog } from './run-log.js';
+import { controlledStep } from './method/controlled-step.js';
 import { Dop853 } from './method/dop853.js';
 import { Modes, type Decided } from './modes.js';
 import { StateMotion } from './motion.js';
@@ -28,8 +30,6 @@ export interface EngineOptions {
 
 const LEAST_STEP = 1e-14;
 const MOST_EVENTS = 200_000;
-/** A point this far on the wrong side is behind the surface, where nothing is solid. */
-const BEHIND = 1e-6;
 
 /** Integrates a mechanism event by event and records it. */
 export class Engine {
@@ -54,6 +54,8 @@ export class Engine {
   private readonly pace: Pace;
   private readonly latches: Latches;
   private h: number;
+  /** Longest step in which nothing near can be missed. */
+  private limit = Infinity;
   private nextRow = 0;
   private events = 0;
   private steps = 0;
@@ -114,11 +116,7 @@ export class Engine {
 
   private begin(): void {
     const { dynamics, points, soft } = this.assembly;
-    for (const point of points) {
-      point.locate(this.q);
-      point.isArmed = point.gap >= -BEHIND;
-      point.mark(this.q, this.v);
-    }
+    armAtStart(points, this.q, this.v);
     for (const point of soft) if (point.point.isValid && point.point.gap < 0) point.isPressed = true;
     // What slides at the start must not be taken to stick while velocities are made to fit the joints.
     for (const friction of dynamics.parts.frictions) friction.sliding = 1;
@@ -146,19 +144,17 @@ export class Engine {
     const watches = this.watches();
     const next = this.moments.find((moment) => moment > this.t * (1 + 1e-14) + 1e-300) ?? Infinity;
     this.method.restart(this.t, this.y);
-    const taken = this.tryStep(
-      Math.min(this.h, this.pace.longest(this.v, this.assembly.dynamics.acceleration), next - this.t),
-    );
-    if (taken === null) return;
-    const event = findEvent(
-      this.method,
-      watches,
-      this.y.length / 1,
-      taken,
-      this.scale,
-      (t, y) => this.look(t, y),
-      this.t,
-    );
+    const longest = Math.min(this.pace.longest(this.v, this.assembly.dynamics.acceleration), this.limit);
+    const first = Math.min(this.h, longest, next - this.t);
+    const step = controlledStep(this.method, first, this.scale, LEAST_STEP * Math.max(1, this.t));
+    if (!step) {
+      this.finish('stepTooSmall');
+      return;
+    }
+    this.h = step.next;
+    const { taken } = step;
+    const look = (t: number, y: Float64Array): { q: Float64Array; v: Float64Array } => this.look(t, y);
+    const event = findEvent(this.method, watches, this.y.length, taken, this.scale, look, this.t);
     const length = event ? event.taken : taken;
     this.recordBetween(length);
     const isExact = !event && Math.abs(this.t + taken - next) <= 1e-12 * Math.max(1, next);
@@ -171,7 +167,7 @@ export class Engine {
     }
     const { drift } = this.projection.apply(this.t, this.q, this.v, this.works);
     this.drift = Math.max(this.drift, drift);
-    for (const point of this.assembly.points) this.arm(point);
+    armOnTheWay(this.assembly.points, this.q, this.v);
     this.assembly.dynamics.accelerate(this.t, this.q, this.v);
     this.handle(event?.watches ?? [], isExact);
     this.stations.settle(this.motion.at(this.q, this.v));
@@ -187,44 +183,22 @@ export class Engine {
     return { q, v };
   }
 
-  private tryStep(first: number): number | null {
-    let h = first;
-    for (;;) {
-      const error = this.method.try(h, this.scale);
-      if (error <= 1) {
-        this.method.finish();
-        this.h = h * Math.min(4, error > 0 ? 0.9 * error ** (-1 / 8) : 4);
-        return h;
-      }
-      h *= Number.isFinite(error) ? Math.max(0.2, 0.9 * error ** (-1 / 8)) : 0.2;
-      if (h < LEAST_STEP * Math.max(1, this.t)) {
-        this.finish('stepTooSmall');
-        return null;
-      }
-    }
-  }
-
   private watches(): Watch[] {
     const { acceleration } = this.assembly.dynamics;
     const h = Math.min(this.h, this.pace.longest(this.v, acceleration));
     const motion = this.motion.at(this.q, this.v);
-    const list = watchList(this.assembly, this.stations, motion, this.latches.watched(), (point) =>
-      this.pace.canMeet(point, this.q, this.v, h),
-    );
+    this.limit = Infinity;
+    const isNear = (point: ContactPoint): boolean => {
+      const meets = this.pace.canMeet(point, this.q, this.v, h);
+      if (meets) this.limit = Math.min(this.limit, this.pace.unmissable(point, this.v));
+      return meets;
+    };
+    const list = watchList(this.assembly, this.stations, motion, this.latches.watched(), isNear);
     for (const of of this.stations.resting()) {
       const value = (_q: Float64Array, v: Float64Array): number => this.unrest(of, v) - AT_REST;
       list.push({ value, tolerance: 0, happening: { kind: 'rests' } });
     }
     return list;
-  }
-
-  private arm(point: ContactPoint): void {
-    point.locate(this.q);
-    if (point.isClosed) return;
-    if (!point.isValid) point.isArmed = true;
-    else if (!point.isArmed) point.isArmed = point.gap >= 0;
-    else if (point.gap < -BEHIND && !point.pair.compliant) point.isArmed = false;
-    point.mark(this.q, this.v);
   }
 
   private handle(met: readonly Watch[], isExact: boolean): void {

@@ -1,7 +1,8 @@
 import type { Dop853 } from './method/dop853.js';
 import type { Watch } from './watch-list.js';
 
-const SAMPLES = 8;
+/** Looks at the watched values in a step. */
+export const SAMPLES = 8;
 const MOST_HALVINGS = 80;
 const POLISHES = 2;
 

@@ -8,6 +8,8 @@ import { ContactPoint, type Unilateral } from './unilateral.js';
 export const TOUCHING = 1e-9;
 /** A closed point that opens slower than this stays closed; sliding slower than this sticks [auditor speed]. */
 export const STILL = 1e-9;
+/** A closed point may seem to open this fast where it comes onto another piece of track. */
+const LANDING = 1e-6;
 /** A force below this holds nothing [auditor force or acceleration]. */
 const NIL = 1e-11;
 const MOST_ROUNDS = 12;
@@ -60,7 +62,8 @@ export class Modes {
       const isArmed = !(unilateral instanceof ContactPoint) || unilateral.isArmed;
       if (unilateral !== opened && isNear && isArmed) {
         unilateral.aim(q, v, t);
-        unilateral.isClosed = unilateral.rate(v) <= STILL;
+        // One that was closed is not let go by the rounding of a landing; the next projection takes that out.
+        unilateral.isClosed = unilateral.rate(v) <= (wasClosed ? LANDING : STILL);
         if (unilateral.isClosed && !wasClosed && unilateral instanceof ContactPoint) unilateral.mark(q, v);
       }
       if (unilateral.isClosed && isDouble(unilateral, closed)) unilateral.isClosed = false;

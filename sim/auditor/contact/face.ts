@@ -23,7 +23,7 @@ interface Edge {
   length: number;
 }
 
-export function edgesOf({ points }: Faces): Edge[] {
+export function edgesOf({ points }: Pick<Faces, 'points'>): Edge[] {
   return points.map((from, i) => {
     const to = points[(i + 1) % points.length];
     const length = Math.hypot(to.x - from.x, to.y - from.y);
