@@ -4,6 +4,7 @@ import type { RunEnd } from '../recording/recording.js';
 import { StationWatch } from '../recording/station-watch.js';
 import { assemble, hasCome, type Assembly } from './assembly.js';
 import { SKIN } from './contact/manager.js';
+import { noticeGivingWay } from './giving-way.js';
 import { SceneMotion } from './motion.js';
 import { Projection } from './projection.js';
 import { Recorder } from './recorder.js';
@@ -155,6 +156,7 @@ export class Engine {
     this.sliding.notice(this.log);
     this.passStations(met);
     this.noticePartings();
+    noticeGivingWay(this.assembly, this.solver.rigid.live, this.log);
     this.sliding.renewFresh();
     const soft = this.shock.softStrikes(scene.state);
     if (soft.length > 0) this.log.struck(soft, this.log.record());
@@ -337,7 +339,7 @@ export class Engine {
     this.recorder.writer.finish(end, {
       steps: this.steps,
       trials: this.trial.count,
-      sweeps: this.solver.sweeps,
+      sweeps: this.solver.sweeps + this.solver.acceleration.sweeps,
       unconvergedSolves: this.solver.unconverged,
     });
   }

@@ -1,8 +1,9 @@
+import { impulseOf, impulsesOf, type Impulse } from './acceleration.js';
 import { TimeStep } from 'planck';
 import { AxisRow, type HeldRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
-import { NO_KEY, wasClosedKey, type Touch } from './contact/touch.js';
+import { isPressedKey, NO_KEY, wasClosedKey, type Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
 import type { BodyInternals } from './planck-internals.js';
 import { getVelocities, partInner, setVelocities, type Scene } from './scene.js';
@@ -113,7 +114,7 @@ export class Shock {
         if (isNew && approach > IMPACT) {
           isImpact = true;
           struck.push({ touch, point: j as 0 | 1, approach });
-        } else if (approach > OFF || (approach < -OFF && this.isPressed(touch, contact.m_manifold.points[j].id.key))) {
+        } else if (approach > OFF || (approach < -OFF && isPressedKey(touch, contact.m_manifold.points[j].id.key))) {
           isOff = true;
         }
         const slip = tB - tA - contact.m_tangentSpeed;
@@ -182,11 +183,15 @@ export class Shock {
     const rows: HeldRow[] = [];
     for (const touch of this.solver.rigid.live) this.holdTouch(touch, rows);
     for (const friction of this.holding) friction.aim();
-    this.repeat(() => {
+    const sweep = (): void => {
       this.sweepJoints();
       for (const friction of this.holding) friction.hold();
       for (const { row, target, least } of rows) row.solve(target, least, Infinity);
-    });
+    };
+    this.repeat(sweep, this.scene.bodies, this.solver.rigid.live.length, () => [
+      ...this.holding.map(({ row }) => impulseOf(row, false)),
+      ...rows.map(({ row, least }) => impulseOf(row, least === 0)),
+    ]);
     getVelocities(this.scene, state.vx, state.vy, state.w);
     this.books.correction(this.before, [...this.holding, ...rows]);
   }
@@ -198,7 +203,7 @@ export class Shock {
     const sticks = touch.sliding === 0 && this.isRubbing(touch);
     for (let j = 0; j < contact.v_pointCount; j += 1) {
       const { rB } = contact.v_points[j];
-      const isPressed = this.isPressed(touch, contact.m_manifold.points[j].id.key);
+      const isPressed = isPressedKey(touch, contact.m_manifold.points[j].id.key);
       rows.push(this.aimed(touch, 2 * j, n.x, n.y, rB, 0, isPressed ? -Infinity : 0));
       if (sticks) rows.push(this.aimed(touch, 2 * j + 1, n.y, -n.x, rB, contact.m_tangentSpeed, -Infinity));
     }
@@ -224,10 +229,6 @@ export class Shock {
 
   private newRow({ bodyA: a, bodyB: b }: Touch): HeldRow {
     return { a, b, row: new AxisRow(partInner(this.scene, a), partInner(this.scene, b)), target: 0, least: 0 };
-  }
-
-  private isPressed({ pressed }: Touch, key: number): boolean {
-    return pressed[0] === key || pressed[1] === key;
   }
 
   private impact(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): void {
@@ -268,10 +269,14 @@ export class Shock {
   }
 
   private iterate(targets?: ReadonlyMap<Stop, number>): void {
-    this.repeat(() => {
+    const { rigid } = this.solver;
+    const sweep = (): void => {
       this.sweepJoints(targets);
-      this.solver.rigid.solve();
-    });
+      rigid.solve();
+    };
+    this.repeat(sweep, this.scene.bodies, rigid.live.length, () =>
+      impulsesOf(rigid.live.map(({ contact }) => contact)),
+    );
   }
 
   private sweepJoints(targets?: ReadonlyMap<Stop, number>): void {
@@ -287,6 +292,7 @@ export class Shock {
     sweep: () => void,
     bodies: readonly BodyInternals[] = this.scene.bodies,
     touches = this.solver.rigid.live.length,
+    impulses: () => Impulse[] = () => [],
   ): void {
     const { solver } = this;
     this.change(bodies);
@@ -296,7 +302,7 @@ export class Shock {
       solver.sweeps += 1;
       if (this.change(bodies) <= CONVERGED) return;
     }
-    solver.unconverged += 1;
+    if (solver.joints.length > 0 || !solver.acceleration.run(sweep, impulses())) solver.unconverged += 1;
   }
 
   /** Greatest change of a velocity since last asked, relative to the greatest. */

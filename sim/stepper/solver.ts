@@ -1,3 +1,4 @@
+import { Acceleration, impulsesOf } from './acceleration.js';
 import type { ContactManager } from './contact/manager.js';
 import { RigidContacts } from './contact/rigid.js';
 import { RollingResistance } from './contact/rolling.js';
@@ -24,6 +25,7 @@ export class VelocitySolver {
   /** Dry friction of joints and rolling. */
   private readonly dry: readonly Friction[];
   private readonly before: State;
+  readonly acceleration: Acceleration;
   sweeps = 0;
   solves = 0;
   /** Solves that ran out of sweeps. */
@@ -41,6 +43,7 @@ export class VelocitySolver {
       .filter((pair) => pair.rollingResistance > 0)
       .map((pair) => new RollingResistance(scene, pair));
     this.dry = [...joints.flatMap(({ frictionRow }) => frictionRow ?? []), ...this.rolling];
+    this.acceleration = new Acceleration(scene);
     this.before = newState(scene.ids.length);
   }
 
@@ -120,7 +123,13 @@ export class VelocitySolver {
       this.sweeps += 1;
       if (this.change() <= CONVERGED) return;
     }
-    this.unconverged += 1;
+    if (!this.accelerate(sweep)) this.unconverged += 1;
+  }
+
+  private accelerate(sweep: () => void): boolean {
+    const isContactsOnly = this.joints.length === 0 && this.soft.live.length === 0 && this.rolling.length === 0;
+    if (!isContactsOnly || !this.elements.every((element) => !element.solve)) return false;
+    return this.acceleration.run(sweep, impulsesOf(this.rigid.live.map(({ contact }) => contact)));
   }
 
   /** Greatest change of a velocity since last asked, relative to the greatest velocity. */

@@ -38,6 +38,5 @@ export function isBounded({ x, y, a, vx, vy, w }: State): boolean {
 }
 
 function isWithin(column: Float64Array, most: number): boolean {
-  for (let i = 0; i < column.length; i += 1) if (!(Math.abs(column[i]) <= most)) return false;
-  return true;
+  return column.every((value) => Math.abs(value) <= most);
 }

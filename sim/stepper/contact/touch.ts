@@ -125,6 +125,8 @@ export function setCandidate(touch: Touch, index: 0 | 1, key: number, gap: numbe
   candidate.local.y = y;
 }
 
+export const isPressedKey = ({ pressed }: Touch, key: number): boolean => pressed[0] === key || pressed[1] === key;
+
 export const isClosedKey = (touch: Touch, key: number): boolean => touch.closed[0] === key || touch.closed[1] === key;
 
 export const wasClosedKey = ({ closedBefore }: Touch, key: number): boolean =>
