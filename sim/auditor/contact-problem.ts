@@ -49,7 +49,7 @@ export class ContactProblem {
         matrix[i * n + j] = this.jointRows[i].coupling(this.jointRows[j], system.inverseMass);
       }
     }
-    this.factored = factor(matrix, n);
+    this.factored = factor(matrix, n, true);
   }
 
   /** Brings the joints' rows to `targets` (rates), the rest of the motion least changed; returns the joints' forces. */

@@ -77,7 +77,8 @@ export class Dynamics {
     this.collectForces();
     const unknowns = this.unknowns();
     const matrix = this.matrix(unknowns);
-    const factored = factor(matrix, unknowns.length);
+    const isSymmetric = unknowns.every(({ row, along }) => row === along);
+    const factored = factor(matrix, unknowns.length, isSymmetric);
     this.pivotRatio = factored.pivotRatio;
     const lambda = new Float64Array(unknowns.length);
     const right = new Float64Array(unknowns.length);
@@ -199,10 +200,12 @@ export class Dynamics {
   private matrix(unknowns: readonly Unknown[]): Float64Array {
     const n = unknowns.length;
     const matrix = new Float64Array(n * n);
-    for (let i = 0; i < n; i += 1) {
-      for (let j = 0; j < n; j += 1) {
-        matrix[i * n + j] = unknowns[i].row.coupling(unknowns[j].along, this.system.inverseMass);
-      }
+    const response = new Float64Array(3 * this.system.count);
+    for (let j = 0; j < n; j += 1) {
+      const { along } = unknowns[j];
+      along.addImpulse(response, 1, this.system.inverseMass);
+      for (let i = 0; i < n; i += 1) matrix[i * n + j] = unknowns[i].row.rate(response);
+      for (const index of along.index) response[index] = 0;
     }
     return matrix;
   }

@@ -105,7 +105,7 @@ export class Projection {
       for (let j = 0; j < n; j += 1) matrix[i * n + j] = rows[i].coupling(rows[j], inverseMass);
     }
     const lambda = solve(
-      factor(matrix, n),
+      factor(matrix, n, true),
       Float64Array.from(errors, (error) => -error),
       new Float64Array(n),
     );

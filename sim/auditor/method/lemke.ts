@@ -1,3 +1,5 @@
+import { equilibrate } from './pivoted-solve.js';
+
 /** How far below zero w may be, relative to the greatest entry of q. */
 const ENOUGH = 1e-9;
 /** Sizes of the perturbations of q that are tried where ties led the pivoting astray. */
@@ -6,12 +8,22 @@ const PERTURBATIONS = [0, 1e-12, 1e-10, 1e-8];
 /**
  * Linear complementarity problem w = M z + q, w ≥ 0, z ≥ 0, w·z = 0, by Lemke's method of complementary pivoting
  * (Cottle, Pang & Stone, *The Linear Complementarity Problem*, 1992, algorithm 4.4.5). Every answer is checked; where ties
- * of a degenerate problem gave a wrong one, q is perturbed by a little (ibid. 4.9).
+ * of a degenerate problem gave a wrong one, q is perturbed by a little (ibid. 4.9). Rows and columns are brought to one size
+ * before, which leaves solutions what they are, so that light bodies among heavy ones are seen.
  *
  * @param m n × n, row by row
  * @returns z, or null where the method ends on a secondary ray (no solution found)
  */
 export function lemke(m: Float64Array, q: Float64Array, n: number): Float64Array | null {
+  const scaled = m.slice(0, n * n);
+  const rows = equilibrate(scaled, n, n, 1);
+  const columns = equilibrate(scaled, n, 1, n);
+  const right = q.map((value, i) => value * rows[i]);
+  const z = scaledLemke(scaled, right, n);
+  return z?.map((value, i) => value * columns[i]) ?? null;
+}
+
+function scaledLemke(m: Float64Array, q: Float64Array, n: number): Float64Array | null {
   const size = q.reduce((most, value) => Math.max(most, Math.abs(value)), 0);
   for (const perturbation of PERTURBATIONS) {
     const moved = q.map((value, i) => value + perturbation * size * (1 + ((i * 7) % 11) / 11));

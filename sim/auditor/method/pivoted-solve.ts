@@ -20,19 +20,20 @@ const LEAST = 1e-200;
 /**
  * Gaussian elimination with complete pivoting (Golub & Van Loan, *Matrix Computations*, 4th ed. 2013, 3.4.8), of an n × n
  * matrix held row by row. It is the safest of the direct methods for the small, sometimes singular systems here. Rows and
- * columns are brought to one size before (ibid. 3.5.2), so that light bodies are no lack of rank.
+ * columns are brought to one size before (ibid. 3.5.2), so that light bodies are no lack of rank. Of a symmetric matrix without
+ * negative pivots the greatest entry is always on the diagonal, so that it is looked for there alone.
  */
-export function factor(a: Float64Array, n: number): Factored {
+export function factor(a: Float64Array, n: number, isSymmetric = false): Factored {
   const lu = a.slice(0, n * n);
-  const rowScale = equilibrate(lu, n, n, 1);
-  const columnScale = equilibrate(lu, n, 1, n);
+  const rowScale = isSymmetric ? equilibrateEvenly(lu, n) : equilibrate(lu, n, n, 1);
+  const columnScale = isSymmetric ? rowScale : equilibrate(lu, n, 1, n);
   const rows = Int32Array.from({ length: n }, (_, i) => i);
   const columns = Int32Array.from({ length: n }, (_, i) => i);
   let greatest = 0;
   let last = 0;
   let rank = 0;
   for (let k = 0; k < n; k += 1) {
-    const [p, q, size] = pivot(lu, n, k);
+    const [p, q, size] = isSymmetric ? diagonalPivot(lu, n, k) : pivot(lu, n, k);
     if (k === 0) greatest = size;
     if (size === 0 || size <= NIL * greatest) break;
     swapRows(lu, n, k, p, rows);
@@ -44,8 +45,24 @@ export function factor(a: Float64Array, n: number): Factored {
   return { n, rank, pivotRatio: greatest > 0 ? last / greatest : 1, lu, rows, columns, rowScale, columnScale };
 }
 
-/** Multiplies each row (or column: `across` and `along` tell them apart) so that its greatest entry is about one. */
-function equilibrate(lu: Float64Array, n: number, across: number, along: number): Float64Array {
+/** Scales rows and columns alike by powers of two, so that the diagonal is about one. */
+function equilibrateEvenly(lu: Float64Array, n: number): Float64Array {
+  const scales = new Float64Array(n);
+  for (let i = 0; i < n; i += 1) {
+    const size = lu[i * n + i];
+    scales[i] = size > LEAST && Number.isFinite(size) ? 2 ** -Math.round(Math.log2(size) / 2) : 1;
+  }
+  for (let i = 0; i < n; i += 1) {
+    for (let j = 0; j < n; j += 1) lu[i * n + j] *= scales[i] * scales[j];
+  }
+  return scales;
+}
+
+/**
+ * Multiplies each row (or column: entry (i, j) is at i·across + j·along) by a power of two that makes its greatest entry
+ * about one; returns those.
+ */
+export function equilibrate(lu: Float64Array, n: number, across: number, along: number): Float64Array {
   const scales = new Float64Array(n);
   for (let i = 0; i < n; i += 1) {
     let size = 0;
@@ -71,6 +88,18 @@ function pivot(lu: Float64Array, n: number, k: number): [number, number, number]
     }
   }
   return [p, q, size];
+}
+
+function diagonalPivot(lu: Float64Array, n: number, k: number): [number, number, number] {
+  let p = k;
+  let size = 0;
+  for (let i = k; i < n; i += 1) {
+    const value = lu[i * n + i];
+    if (value <= size) continue;
+    size = value;
+    p = i;
+  }
+  return [p, p, size];
 }
 
 function swapRows(lu: Float64Array, n: number, a: number, b: number, order: Int32Array): void {
