@@ -88,7 +88,7 @@ export class Engine {
     const { scene, manager } = this.assembly;
     poseBodies(scene, scene.state.x, scene.state.y, scene.state.a);
     manager.refresh();
-    for (const touch of manager.touches) manager.settle(touch);
+    manager.settleAll();
     this.settleStops();
     this.storeHeights();
     setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
@@ -150,7 +150,7 @@ export class Engine {
     this.log.moved();
     this.arrive();
     this.shock.remember();
-    for (const touch of manager.touches) manager.settle(touch);
+    manager.settleAll();
     this.settleStops();
     this.sliding.stop(met);
     this.sliding.notice(this.log);

@@ -53,6 +53,8 @@ export interface ChainEnd {
   ty: number;
   /** Another track lies against it, so that nothing flat can reach it: the inside of a corner. */
   isHidden: boolean;
+  /** The same corner is an end of an earlier chain of the same track, which stands for it. */
+  isRepeated: boolean;
 }
 
 export interface ChainFoot {
@@ -76,6 +78,7 @@ export function buildChains(tracks: readonly Track[], extent: number): Chain[] {
     }
   }
   for (const chain of chains) hideInsideCorners(chain, chains, TOUCHING * extent);
+  markRepeated(chains, TOUCHING * extent);
   return chains;
 }
 
@@ -128,7 +131,7 @@ function openEnds(links: Link[]): ChainEnd[] {
   const end = (link: number, atStart: boolean): ChainEnd => {
     const { run, along } = links[link];
     const { x, y, tx, ty, segment } = pointAt(run, atStart === (along === 1) ? 0 : run.length);
-    return { x, y, link, segment, tx, ty, isHidden: false };
+    return { x, y, link, segment, tx, ty, isHidden: false, isRepeated: false };
   };
   return [end(0, true), end(last, false)];
 }
@@ -151,6 +154,19 @@ function hideInsideCorners(chain: Chain, chains: readonly Chain[], near: number)
       return away * (met.foot.tx * nx + met.foot.ty * ny) > 1e-9;
     });
   });
+}
+
+function markRepeated(chains: readonly Chain[], near: number): void {
+  const seen: { end: ChainEnd; track: number }[] = [];
+  for (const { ends, links } of chains) {
+    for (const end of ends) {
+      const { track } = links[end.link];
+      end.isRepeated = seen.some(
+        (known) => known.track === track && Math.hypot(known.end.x - end.x, known.end.y - end.y) <= near,
+      );
+      if (!end.isHidden) seen.push({ end, track });
+    }
+  }
 }
 
 function ownFarEnd(chain: Chain, index: number, near: number): ChainFoot | null {

@@ -48,7 +48,7 @@ export function coreAgainstCorners(touch: Touch, pose: Pose, pairOf: PairOf): vo
 function featuresOf(core: CoreShape, chain: Chain, pose: Pose): Feature[] {
   const features: Feature[] = [];
   chain.ends.forEach((end, index) => {
-    if (end.isHidden || isFar(core, pose, end)) return;
+    if (end.isHidden || end.isRepeated || isFar(core, pose, end)) return;
     const feature = meetPoint(core, pose, end.x, end.y);
     if (!feature) return;
     features.push({ ...feature, ...end, key: 64 + 16 * index + (feature.vertex >= 0 ? 8 : 0), segment: end.segment });

@@ -10,6 +10,7 @@ import { coreAgainstCorners } from './corners.js';
 import { coresOf, cornersOf } from './outline.js';
 import { Pair } from './pair.js';
 import { CORE, CoreShape, CornersShape, SURFACE, SurfaceShape } from './shapes.js';
+import { spareCorners } from './shared-corners.js';
 import { coreAgainstSurface, type PairOf } from './surface.js';
 import { fillManifold, leastOpenGap, newTouch, NO_KEY, type Touch } from './touch.js';
 
@@ -257,7 +258,12 @@ export class ContactManager {
   }
 
   /** Takes the present candidates as the state at the start of the next step. */
-  settle(touch: Touch): void {
+  settleAll(): void {
+    for (const touch of this.touches) this.settle(touch);
+    if (spareCorners(this.touches, this.isActive)) this.version += 1;
+  }
+
+  private settle(touch: Touch): void {
     if (!touch.armed && lowestGap(touch) >= 0) touch.armed = true;
     const wasActive = this.isActive(touch);
     const [first, second] = touch.closed;
@@ -294,9 +300,7 @@ export class ContactManager {
     return this.pairs[touch.pair].isSoft ? Infinity : DEEPEST;
   }
 
-  isActive(touch: Touch): boolean {
-    return touch.closed[0] !== NO_KEY;
-  }
+  readonly isActive = (touch: Touch): boolean => touch.closed[0] !== NO_KEY;
 
   /** Speed of a track's surface along its path at a time [engine speed]. */
   surfaceSpeed(track: number, time: number): number {

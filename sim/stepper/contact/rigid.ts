@@ -44,7 +44,7 @@ export class RigidContacts {
     step.dtRatio = ratio;
     this.live.length = 0;
     for (const touch of this.manager.touches) {
-      if (!this.manager.isActive(touch)) continue;
+      if (touch.isSpare || !this.manager.isActive(touch)) continue;
       if (touch.curved) {
         this.manager.evaluate(touch);
         fillManifold(touch);

@@ -37,9 +37,9 @@ export class SoftContacts {
         const { gap } = touch.candidates[i];
         if (gap >= 0) continue;
         const point = this.ready(touch, i as 0 | 1);
-        point.isEngaged = true;
         point.gapBefore = gap;
-        point.stored = point.energyOf(gap);
+        point.isEngaged = !touch.isSpare;
+        point.stored = point.isEngaged ? point.energyOf(gap) : 0;
       }
     }
     this.restore('position-projection');
@@ -55,6 +55,8 @@ export class SoftContacts {
       for (let i = 0; i < touch.count; i += 1) {
         if (touch.candidates[i].gap < 0) face.push(this.ready(touch, i as 0 | 1));
       }
+      // A spare one is only followed, so that it can take over where it is.
+      if (touch.isSpare) continue;
       for (const point of face) point.face = face;
       this.live.push(...face);
     }
@@ -163,7 +165,7 @@ export class SoftContacts {
     for (const touch of this.touches()) {
       for (let i = 0; i < touch.count; i += 1) {
         const { key } = touch.candidates[i];
-        if (!isClosedKey(touch, key) || wasClosedKey(touch, key)) continue;
+        if (touch.isSpare || !isClosedKey(touch, key) || wasClosedKey(touch, key)) continue;
         const point = this.newPoint(touch, key);
         point.aimAt(i as 0 | 1, STANDS_STILL, 0);
         const approach = -point.normal.rate();

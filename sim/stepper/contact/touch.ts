@@ -41,6 +41,8 @@ export interface Touch {
   startSeam: number;
   /** Newly closed, or on another pair than before: whether it slides must be found out. */
   isFresh: boolean;
+  /** Another touch stands for the same point of the same round: the corner that two chains end at. */
+  isSpare: boolean;
 
   type: number;
   normal: XY;
@@ -93,6 +95,7 @@ export function newTouch(id: number, contact: ContactInternals, bodyA: number, b
     startLink: 0,
     startSeam: Infinity,
     isFresh: true,
+    isSpare: false,
     type: MANIFOLD_CIRCLES,
     normal: { x: 0, y: 1 },
     point: { x: 0, y: 0 },
