@@ -1,10 +1,8 @@
 import type { PageLine } from '../../sim/ledger/index.js';
 
 /** Height of a line of the account [px], with its rule. */
-const lineHeight = 29;
-
-export function blankRows(count: number): number {
-  return count * lineHeight;
+export function lineHeight(compact: boolean): number {
+  return compact ? 23 : 29;
 }
 
 /**

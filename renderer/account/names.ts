@@ -22,7 +22,8 @@ export function accountWord(account: AccountName): string {
   return accountWords[account];
 }
 
-type Named = Pick<PageLine, 'account' | 'of'> & Partial<Pick<PageLine, 'on' | 'segment' | 'role'>>;
+type Named = Pick<PageLine, 'account' | 'of'> &
+  Partial<Pick<PageLine, 'on' | 'role'>> & { segment?: number | undefined };
 
 /** An account by its cause and item numbers, "Friction 1/2 chute". */
 export function lineName(line: Named, items: readonly Item[], mechanism: Mechanism, compact = false): string {

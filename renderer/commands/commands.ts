@@ -10,7 +10,7 @@ const always = () => true;
 export function makeCommands(bench: Workbench) {
   const { view, run, playback, account, drawing } = bench;
   const hasRun = () => run.recording !== null && run.status !== 'running';
-  const canRun = () => drawing.mechanism !== null && run.status !== 'running';
+  const canRun = () => drawing.mechanism !== null && !bench.isRunning;
   const onRunSheet = () => view.sheet === 2 && hasRun();
 
   const open: Command = {
@@ -39,8 +39,8 @@ export function makeCommands(bench: Workbench) {
     id: 'halt',
     label: 'Halt',
     shortcut: 'Esc',
-    isEnabled: () => run.status === 'running',
-    run: () => run.halt(),
+    isEnabled: () => bench.isRunning,
+    run: () => bench.halt(),
   };
   const feed: Command = {
     id: 'feed',

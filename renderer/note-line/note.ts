@@ -16,8 +16,7 @@ export function noteOf(bench: Workbench): Note {
   const { drawing, run, view } = bench;
   if (bench.trouble !== '') return { kind: 'trouble', text: bench.trouble };
   if (drawing.reading) return { kind: 'work', text: 'Reading the file.' };
-  if (run.status === 'running')
-    return { kind: 'work', text: `Recording: ${fixed(run.time, 3)} s of at most ${fixed(run.duration, 3)} s.` };
+  if (bench.isRunning) return { kind: 'work', text: progressText(bench) };
   if (drawing.problem && (view.sheet === 1 || !drawing.mechanism))
     return { kind: drawing.errors > 0 ? 'trouble' : 'plain', text: problemText(bench) };
   if (!drawing.mechanism) return { kind: 'plain', text: 'Open a mechanism file, or drop one on the sheet.' };
@@ -25,6 +24,16 @@ export function noteOf(bench: Workbench): Note {
   if (view.sheet === 2 && picked !== '') return { kind: 'plain', text: picked };
   if (run.recording === null) return { kind: 'plain', text: `${drawing.title}: F5 runs it.` };
   return { kind: 'plain', text: `Run ${run.number}: pick an entry of the account to see when and where it was.` };
+}
+
+/** How far each solver is; of one that is done nothing is said. */
+function progressText({ run, second }: Workbench): string {
+  const at = ({ time, duration }: typeof run) => `${fixed(time, 3)} s of at most ${fixed(duration, 3)} s`;
+  const parts = [
+    ...(run.status === 'running' ? [`Recording: ${at(run)}`] : []),
+    ...(second.status === 'running' ? [`${run.status === 'running' ? 'auditor' : 'Auditor'}: ${at(second)}`] : []),
+  ];
+  return `${parts.join('; ')}.`;
 }
 
 function problemText({ drawing }: Workbench): string {

@@ -8,7 +8,9 @@ import {
   type PageLine,
   type StationRow,
 } from '../../sim/ledger/index.js';
+import { lineKey } from '../account/line-key.js';
 import { mergeEntries } from '../account/merge-entries.js';
+import { isOf } from '../auditor/compare-lines.js';
 import { nameStations, type StationName } from '../../sim/drawing/stations.js';
 import type { Mechanism } from '../../sim/mechanism/model.js';
 import type { Recording } from '../../sim/recording/recording.js';
@@ -79,6 +81,14 @@ export class Account {
     this.pickedKey = key === this.pickedKey ? null : key;
   }
 
+  /** Picks the greatest line of an account on the open page. */
+  pickAccount(account: PageLine['account'], of: PageLine['of']): void {
+    const lines = [...(this.printed?.received ?? []), ...(this.printed?.paidOut ?? [])]
+      .filter((line) => line.role === 'entry' && line.account === account && isOf(line, of))
+      .sort((a, b) => b.amount - a.amount);
+    this.pickedKey = lines.length > 0 ? lineKey(lines[0]) : null;
+  }
+
   reset(): void {
     this.chosen = null;
     this.pickedKey = null;
@@ -105,13 +115,8 @@ export class Account {
   }
 }
 
-/** Tells the lines of a page apart. */
-export function lineKey({ role, account, of, cause, segment }: PageLine): string {
-  return [role, account, of, cause, segment].map((part) => String(part ?? '')).join('|');
-}
-
 /** Stations of a run; a run without any is one page from its first row to its last. */
-function reachedStations(recording: Recording | null): StationRow[] {
+export function reachedStations(recording: Recording | null): StationRow[] {
   if (!recording || recording.rowCount === 0) return [];
   const reached = stationRows(recording);
   if (reached.length > 1) return reached;

@@ -1,5 +1,5 @@
 import type { Mechanism } from '../../sim/mechanism/model.js';
-import type { Recording } from '../../sim/recording/recording.js';
+import type { Finding, Recording } from '../../sim/recording/recording.js';
 import {
   CancelledError,
   FrameJoiner,
@@ -9,11 +9,12 @@ import {
   type SolverMethods,
 } from '../../sim/protocol/index.js';
 
-export type RunStatus = 'none' | 'running' | 'ended' | 'halted' | 'failed';
+/** `refused`: the mechanism has what this solver does not take; `failed`: the solver broke down. */
+export type RunStatus = 'none' | 'running' | 'ended' | 'halted' | 'refused' | 'failed';
 
 const clock = new Intl.DateTimeFormat('en-GB', { hour: '2-digit', minute: '2-digit' });
 
-/** The run on the paper: recorded by the solver's thread, row by row. */
+/** One solver's run of the mechanism: recorded by its thread, row by row. */
 export class Run {
   number = $state(0);
   status = $state<RunStatus>('none');
@@ -22,10 +23,14 @@ export class Run {
   time = $state(0);
   duration = $state(0);
   startedAt = $state('');
+  /** Why it was refused or failed. */
   failure = $state('');
+  refusals = $state.raw<readonly Finding[]>([]);
   private halting: (() => void) | null = null;
   /** Changes with the document: what a run of an earlier one still sends is not shown. */
   private ticket = 0;
+
+  constructor(private readonly solver: 'run' | 'audit' = 'run') {}
 
   /** Runs a mechanism; resolves when the run has ended in whichever way. */
   async start(client: Client<SolverMethods>, mechanism: Mechanism): Promise<void> {
@@ -37,7 +42,7 @@ export class Run {
     const ticket = this.ticket;
     const isStale = () => ticket !== this.ticket;
     const joiner = new FrameJoiner();
-    const task = client.request('run', { mechanism }, (frame) => {
+    const task = client.request(this.solver, { mechanism }, (frame) => {
       joiner.add(frame);
       if (!isStale()) this.follow(joiner, frame);
     });
@@ -60,8 +65,9 @@ export class Run {
   private finish(joiner: FrameJoiner, { end, findings }: RunClosing): void {
     this.halting = null;
     this.recording = joiner.recording();
-    this.failure = end === 'notSimulated' ? findings.map(({ text }) => text).join(' ') : '';
-    this.status = end === 'notSimulated' ? 'failed' : 'ended';
+    this.refusals = end === 'notSimulated' ? findings : [];
+    this.failure = this.refusals.map(({ text }) => text).join(' ');
+    this.status = end === 'notSimulated' ? 'refused' : 'ended';
   }
 
   private fail(error: unknown): void {
@@ -80,6 +86,7 @@ export class Run {
     this.time = 0;
     this.duration = 0;
     this.failure = '';
+    this.refusals = [];
   }
 
   /** Forgets the runs of another document. */

@@ -3,8 +3,8 @@ import type { StationRow } from '../../sim/ledger/index.js';
 import { zoneAt } from '../frame/geometry.js';
 import { bodyOf, valueAt } from '../../sim/recording/reader.js';
 import type { Recording } from '../../sim/recording/recording.js';
-import { CancelledError } from '../../sim/protocol/index.js';
 import { Account } from './account.svelte.js';
+import { Audit } from './audit.svelte.js';
 import { Drawing } from './drawing.svelte.js';
 import { Playback } from './playback.svelte.js';
 import { Run } from './run.svelte.js';
@@ -49,15 +49,21 @@ export class Workbench {
   readonly view = new View();
   readonly drawing = new Drawing();
   readonly run = new Run();
+  /** The auditor's run of the same mechanism, beside the first. */
+  readonly second = new Run('audit');
   readonly playback = new Playback(() => this.run.recording);
   readonly account = new Account(
     () => (this.run.status === 'running' ? null : this.run.recording),
     () => this.drawing.mechanism,
     () => this.drawing.names,
   );
+  readonly audit = new Audit(this.run, this.second, this.account, () => this.drawing.mechanism);
+  /** Whether either solver is at work. */
+  readonly isRunning = $derived(this.run.status === 'running' || this.second.status === 'running');
   /** Something that went wrong outside the document: one sentence. */
   trouble = $state('');
-  private solver: Solver;
+  private stepper: Solver;
+  private auditor: Solver;
   /** How many files were opened. */
   private opened = 0;
 
@@ -78,22 +84,27 @@ export class Workbench {
   });
 
   constructor(private readonly startSolver: () => Solver) {
-    this.solver = startSolver();
+    this.stepper = startSolver();
+    this.auditor = startSolver();
   }
 
   /** Reads a file and puts it on the sheet; errors of the file are shown with their places. */
   async open({ name, text, size }: OpenedFile): Promise<void> {
     const ticket = ++this.opened;
     this.run.reset();
+    this.second.reset();
     this.playback.feeding = false;
     this.playback.time = 0;
     this.account.reset();
     this.trouble = '';
     this.drawing.reading = true;
-    const result = await this.solver.client.request('read', { text, fileSize: size }).result.catch((error: unknown) => {
-      this.troubled(error);
-      return null;
-    });
+    const result = await this.stepper.client
+      .request('read', { text, fileSize: size })
+      .result.catch((error: unknown) => {
+        this.trouble = error instanceof Error ? error.message : String(error);
+        this.replaceStepper();
+        return null;
+      });
     // Another file was opened meanwhile: it is that one that is wanted.
     if (ticket !== this.opened) return;
     this.drawing.reading = false;
@@ -102,27 +113,70 @@ export class Workbench {
     this.view.sheet = 1;
   }
 
-  /** Runs what is on the sheet, and turns to the run's sheet. */
+  /** Runs what is on the sheet on both solvers, each in its thread, and turns to the run's sheet. */
   async start(): Promise<void> {
     const { mechanism } = this.drawing;
-    if (!mechanism || this.run.status === 'running') return;
+    if (!mechanism || this.isRunning) return;
     const ticket = this.opened;
     this.trouble = '';
     this.view.sheet = 2;
     this.playback.feeding = false;
     this.playback.time = 0;
     this.account.pickedKey = null;
-    await this.run.start(this.solver.client, mechanism);
-    if (ticket !== this.opened) return;
-    if (this.run.status === 'failed') this.troubled(new Error(this.run.failure));
+    const auditing = this.second.start(this.auditor.client, mechanism);
+    await this.run.start(this.stepper.client, mechanism);
+    if (ticket === this.opened) this.showRun();
+    await auditing;
+    if (ticket === this.opened) this.showAudit();
+  }
+
+  /** Halts both solvers. */
+  halt(): void {
+    this.run.halt();
+    this.second.halt();
+  }
+
+  private showRun(): void {
+    const { status, failure } = this.run;
+    if (status === 'failed' || status === 'refused') this.trouble = failure;
+    if (status === 'failed') this.replaceStepper();
     this.playback.fitRate();
     this.showStation(this.account.page?.to ?? null);
+  }
+
+  /** Where the runs part, the account is opened there. */
+  private showAudit(): void {
+    if (this.second.status === 'failed') {
+      this.auditor.stop();
+      this.auditor = this.startSolver();
+    }
+    if (this.audit.verdict === 'differs') this.goToParting();
+  }
+
+  /** Opens the account at the entry that differs most, and goes to the station from which on the runs are not the same. */
+  goToParting(): void {
+    const { comparison, partingStation } = this.audit;
+    const entry = comparison?.parting?.account;
+    const page = this.account.pages.find(({ to }) => to.id === partingStation);
+    if (entry) this.account.open(entry.from, entry.to);
+    else if (page) this.account.open(page.from.id, page.to.id);
+    if (entry) this.account.pickAccount(entry.account, entry.of);
+    this.playback.feeding = false;
+    const station = this.account.stations.find(({ id }) => id === partingStation);
+    if (station) this.showStation(station);
+    else this.playback.moveTo(comparison?.oneSided[0]?.time ?? this.playback.time);
   }
 
   goToStation(mark: string): void {
     const station = this.account.stationMarked(mark);
     this.playback.feeding = false;
     this.showStation(station);
+  }
+
+  goToMoment(time: number): void {
+    this.view.sheet = 2;
+    this.playback.feeding = false;
+    this.playback.moveTo(time);
   }
 
   /** A station on an impact is the instant just before it; the row after it has the same time. */
@@ -138,10 +192,8 @@ export class Workbench {
   };
 
   /** A solver that broke down is replaced, so that the next request has one. */
-  private troubled(error: unknown): void {
-    if (error instanceof CancelledError) return;
-    this.trouble = error instanceof Error ? error.message : String(error);
-    this.solver.stop();
-    this.solver = this.startSolver();
+  private replaceStepper(): void {
+    this.stepper.stop();
+    this.stepper = this.startSolver();
   }
 }

@@ -18,7 +18,7 @@ describe('the keyboard', () => {
     await page.keyboard.press('Enter');
     await page.getByRole('img', { name: /Drawing of Gravity/ }).waitFor();
     await page.keyboard.press('F5');
-    await page.getByRole('region', { name: 'Paid out' }).waitFor({ timeout: 50_000 });
+    await page.getByRole('button', { name: 'Run again' }).waitFor({ timeout: 50_000 });
 
     await page.keyboard.press('1');
     expect(await moment(page)).toBe(0);

@@ -7,6 +7,7 @@ import { Run } from '../../../renderer/state/run.svelte.js';
 import { pickedSpan } from '../../../renderer/account/picked-span.js';
 import { connect, portPair, serve, type Handlers, type SolverMethods } from '../../../sim/protocol/index.js';
 import { readMechanism } from '../../../sim/mechanism/index.js';
+import { runAuditor } from '../../../sim/auditor/index.js';
 import { runStepper } from '../../../sim/stepper/index.js';
 import { solver } from '../../../sim/worker.js';
 import { disc, floor } from '../../support/parts.js';
@@ -166,6 +167,34 @@ describe('a run in the window', () => {
     await ended;
     expect(run.status).toBe('halted');
     expect(run.recording?.rowCount).toBeGreaterThan(0);
+  });
+
+  it('of the auditor is recorded in the same way, and ends as its own recording', async () => {
+    const run = new Run('audit');
+    await run.start(client(), mechanism);
+    expect([run.status, run.recording?.solver, run.recording?.end]).toEqual(['ended', 'auditor', 'reachedEnd']);
+    expect(run.recording?.rowCount).toBe(runAuditor(mechanism).rowCount);
+  });
+
+  it('that a solver does not take is refused, with the findings that say why', async () => {
+    const run = new Run('audit');
+    const limited = { ...mechanism, bodies: mechanism.bodies.map((body) => ({ ...body, shape: { kind: 'cam' } as typeof body.shape })) }; // prettier-ignore
+    await run.start(client(), limited);
+    expect([run.status, run.recording]).toEqual(['refused', null]);
+    expect(run.refusals.map(({ code, of }) => [code, of])).toEqual([['not-audited', ['ball']]]);
+    await run.start(client(), mechanism);
+    expect([run.status, run.refusals]).toEqual(['ended', []]);
+  });
+
+  it('goes on when the other solver’s thread breaks down', async () => {
+    let crash: (reason: string) => void = () => undefined;
+    const dead = connect<SolverMethods>({ post: () => undefined, listen: (_, crashed) => (crash = crashed) });
+    const [stepper, auditor] = [new Run('run'), new Run('audit')];
+    const ended = Promise.all([stepper.start(client(), mechanism), auditor.start(dead, mechanism)]);
+    crash('out of memory');
+    await ended;
+    expect([stepper.status, auditor.status]).toEqual(['ended', 'failed']);
+    expect(auditor.failure).toContain('out of memory');
   });
 
   it('of a document that is no longer on the sheet leaves no trace', async () => {
