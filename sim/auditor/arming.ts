@@ -1,7 +1,5 @@
+import { BEHIND } from './modes.js';
 import type { ContactPoint } from './unilateral.js';
-
-/** A point this far on the wrong side is behind the surface, where nothing is solid (in scaled length). */
-const BEHIND = 1e-6;
 
 /** Says at the start which points face their surface from its solid side. */
 export function armAtStart(points: readonly ContactPoint[], q: Float64Array, v: Float64Array): void {

@@ -1,6 +1,6 @@
 import { ContactProblem } from './contact-problem.js';
 import type { Dynamics, FrictionGroup } from './dynamics.js';
-import { groupsOf, isDouble, STILL, TOUCHING } from './modes.js';
+import { groupsOf, isDouble, STILL, touches } from './modes.js';
 import type { Row } from './row.js';
 import { ContactPoint, type Unilateral } from './unilateral.js';
 
@@ -73,7 +73,7 @@ export class Impacts {
     const found: Unilateral[] = [];
     for (const unilateral of parts.unilaterals) {
       unilateral.locate(q);
-      if (!unilateral.isValid || Math.abs(unilateral.gap) > TOUCHING) continue;
+      if (!unilateral.isValid || !touches(unilateral)) continue;
       if (unilateral instanceof ContactPoint && !unilateral.isArmed) continue;
       unilateral.aim(q, v, t);
       if (!isDouble(unilateral, found)) found.push(unilateral);

@@ -6,6 +6,11 @@ import { ContactPoint, type Unilateral } from './unilateral.js';
 
 /** A gap below this is closed [auditor length]. */
 export const TOUCHING = 1e-9;
+/**
+ * A point so little behind a surface is held to be at it (a corner that turned over the surface's edge); further on it is
+ * behind it, where nothing is solid [auditor length].
+ */
+export const BEHIND = 1e-6;
 /** A closed point that opens slower than this stays closed; sliding slower than this sticks [auditor speed]. */
 export const STILL = 1e-9;
 /** A closed point may seem to open this fast where it comes onto another piece of track. */
@@ -58,7 +63,7 @@ export class Modes {
       if (wasClosed && unilateral instanceof ContactPoint) unilateral.mark(q, v);
       else unilateral.locate(q);
       unilateral.isClosed = false;
-      const isNear = unilateral.isValid && Math.abs(unilateral.gap) <= TOUCHING;
+      const isNear = unilateral.isValid && touches(unilateral);
       const isArmed = !(unilateral instanceof ContactPoint) || unilateral.isArmed;
       if (unilateral !== opened && isNear && isArmed) {
         unilateral.aim(q, v, t);
@@ -218,6 +223,9 @@ export function isDouble(one: Unilateral, others: readonly Unilateral[]): boolea
       Math.abs(other.nx * one.ny - other.ny * one.nx) <= 1e-6,
   );
 }
+
+/** It is at its surface, or so little behind that it is held to be. */
+export const touches = ({ gap }: Unilateral): boolean => gap <= TOUCHING && gap >= -BEHIND;
 
 const holdsUnknown = (friction: DryFriction): boolean =>
   friction.isActive && friction.sliding === 0 && friction.bound() === 0;

@@ -3,7 +3,7 @@ import type { Assembly } from './assembly.js';
 import type { FrictionGroup } from './dynamics.js';
 import type { DryFriction } from './element.js';
 import type { SoftPoint } from './contact/soft-point.js';
-import { isDouble, STILL, TOUCHING } from './modes.js';
+import { isDouble, STILL, touches } from './modes.js';
 import type { StateMotion } from './motion.js';
 import { ContactPoint, type Unilateral } from './unilateral.js';
 
@@ -75,7 +75,7 @@ export function watchList(
 function isRidden(what: Unilateral, closed: readonly Unilateral[], { q, v }: StateMotion): boolean {
   if (!(what instanceof ContactPoint)) return false;
   what.locate(q);
-  if (!what.isValid || Math.abs(what.gap) > TOUCHING) return false;
+  if (!what.isValid || !touches(what)) return false;
   what.aim(q, v, 0);
   return isDouble(what, closed);
 }

@@ -168,7 +168,7 @@ describe.each(cases)('the rows of %s', (_, parts, isMeant) => {
         expectNear(
           point.tangent.rate(course.a) + point.tangent.gamma,
           slope((t) => slipAt(course, t)),
-          RATE,
+          BEND,
         );
       }),
       { numRuns: 60 },

@@ -1,0 +1,64 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { describe, expect, it } from 'vitest';
+import { runAuditor } from '../../sim/auditor/index.js';
+import { readMechanism } from '../../sim/mechanism/index.js';
+import type { Mechanism } from '../../sim/mechanism/model.js';
+import { expectAudited } from '../support/audit.js';
+import { machines } from '../support/machines.js';
+import { mechanismOf, Run } from '../support/run.js';
+
+const folder = new URL('../../assets/examples/', import.meta.url);
+const examples = readdirSync(folder)
+  .filter((name) => name.endsWith('.json'))
+  .map((name): [string, Mechanism] => {
+    const { mechanism, problems } = readMechanism(readFileSync(new URL(name, folder), 'utf8'));
+    if (!mechanism) throw new Error(problems.map(({ text }) => text).join('\n'));
+    return [name, mechanism];
+  });
+const drawn = Object.entries(machines).map(([name, parts]): [string, Mechanism] => [name, mechanismOf(parts)]);
+
+describe.each([...examples, ...drawn])('an audit of %s', (name, mechanism) => {
+  const ran = new Run(mechanism, runAuditor(mechanism));
+
+  it('closes to 1e-9 of its turnover, drifts less than 1e-10 of its size, and projects no energy away', () => {
+    const { drift, evaluations } = ran.recording.counters;
+    console.log(
+      `${name}: open ${ran.openShare().toExponential(1)}, drift ${drift.toExponential(1)}, ${evaluations} evaluations`,
+    );
+    expectAudited(ran);
+    expect(ran.recording.findings.filter(({ severity }) => severity === 'error')).toEqual([]);
+  });
+
+  it('gives as work of every store what the store has lost, and never creates energy in impacts or friction', () => {
+    const ledger = ran.ledger();
+    for (const { account, kind, work, heat, stored } of ledger.entries) {
+      if (kind === 'stored' && stored) {
+        expect(Math.abs(stored.from - stored.to - work)).toBeLessThanOrEqual(
+          1e-9 * (Math.abs(stored.from) + ledger.turnover),
+        );
+      }
+      if (['impact', 'friction', 'damper', 'joint-friction', 'rolling-resistance'].includes(account)) {
+        expect(heat).toBeGreaterThanOrEqual(-1e-9 * ledger.turnover);
+      }
+    }
+  });
+});
+
+describe.each(examples)('the stations of %s', (_, mechanism) => {
+  it('stay where they are when the tolerance is halved: times and speeds to 1e-8 of the run’s', () => {
+    const [run, finer] = [1e-11, 5e-12].map((tolerance) => new Run(mechanism, runAuditor(mechanism, { tolerance })));
+    expect(finer.stations.map(({ id }) => id)).toEqual(run.stations.map(({ id }) => id));
+    const ids = run.recording.layout.bodies.map(({ id }) => id);
+    const fastest = Math.max(...ids.flatMap((id) => run.motions(id).map(({ speed }) => speed)));
+    let worst = 0;
+    run.stations.forEach(({ row, time }, i) => {
+      const other = finer.stations[i];
+      worst = Math.max(worst, Math.abs(time - other.time) / run.endTime);
+      for (const id of ids) {
+        worst = Math.max(worst, Math.abs(run.motion(id, row).speed - finer.motion(id, other.row).speed) / fastest);
+      }
+    });
+    console.log(`${mechanism.title}: halving the tolerance moves stations by ${worst.toExponential(1)}`);
+    expect(worst).toBeLessThan(1e-8);
+  });
+});
