@@ -5,6 +5,7 @@ import { StationWatch } from '../recording/station-watch.js';
 import { assemble, hasCome, type Assembly } from './assembly.js';
 import { SKIN } from './contact/manager.js';
 import { noticeGivingWay } from './giving-way.js';
+import { noticeTurnedSprings } from './turned-springs.js';
 import { SceneMotion } from './motion.js';
 import { Projection } from './projection.js';
 import { Recorder } from './recorder.js';
@@ -156,6 +157,7 @@ export class Engine {
     this.sliding.notice(this.log);
     this.passStations(met);
     this.noticePartings();
+    noticeTurnedSprings(this.assembly, this.log);
     noticeGivingWay(this.assembly, this.solver.rigid.live, this.log);
     this.sliding.renewFresh();
     const soft = this.shock.softStrikes(scene.state);
@@ -266,7 +268,7 @@ export class Engine {
       this.turnStations(before, rowBefore);
       this.log.record();
       this.shock.remember();
-      for (const touch of manager.touches) manager.settle(touch);
+      manager.settleAll();
       this.sliding.renew();
       this.sliding.notice(this.log);
     }

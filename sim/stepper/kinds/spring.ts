@@ -28,10 +28,14 @@ export abstract class SpringElement implements Element {
   private workA = 0;
   private workB = 0;
   protected pull = 0;
+  /** Direction of its row at mid-step, a step ago, and whether that has turned round since. */
+  private beforeX = 0;
+  private beforeY = 0;
+  hasTurnedRound = false;
 
   constructor(
     protected readonly scene: Scene,
-    id: string,
+    readonly id: string,
     protected readonly a: number,
     protected readonly b: number,
   ) {
@@ -68,6 +72,10 @@ export abstract class SpringElement implements Element {
     const impulse = 2 * this.row.impulse;
     this.workA = -impulse * this.row.rateA();
     this.workB = impulse * this.row.rateB();
+    const { nx, ny } = this.row;
+    this.hasTurnedRound = nx * this.beforeX + ny * this.beforeY < 0;
+    this.beforeX = nx;
+    this.beforeY = ny;
   }
 
   arrive(): void {
