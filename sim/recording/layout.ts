@@ -56,7 +56,7 @@ export function extendLayout(
 }
 
 /** How much wider than needed an extended layout is made. */
-const SPARE = 1.25;
+const SPARE = 1.5;
 
 /** First column that nothing has taken: each list has its columns in order, so that the last of each has its greatest. */
 function usedWidth({ bodies, accounts, contacts, joints, springs, dampers }: RecordingLayout): number {

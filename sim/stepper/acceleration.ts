@@ -24,13 +24,16 @@ export interface Impulse {
   pushes: boolean;
 }
 
+/** The impulses of contacts; none where there are too many to be carried on. */
 export const impulsesOf = (contacts: readonly ContactInternals[]): Impulse[] =>
-  contacts.flatMap((contact) =>
-    contact.v_points.slice(0, contact.v_pointCount).flatMap((point) => {
-      const { x, y } = contact.v_normal;
-      return [along(contact, point, 'normalImpulse', x, y), along(contact, point, 'tangentImpulse', y, -x)];
-    }),
-  );
+  contacts.length > MOST_IMPULSES
+    ? []
+    : contacts.flatMap((contact) =>
+        contact.v_points.slice(0, contact.v_pointCount).flatMap((point) => {
+          const { x, y } = contact.v_normal;
+          return [along(contact, point, 'normalImpulse', x, y), along(contact, point, 'tangentImpulse', y, -x)];
+        }),
+      );
 
 function along(
   { m_fixtureA, m_fixtureB }: ContactInternals,

@@ -12,7 +12,8 @@ import { Recorder } from './recorder.js';
 import { RestWatch } from './rest-watch.js';
 import { RunLog } from './run-log.js';
 import { poseBodies, setVelocities } from './scene.js';
-import { Shock, type Strike } from './shock.js';
+import { Shock } from './shock.js';
+import type { Strike } from './strike.js';
 import { SlidingModes } from './sliding.js';
 import { VelocitySolver } from './solver.js';
 import { copyState, isBounded } from './state.js';
@@ -91,7 +92,6 @@ export class Engine {
     manager.refresh();
     manager.settleAll();
     this.settleStops();
-    this.storeHeights();
     setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
     this.solver.soft.begin();
     this.log.record();
@@ -206,7 +206,6 @@ export class Engine {
       for (const element of elements) element.project?.();
       this.solver.soft.project();
     }
-    this.storeHeights();
   }
 
   /** Work of the weights over a step, from the same mean velocities that changed the speeds: no height is rounded. */
@@ -225,14 +224,6 @@ export class Engine {
     if (work === 0) return;
     gravity[body].work(0, work);
     scene.numerical.add('position-projection', body, -work);
-  }
-
-  private storeHeights(): void {
-    const { scene, gravity } = this.assembly;
-    const { x, y } = scene.state;
-    gravity.forEach((booked, i) => {
-      booked.stored = -scene.mass[i] * (scene.gravity.x * x[i] + scene.gravity.y * y[i]);
-    });
   }
 
   private settleStops(): void {

@@ -50,6 +50,7 @@ export class Recorder {
     const row = this.writer.addRow(scene.time * scene.scale.time);
     const { buffer } = this.writer;
     const at = this.writer.offset(row);
+    this.storeHeights();
     this.bodies(buffer, at);
     this.accounts(buffer, at);
     this.contacts(buffer, at);
@@ -83,6 +84,15 @@ export class Recorder {
       row[at + columns.vy] = state.vy[i] * speed;
       row[at + columns.spin] = state.w[i] / time;
     }
+  }
+
+  /** What gravity holds is a matter of where the bodies are, so that it is only asked for in a row. */
+  private storeHeights(): void {
+    const { scene, gravity } = this.recorded;
+    const { x, y } = scene.state;
+    gravity.forEach((booked, i) => {
+      booked.stored = -scene.mass[i] * (scene.gravity.x * x[i] + scene.gravity.y * y[i]);
+    });
   }
 
   private accounts(row: Float64Array, at: number): void {

@@ -52,7 +52,8 @@ export class Trial {
     setVelocities(scene, scene.state.vx, scene.state.vy, scene.state.w);
     for (const touch of manager.touches) {
       touch.slidingAtStart = touch.sliding;
-      touch.slipAtStart = touch.sliding === 0 ? 0 : solver.rigid.slipNow(touch, scene.time);
+      const slides = touch.sliding !== 0 && manager.isActive(touch);
+      touch.slipAtStart = slides ? solver.rigid.slipNow(touch, scene.time) : 0;
     }
     this.modes.clear();
     for (const friction of solver.frictions()) this.modes.set(friction, friction.sliding);
@@ -107,7 +108,8 @@ export class Trial {
     if (frictions.length === 0) return;
     setVelocities(this.scene, state.vx, state.vy, state.w);
     for (const friction of frictions) {
-      if (friction.sliding !== 0) this.startSlip.set(friction, (friction.sliding * friction.slip(this.scene.time)) / STILL);
+      if (friction.sliding !== 0)
+        this.startSlip.set(friction, (friction.sliding * friction.slip(this.scene.time)) / STILL);
     }
   }
 

@@ -89,7 +89,13 @@ class Clocks {
 /** What the bench reads of an engine's parts, which are no one else's business. */
 interface EngineParts {
   trial: object & { count: number };
-  solver: { sweeps: number; solves: number; unconverged: number; solveStep: (...args: unknown[]) => void };
+  solver: {
+    sweeps: number;
+    solves: number;
+    unconverged: number;
+    solveStep: (...args: unknown[]) => void;
+    rigid: object;
+  };
   projection: object;
   recorder: object;
   assembly: { scene: { scale: { length: number; time: number } }; manager: object };
@@ -142,6 +148,8 @@ function measure(): { plain: number; whole: number; trials: number; impacts: num
     clocks.wrap(() => ((runs[method] += 1) === 1 ? 'one solve' : 'more trials'), target, method);
   }
   clocks.wrap('impacts', engine, 'strike');
+  // Contacts are readied once, for impacts; what has just closed is looked at on the way.
+  clocks.wrap('impacts', solver.rigid, 'prepareShock');
   // Every row counts as bookkeeping, also those of impacts.
   clocks.wrap('rows', recorder, 'row');
   const [stepper, plain] = race(

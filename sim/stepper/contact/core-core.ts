@@ -150,8 +150,9 @@ function faceSeparation(core: WorldCore, other: WorldCore): typeof axis {
 const PREFER_FIRST = 1e-9;
 
 function faceAgainstFace(touch: Touch, a: CoreShape, b: CoreShape): void {
-  const { edge: edgeA, separation: separationA } = { ...faceSeparation(worldA, worldB) };
-  const { edge: edgeB, separation: separationB } = { ...faceSeparation(worldB, worldA) };
+  // Both calls answer in one object, so that each answer is taken apart at once.
+  const { edge: edgeA, separation: separationA } = faceSeparation(worldA, worldB);
+  const { edge: edgeB, separation: separationB } = faceSeparation(worldB, worldA);
   const radii = a.m_radius + b.m_radius;
   const separation = Math.max(separationA, separationB);
   if (separation > 0 && radii > 0 && cornersNearer(touch, a, b, separation, radii)) return;

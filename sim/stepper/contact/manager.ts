@@ -206,7 +206,7 @@ export class ContactManager {
   setTravel({ vx, vy, w }: State, tau: number): void {
     const { travel, scene } = this;
     for (let i = 0; i < travel.length; i += 1) {
-      travel[i] = tau * (Math.hypot(vx[i], vy[i]) + Math.abs(w[i]) * scene.reach[i]);
+      travel[i] = tau * (Math.sqrt(vx[i] * vx[i] + vy[i] * vy[i]) + Math.abs(w[i]) * scene.reach[i]);
     }
   }
 

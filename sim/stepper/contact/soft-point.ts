@@ -185,29 +185,41 @@ export class SoftPoint implements Friction {
   }
 }
 
-/** Normal (from A to B) and place of a candidate at the bodies' present transforms. */
-export function frameOf(touch: Touch, index: 0 | 1): { nx: number; ny: number; x: number; y: number } {
+const frame = { nx: 0, ny: 0, x: 0, y: 0 };
+
+/**
+ * Normal (from A to B) and place of a candidate at the bodies' present transforms.
+ * @returns an object that the next call overwrites
+ */
+export function frameOf(touch: Touch, index: 0 | 1): Readonly<typeof frame> {
   const poseA = touch.contact.m_fixtureA.m_body.m_xf;
   const poseB = touch.contact.m_fixtureB.m_body.m_xf;
   const { local } = touch.candidates[index];
   if (touch.type === MANIFOLD_CIRCLES) {
-    const [ax, ay] = place(poseA, touch.point);
-    const [bx, by] = place(poseB, local);
-    const away = Math.hypot(bx - ax, by - ay);
-    const [nx, ny] = [(bx - ax) / away, (by - ay) / away];
-    return { nx, ny, x: bx - nx * touch.shapeB.m_radius, y: by - ny * touch.shapeB.m_radius };
+    const bx = placeX(poseB, local);
+    const by = placeY(poseB, local);
+    const dx = bx - placeX(poseA, touch.point);
+    const dy = by - placeY(poseA, touch.point);
+    const away = Math.hypot(dx, dy);
+    return framed(dx / away, dy / away, bx, by, touch.shapeB.m_radius);
   }
   const isA = touch.type === MANIFOLD_FACE_A;
   const { q } = isA ? poseA : poseB;
   const sign = isA ? 1 : -1;
   const nx = sign * (q.c * touch.normal.x - q.s * touch.normal.y);
   const ny = sign * (q.s * touch.normal.x + q.c * touch.normal.y);
-  const [px, py] = place(isA ? poseB : poseA, local);
+  const pose = isA ? poseB : poseA;
   const radius = isA ? touch.shapeB.m_radius : -touch.shapeA.m_radius;
-  return { nx, ny, x: px - nx * radius, y: py - ny * radius };
+  return framed(nx, ny, placeX(pose, local), placeY(pose, local), radius);
 }
 
-const place = ({ p, q }: Pose, v: { x: number; y: number }): [number, number] => [
-  p.x + q.c * v.x - q.s * v.y,
-  p.y + q.s * v.x + q.c * v.y,
-];
+function framed(nx: number, ny: number, x: number, y: number, radius: number): typeof frame {
+  frame.nx = nx;
+  frame.ny = ny;
+  frame.x = x - nx * radius;
+  frame.y = y - ny * radius;
+  return frame;
+}
+
+const placeX = ({ p, q }: Pose, v: { x: number; y: number }): number => p.x + q.c * v.x - q.s * v.y;
+const placeY = ({ p, q }: Pose, v: { x: number; y: number }): number => p.y + q.s * v.x + q.c * v.y;

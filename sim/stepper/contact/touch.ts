@@ -154,6 +154,10 @@ export function leastOpenGap(touch: Touch, deepest: number): number {
  */
 export function fillManifold(touch: Touch): void {
   const { m_manifold: manifold } = touch.contact;
+  if (touch.closed[0] === NO_KEY) {
+    manifold.pointCount = 0;
+    return;
+  }
   const k0 = manifold.points[0].id.key;
   const k1 = manifold.points[1].id.key;
   const n0 = manifold.points[0].normalImpulse;
