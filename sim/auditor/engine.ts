@@ -85,13 +85,18 @@ export class Engine {
     this.log = new RunLog(this.assembly, this.recorder, this.stations);
     this.moments = momentsOf(mechanism, this.stations, system.units.time);
     this.latches = new Latches(mechanism, this.assembly, this.stations);
-    this.pace = new Pace(system, options.tolerance, this.duration());
+    this.pace = new Pace(system, options.tolerance, this.duration(), this.meetsNothing());
     this.h = 1e-4 * this.duration();
     this.begin();
   }
 
   private duration(): number {
     return this.mechanism.run.atMost / this.assembly.system.units.time;
+  }
+
+  private meetsNothing(): boolean {
+    const { dynamics, soft } = this.assembly;
+    return dynamics.parts.unilaterals.length === 0 && soft.length === 0;
   }
 
   private seconds(): number {

@@ -25,6 +25,8 @@ export class Pace {
     private readonly system: System,
     private readonly tolerance: number,
     private readonly duration: number,
+    /** Nothing can be met: a step is too long by its error alone. */
+    private readonly meetsNothing: boolean,
   ) {
     this.thickness = system.mechanism.bodies.map(({ shape }) => thicknessOf(shape));
   }
@@ -49,6 +51,7 @@ export class Pace {
 
   /** The longest step that cannot leap over things, by speeds and accelerations now. */
   longest(v: Float64Array, acceleration: Float64Array): number {
+    if (this.meetsNothing) return this.duration / 20;
     let speed = 0;
     let spin = 0;
     let push = 0;
