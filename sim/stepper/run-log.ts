@@ -4,7 +4,7 @@ import type { StationWatch } from '../recording/station-watch.js';
 import type { Pair } from './contact/pair.js';
 import type { Recorder } from './recorder.js';
 import type { Scene } from './scene.js';
-import type { Strike } from './shock.js';
+import type { Strike } from './strike.js';
 
 /** What a station on an impact also says, in SI. */
 interface TouchData {

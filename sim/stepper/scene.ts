@@ -200,3 +200,20 @@ export function getVelocities(scene: Scene, vx: Float64Array, vy: Float64Array, 
     w[i] = c_velocity.w;
   }
 }
+
+/** Kinetic energy of the velocities in `state` [engine energy]. */
+export function kineticOf({ mass, inertia }: Scene, { vx, vy, w }: State): number {
+  let sum = 0;
+  for (let i = 0; i < mass.length; i += 1) {
+    sum += 0.5 * (mass[i] * (vx[i] ** 2 + vy[i] ** 2) + inertia[i] * w[i] ** 2);
+  }
+  return sum;
+}
+
+/** Kinetic energy of the velocities now in planck's solver [engine energy]. */
+export function kineticNow({ bodies, mass, inertia }: Scene): number {
+  return bodies.reduce(
+    (sum, { c_velocity: { v, w } }, i) => sum + 0.5 * (mass[i] * (v.x ** 2 + v.y ** 2) + inertia[i] * w ** 2),
+    0,
+  );
+}

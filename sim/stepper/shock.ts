@@ -1,15 +1,17 @@
-import { impulseOf, impulsesOf, type Impulse } from './acceleration.js';
 import { TimeStep } from 'planck';
+import { impulseOf, impulsesOf, type Impulse } from './acceleration.js';
 import { AxisRow, type HeldRow } from './axis-row.js';
 import type { ContactManager } from './contact/manager.js';
 import type { Pair } from './contact/pair.js';
 import { isPressedKey, NO_KEY, wasClosedKey, type Touch } from './contact/touch.js';
 import type { Friction, Stop } from './element.js';
 import type { BodyInternals } from './planck-internals.js';
-import { getVelocities, partInner, setVelocities, type Scene } from './scene.js';
+import { getVelocities, kineticNow, kineticOf, partInner, setVelocities, type Scene } from './scene.js';
 import { ShockBooks } from './shock-books.js';
 import type { VelocitySolver } from './solver.js';
 import { newState, type State } from './state.js';
+import type { Strike, Struck } from './strike.js';
+import { Unquiet } from './unquiet.js';
 
 /** Approach below this is rounding, not an impact [engine speed]. */
 const IMPACT = 1e-6;
@@ -19,24 +21,6 @@ const OFF = 1e-8;
 const sweepsFor = (constraints: number): number =>
   Math.max(30, Math.min(2000, Math.round(200000 / (constraints + 1) ** 1.5)));
 const CONVERGED = 1e-14;
-
-/** A pair or a stop that was struck, for the run's events. */
-export interface Strike {
-  pair?: Pair;
-  stop?: Stop;
-  x: number;
-  y: number;
-  approachSpeed: number;
-  effectiveMass: number;
-  /** Rows of its points, for the effective mass through the joints. */
-  rows?: AxisRow[];
-}
-
-interface Struck {
-  touch: Touch;
-  point: 0 | 1;
-  approach: number;
-}
 
 const step = new TimeStep();
 step.warmStarting = false;
@@ -49,7 +33,7 @@ step.dtRatio = 0;
  */
 export class Shock {
   private readonly before: State;
-  private readonly last: State;
+  private readonly unquiet: Unquiet;
   private readonly books: ShockBooks;
   /** Friction that sticks, to be held in a correction. */
   private holding: Friction[] = [];
@@ -64,7 +48,7 @@ export class Shock {
     private readonly solver: VelocitySolver,
   ) {
     this.before = newState(scene.ids.length);
-    this.last = newState(scene.ids.length);
+    this.unquiet = new Unquiet(scene.ids.length);
     this.books = new ShockBooks(scene, manager, solver);
   }
 
@@ -232,19 +216,19 @@ export class Shock {
   }
 
   private impact(struck: Struck[], stops: { stop: Stop; approach: number }[], state: State): void {
-    const kinetic = this.kinetic(state);
+    const kinetic = kineticOf(this.scene, state);
     let cut = 1;
     this.solveImpact(struck, stops, cut);
     // A belt may well add energy through its surface.
     const isDriven = this.solver.rigid.live.some(({ contact }) => contact.m_tangentSpeed !== 0);
-    if (!isDriven && this.kineticNow() > kinetic * (1 + 1e-12)) {
+    if (!isDriven && kineticNow(this.scene) > kinetic * (1 + 1e-12)) {
       let low = 0;
       let high = 1;
       for (let i = 0; i < 40; i += 1) {
         cut = (low + high) / 2;
         this.ready(state);
         this.solveImpact(struck, stops, cut);
-        if (this.kineticNow() > kinetic) high = cut;
+        if (kineticNow(this.scene) > kinetic) high = cut;
         else low = cut;
       }
       this.ready(state);
@@ -295,46 +279,14 @@ export class Shock {
     impulses: () => Impulse[] = () => [],
   ): void {
     const { solver } = this;
-    this.change(bodies);
+    this.unquiet.change(bodies);
     const most = sweepsFor(2 * (touches + solver.joints.length));
     for (let i = 0; i < most; i += 1) {
       sweep();
       solver.sweeps += 1;
-      if (this.change(bodies) <= CONVERGED) return;
+      if (this.unquiet.change(bodies) <= CONVERGED) return;
     }
     if (solver.joints.length > 0 || !solver.acceleration.run(sweep, impulses())) solver.unconverged += 1;
-  }
-
-  /** Greatest change of a velocity since last asked, relative to the greatest. */
-  private change(bodies: readonly BodyInternals[]): number {
-    const { vx, vy, w } = this.last;
-    let change = 0;
-    let most = 1e-3;
-    for (let i = 0; i < bodies.length; i += 1) {
-      const { c_velocity } = bodies[i];
-      const { v } = c_velocity;
-      change = Math.max(change, Math.abs(v.x - vx[i]), Math.abs(v.y - vy[i]), Math.abs(c_velocity.w - w[i]));
-      most = Math.max(most, Math.abs(v.x), Math.abs(v.y), Math.abs(c_velocity.w));
-      vx[i] = v.x;
-      vy[i] = v.y;
-      w[i] = c_velocity.w;
-    }
-    return change / most;
-  }
-
-  private kinetic({ vx, vy, w }: State): number {
-    const { mass, inertia } = this.scene;
-    let sum = 0;
-    for (let i = 0; i < mass.length; i += 1) {
-      sum += 0.5 * (mass[i] * (vx[i] ** 2 + vy[i] ** 2) + inertia[i] * w[i] ** 2);
-    }
-    return sum;
-  }
-
-  private kineticNow(): number {
-    const { vx, vy, w } = this.last;
-    getVelocities(this.scene, vx, vy, w);
-    return this.kinetic(this.last);
   }
 
   /** What was struck, each pair or stop once, with its greatest approach speed and its effective mass. */

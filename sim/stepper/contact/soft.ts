@@ -1,6 +1,6 @@
 import type { NumericalCause } from '../../recording/recording.js';
 import type { Scene } from '../scene.js';
-import type { Strike } from '../shock.js';
+import type { Strike } from '../strike.js';
 import type { ContactManager } from './manager.js';
 import { addWork, type Pair } from './pair.js';
 import { SoftPoint, STANDS_STILL, type Belt } from './soft-point.js';
