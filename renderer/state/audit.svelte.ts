@@ -109,9 +109,13 @@ export class Audit {
   }
 }
 
-/** What a solver recorded, once its run goes on no more; nothing where that is nothing. */
-function settled({ status, recording }: Run): Recording | null {
-  return status !== 'running' && recording && recording.rowCount > 0 ? recording : null;
+/**
+ * What a solver recorded, once its run goes on no more; nothing where that is nothing. What is still coming is not looked
+ * at, so that nothing is worked out anew with each frame of it.
+ */
+function settled(run: Run): Recording | null {
+  if (run.status === 'running') return null;
+  return run.recording && run.recording.rowCount > 0 ? run.recording : null;
 }
 
 const isAtLeast = (a: ComparedLine, b: ComparedLine) => a.figure.share >= b.figure.share;

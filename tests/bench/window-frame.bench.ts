@@ -72,7 +72,8 @@ async function measure(renderer: 'webgl' | 'canvas', address: string, executable
   await page.locator(`[data-renderer="${renderer}"]`).waitFor();
   await page.getByRole('img', { name: /Drawing of/ }).waitFor();
   await page.keyboard.press('F5');
-  await page.getByRole('region', { name: 'Paid out' }).waitFor({ timeout: 120_000 });
+  // Fed once both solvers are done.
+  await page.getByRole('button', { name: 'Run again' }).waitFor({ timeout: 120_000 });
   for (const key of ['1', '[', '[', '[', ' ']) await page.keyboard.press(key);
   await page.waitForTimeout(500);
   const session = await page.context().newCDPSession(page);

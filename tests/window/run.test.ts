@@ -63,7 +63,7 @@ describe.each(['webgl', 'canvas'] as const)('a run on the %s renderer', (rendere
 
     await page.getByRole('button', { name: 'Feed' }).click();
     await expect.poll(() => moment(page)).toBeGreaterThan(later + 0.02);
-    await page.getByRole('button', { name: 'Stop' }).click();
+    await page.getByRole('button', { name: 'Stop Space' }).click();
     const stopped = await moment(page);
     await page.waitForTimeout(150);
     expect(await moment(page)).toBe(stopped);
