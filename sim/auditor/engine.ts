@@ -128,7 +128,7 @@ export class Engine {
     this.projection.apply(0, this.q, this.v, this.works);
     this.works.fill(0);
     this.settle({});
-    dynamics.accelerate(0, this.q, this.v);
+    this.place();
     this.record();
     this.log.reach(
       this.stations.reach(({ when }) => when.kind === 'start' || (when.kind === 'time' && when.time <= 0), 0),
@@ -232,6 +232,7 @@ export class Engine {
     if (!decided) return;
     const struck = this.strike(true);
     this.settle(struck ? {} : decided);
+    this.place();
     this.log.modes(this.seconds(), () => this.record());
     this.releaseDue();
     this.noticeRest();
@@ -317,6 +318,12 @@ export class Engine {
     if (this.modes.settle(this.t, this.q, this.v, decided)) return;
     this.log.noSolution(this.seconds());
     this.finish('noSolution');
+  }
+
+  /** Puts what has just closed exactly onto its surface: how far it was off it is no drift. */
+  private place(): void {
+    this.projection.apply(this.t, this.q, this.v, this.works);
+    this.assembly.dynamics.accelerate(this.t, this.q, this.v);
   }
 
   private releaseDue(): void {

@@ -147,9 +147,12 @@ export class Impacts {
     const struck = touching.map((what, i) => ({ what, rate: rates[i] })).filter(({ rate }) => rate < -STILL);
     const keyOf = (what: Unilateral): unknown => (what instanceof ContactPoint ? what.pair : what);
     const keys = [...new Set(struck.map(({ what }) => keyOf(what)))];
-    return keys.map((key) => {
+    const held = new Set(touching.filter(({ isClosed }) => isClosed).map(keyOf));
+    return keys.flatMap((key) => {
       const own = struck.filter(({ what }) => keyOf(what) === key);
       const worst = own.reduce((a, b) => (b.rate < a.rate ? b : a));
+      // Rolled on from one point to the next (round a corner): no touch, though its energy is booked.
+      if (held.has(key) && -worst.rate < LEAST_REBOUND) return [];
       const mass = effectiveMass(
         problem,
         own.map(({ what }) => what.normal),

@@ -26,6 +26,7 @@ export class Projection {
 
   apply(t: number, q: Float64Array, v: Float64Array, works: Float64Array): Projected {
     let drift = 0;
+    const before = q.slice();
     for (let pass = 0; pass < MOST_PASSES; pass += 1) {
       this.dynamics.update(t, q, v);
       const { rows, errors } = this.positions();
@@ -35,6 +36,10 @@ export class Projection {
       this.push(rows, errors, q);
     }
     this.dynamics.update(t, q, v);
+    this.bookShift(
+      q.map((value, i) => value - before[i]),
+      works,
+    );
     return { drift, energy: this.velocities(v, works) };
   }
 
@@ -79,6 +84,23 @@ export class Projection {
     const before = v.slice();
     this.push(rows, errors, v);
     return this.book(before, v, works);
+  }
+
+  /** What stores give by a shift of places is work of theirs like any other; no body gains by it: numerical takes it back. */
+  private bookShift(shift: Float64Array, works: Float64Array): void {
+    if (shift.every((value) => value === 0)) return;
+    const { system, parts } = this.dynamics;
+    const [gx, gy] = system.mechanism.gravity;
+    parts.gravity.forEach((account, i) => {
+      const work = system.mass[3 * i] * (gx * shift[3 * i] + gy * shift[3 * i + 1]);
+      account.add(works, i, work);
+      this.booked.add(works, i, -work);
+    });
+    for (const { account, row, size } of parts.forces) {
+      if (!account.stored) continue;
+      account.addRow(works, row, size, shift);
+      this.booked.addRow(works, row, -size, shift);
+    }
   }
 
   private book(before: Float64Array, after: Float64Array, works: Float64Array): number {

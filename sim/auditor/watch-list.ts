@@ -2,6 +2,7 @@ import type { StationWatch } from '../recording/station-watch.js';
 import type { Assembly } from './assembly.js';
 import type { FrictionGroup } from './dynamics.js';
 import type { DryFriction } from './element.js';
+import { RoundOnTrack } from './contact/round-on-track.js';
 import type { SoftPoint } from './contact/soft-point.js';
 import { isDouble, STILL, touches } from './modes.js';
 import type { StateMotion } from './motion.js';
@@ -32,6 +33,8 @@ export interface Watch {
 
 const FORCE = 1e-10;
 const SEAM = 1e-12;
+/** Two gaps that are the same length differ by less; one this deep is clear of the corner. */
+const ROUNDING = 1e-12;
 
 /** Everything to be watched in the present mode. `isNear` leaves out points that no step can close. */
 export function watchList(
@@ -47,7 +50,10 @@ export function watchList(
   const closed = unilaterals.filter(({ isClosed }) => isClosed);
   for (const what of unilaterals) {
     if (what.isClosed) list.push(...closedWatches(what));
-    else if (!isRidden(what, closed, motion)) list.push(...openWatches(what, isNear));
+    else {
+      const carrier = carrierOf(what, closed, motion);
+      list.push(...(carrier ? riddenWatches(what, carrier) : openWatches(what, isNear)));
+    }
   }
   for (const group of dynamics.groups) list.push(...groupWatches(group));
   for (const friction of frictions) if (friction.isActive) list.push(frictionWatch(friction));
@@ -71,13 +77,27 @@ export function watchList(
   return list;
 }
 
-/** Another point of its pair is closed at the very place: where that goes, this goes. */
-function isRidden(what: Unilateral, closed: readonly Unilateral[], { q, v }: StateMotion): boolean {
-  if (!(what instanceof ContactPoint)) return false;
+/** Another point of its pair that is closed at the very place: where that goes, this goes. */
+function carrierOf(what: Unilateral, closed: readonly Unilateral[], { q, v }: StateMotion): Unilateral | undefined {
+  if (!(what instanceof ContactPoint)) return undefined;
   what.locate(q);
-  if (!what.isValid || !touches(what)) return false;
+  if (!what.isValid || !touches(what)) return undefined;
   what.aim(q, v, 0);
-  return isDouble(what, closed);
+  return closed.find((one) => isDouble(what, [one]));
+}
+
+/**
+ * Two tracks' ends are one corner, and what goes round it is on either's end, to the last digit; until it comes onto the
+ * flank of the second, where the first no longer carries it.
+ */
+function riddenWatches(what: Unilateral, carrier: Unilateral): Watch[] {
+  if (!(what instanceof RoundOnTrack && carrier instanceof RoundOnTrack)) return [];
+  const value = (q: Float64Array): number => {
+    carrier.locate(q);
+    what.locate(q);
+    return what.isValid ? what.gap - carrier.gap : Infinity;
+  };
+  return [{ value, tolerance: ROUNDING, happening: { kind: 'closes', what } }];
 }
 
 function closedWatches(what: Unilateral): Watch[] {
