@@ -128,7 +128,7 @@ export class Engine {
     this.projection.apply(0, this.q, this.v, this.works);
     this.works.fill(0);
     this.settle({});
-    this.place();
+    dynamics.accelerate(0, this.q, this.v);
     this.record();
     this.log.reach(
       this.stations.reach(({ when }) => when.kind === 'start' || (when.kind === 'time' && when.time <= 0), 0),
@@ -137,6 +137,7 @@ export class Engine {
     );
     this.strike(false);
     this.settle({});
+    this.place();
     this.log.modes(this.seconds(), () => this.record());
     this.noticeRest();
     this.checkEnd();
@@ -232,7 +233,6 @@ export class Engine {
     if (!decided) return;
     const struck = this.strike(true);
     this.settle(struck ? {} : decided);
-    this.place();
     this.log.modes(this.seconds(), () => this.record());
     this.releaseDue();
     this.noticeRest();
@@ -320,7 +320,7 @@ export class Engine {
     this.finish('noSolution');
   }
 
-  /** Puts what has just closed exactly onto its surface: how far it was off it is no drift. */
+  /** Puts what is closed as drawn exactly onto its surface: how far a drawing was off it is no drift. */
   private place(): void {
     this.projection.apply(this.t, this.q, this.v, this.works);
     this.assembly.dynamics.accelerate(this.t, this.q, this.v);

@@ -1,3 +1,4 @@
+import { convexParts } from '../geometry/index.js';
 import type { Body, Shape } from '../mechanism/kinds/body.js';
 import type { Damper } from '../mechanism/kinds/damper.js';
 import type { Drive } from '../mechanism/kinds/drive.js';
@@ -29,7 +30,9 @@ function timeFor(mechanism: Mechanism, length: number, mass: number): number {
   const g = Math.hypot(...mechanism.gravity);
   const speed = Math.max(
     0,
-    ...mechanism.bodies.map(({ velocity, spin }) => Math.hypot(...velocity) + Math.abs(spin) * length),
+    ...mechanism.bodies.map(
+      ({ velocity, spin, shape }) => Math.hypot(...velocity) + Math.abs(spin) * (reachOf(shape) || length),
+    ),
   );
   const candidates = [g > 0 ? Math.sqrt(length / g) : Infinity, speed > 0 ? length / speed : Infinity];
   const least = Math.min(...candidates);
@@ -37,6 +40,12 @@ function timeFor(mechanism: Mechanism, length: number, mass: number): number {
   const rates = mechanism.springs.map((spring) => (spring.kind === 'linear' ? spring.rate : 0));
   const rate = Math.max(0, ...rates);
   return rate > 0 ? Math.sqrt(mass / rate) : 1;
+}
+
+/** Greatest distance of an outline from its body's origin. */
+function reachOf(shape: Shape): number {
+  const corners = convexParts(shape).flatMap(({ points, radius }) => points.map(([x, y]) => Math.hypot(x, y) + radius));
+  return Math.max(0, ...corners);
 }
 
 /** The mechanism with every quantity in the auditor's units; ids and times of stations' ids are as they were. */
