@@ -37,6 +37,8 @@ describe('opening a file', () => {
   it('asks for a file on Ctrl+O and shows its drawing, parts and title block', async () => {
     const page = await openWindow();
     const choosing = page.waitForEvent('filechooser');
+    // The browser is told to hand over the dialog, and must have heard it before the key.
+    await page.evaluate(() => document.title);
     await page.keyboard.press('Control+o');
     const { name, text } = example('slider-crank-press');
     await (await choosing).setFiles({ name, mimeType: 'application/json', buffer: Buffer.from(text) });
